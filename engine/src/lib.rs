@@ -1,0 +1,1 @@
+//! Aerodynamics and loads of light airplanes: typed quantities in, typed quantities out, no text.

@@ -1,0 +1,1 @@
+//! The sheet language: text in, checked and evaluated report out.

@@ -1,0 +1,1 @@
+//! Promises across crates: what the tests share.

@@ -1,0 +1,1 @@
+//! Builds the page: wasm, bundle, one file.

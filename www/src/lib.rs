@@ -1,0 +1,1 @@
+//! The browser door of the engine: a thin wasm-bindgen crate.
