@@ -1,1 +1,8 @@
 //! The sheet language: text in, checked and evaluated report out.
+//!
+//! The stages in the order in which they run: [`source`], lex, [`parse`], names and graph, check, plan, run,
+//! [`report`]. Problems leave any stage as facts ([`problem`]) and become findings in [`diagnostics`].
+
+pub mod problem;
+pub mod span;
+pub mod syntax;
