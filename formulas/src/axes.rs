@@ -1,0 +1,144 @@
+//! Named axes: sets of them, their shapes, and the numbering of conditions (row-major in axis order).
+
+/// Number of an axis, in the order in which the sheet declares them.
+#[derive(Clone, Copy, PartialEq, Eq, Hash, Debug, PartialOrd, Ord)]
+pub struct AxisId(pub u8);
+
+/// Most axes that a sheet may have.
+pub const AXES_MOST: usize = 64;
+
+/// A set of axes.
+#[derive(Clone, Copy, PartialEq, Eq, Hash, Debug, Default)]
+pub struct AxisSet(pub u64);
+
+impl AxisSet {
+    /// No axis: a single value.
+    pub const NONE: AxisSet = AxisSet(0);
+
+    /// The set of one axis.
+    #[must_use]
+    pub fn of(axis: AxisId) -> Self {
+        AxisSet(1 << axis.0)
+    }
+
+    /// Both together.
+    #[must_use]
+    pub fn with(self, other: AxisSet) -> Self {
+        AxisSet(self.0 | other.0)
+    }
+
+    /// Those of this set that are not in the other.
+    #[must_use]
+    pub fn without(self, other: AxisSet) -> Self {
+        AxisSet(self.0 & !other.0)
+    }
+
+    /// Those in both.
+    #[must_use]
+    pub fn common(self, other: AxisSet) -> Self {
+        AxisSet(self.0 & other.0)
+    }
+
+    /// Whether the axis is in the set.
+    #[must_use]
+    pub fn has(self, axis: AxisId) -> bool {
+        self.0 & (1 << axis.0) != 0
+    }
+
+    /// Whether all of the other's axes are in this set.
+    #[must_use]
+    pub fn holds(self, other: AxisSet) -> bool {
+        other.0 & !self.0 == 0
+    }
+
+    /// Whether the set is empty.
+    #[must_use]
+    pub fn is_empty(self) -> bool {
+        self.0 == 0
+    }
+
+    /// How many axes.
+    #[must_use]
+    pub fn count(self) -> u32 {
+        self.0.count_ones()
+    }
+
+    /// The axes in their order.
+    pub fn iter(self) -> impl DoubleEndedIterator<Item = AxisId> {
+        (0..64u8)
+            .filter(move |i| self.0 & (1 << i) != 0)
+            .map(AxisId)
+    }
+}
+
+/// The axes of a column with their lengths.
+#[derive(Clone, PartialEq, Eq, Debug, Default)]
+pub struct Shape {
+    /// The axes in order.
+    pub axes: Vec<AxisId>,
+    /// Their lengths.
+    pub lengths: Vec<usize>,
+}
+
+impl Shape {
+    /// The shape of a set, given the length of every axis of the sheet.
+    #[must_use]
+    pub fn of(set: AxisSet, lengths: &[usize]) -> Self {
+        let axes: Vec<AxisId> = set.iter().collect();
+        let lengths = axes
+            .iter()
+            .map(|a| lengths.get(a.0 as usize).copied().unwrap_or(1))
+            .collect();
+        Shape { axes, lengths }
+    }
+
+    /// How many conditions.
+    #[must_use]
+    pub fn conditions(&self) -> usize {
+        self.lengths.iter().product()
+    }
+
+    /// How many conditions, as a number that cannot run over.
+    #[must_use]
+    pub fn conditions_f64(&self) -> f64 {
+        self.lengths.iter().map(|n| *n as f64).product()
+    }
+
+    /// For each axis, how far apart its neighbours stand.
+    #[must_use]
+    pub fn strides(&self) -> Vec<usize> {
+        let mut strides = vec![1; self.lengths.len()];
+        for i in (1..self.lengths.len()).rev() {
+            strides[i - 1] = strides[i] * self.lengths[i];
+        }
+        strides
+    }
+
+    /// Position of an axis in the shape.
+    #[must_use]
+    pub fn position(&self, axis: AxisId) -> Option<usize> {
+        self.axes.iter().position(|a| *a == axis)
+    }
+
+    /// The labels of a condition: the index along each axis.
+    #[must_use]
+    pub fn indices(&self, mut condition: usize) -> Vec<usize> {
+        let mut out = vec![0; self.lengths.len()];
+        for i in (0..self.lengths.len()).rev() {
+            let n = self.lengths[i].max(1);
+            out[i] = condition % n;
+            condition /= n;
+        }
+        out
+    }
+
+    /// Strides of `inner` along each axis of `self`: 0 where `inner` does not vary over it.
+    #[must_use]
+    pub fn strides_of(&self, inner: &Shape) -> Vec<usize> {
+        let strides = inner.strides();
+        self.axes
+            .iter()
+            .map(|a| inner.position(*a).map_or(0, |p| strides[p]))
+            .collect()
+    }
+}

@@ -1,0 +1,137 @@
+//! What a row of the function table holds.
+
+use engine::quantity::{Dimension, SpeedKind};
+
+/// A function that a sheet can call.
+pub struct Entry {
+    /// Its name.
+    pub name: &'static str,
+    /// The group under which the catalogue lists it.
+    pub group: &'static str,
+    /// Its arguments, in order.
+    pub parameters: &'static [Parameter],
+    /// What it gives: one nameless field, or the fields of a record.
+    pub fields: &'static [Field],
+    /// How it is worked out.
+    pub compute: Compute,
+    /// Where the method holds, if that can be told from the arguments.
+    pub validity: Option<Validity>,
+    /// What it computes, in a sentence.
+    pub what: &'static str,
+    /// The method, with signs.
+    pub method: &'static str,
+    /// Where it holds, in words.
+    pub holds: &'static str,
+    /// Where the method was published.
+    pub source: &'static str,
+    /// A small sheet that runs.
+    pub example: &'static str,
+}
+
+impl Entry {
+    /// Whether it gives a record rather than a single value.
+    #[must_use]
+    pub fn is_record(&self) -> bool {
+        self.fields.first().is_some_and(|f| !f.name.is_empty())
+    }
+
+    /// Whether it consumes an axis.
+    #[must_use]
+    pub fn takes_lines(&self) -> bool {
+        self.parameters.iter().any(|p| p.line)
+    }
+}
+
+impl std::fmt::Debug for Entry {
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        f.write_str(self.name)
+    }
+}
+
+impl PartialEq for Entry {
+    fn eq(&self, other: &Self) -> bool {
+        self.name == other.name
+    }
+}
+
+/// An argument of a catalogue function.
+#[derive(Clone, Copy, Debug)]
+pub struct Parameter {
+    /// Its name.
+    pub name: &'static str,
+    /// What may be given.
+    pub wants: Wants,
+    /// The airspeed it means.
+    pub speed: Option<SpeedKind>,
+    /// A temperature difference rather than a temperature.
+    pub difference: bool,
+    /// Whether it is a whole line of values along the consumed axis.
+    pub line: bool,
+    /// The value taken where it is not given, in SI; a NaN stands for `none`.
+    pub default: Option<f64>,
+    /// Whether it is a lift slope per radian, for which a bare number below 1 looks like one per degree.
+    pub slope: bool,
+}
+
+/// What an argument may be.
+#[derive(Clone, Copy, PartialEq, Debug)]
+pub enum Wants {
+    /// A number of this dimension.
+    Dimension(Dimension),
+    /// A force or a mass.
+    ForceOrMass,
+    /// Text.
+    Text,
+}
+
+/// A result of a catalogue function; a function that gives a single value has one field without a name.
+#[derive(Clone, Copy, Debug)]
+pub struct Field {
+    /// Its name.
+    pub name: &'static str,
+    /// Its dimension.
+    pub gives: Gives,
+    /// The airspeed it is.
+    pub speed: Option<SpeedKind>,
+    /// A temperature above absolute zero.
+    pub absolute: bool,
+    /// The unit in which it is shown where no bracket says otherwise: `deg` or `%`.
+    pub shown: Option<&'static str>,
+    /// Whether it varies along the consumed axis.
+    pub line: bool,
+    /// What it is, in a few words.
+    pub what: &'static str,
+}
+
+/// The dimension of a result.
+#[derive(Clone, Copy, PartialEq, Debug)]
+pub enum Gives {
+    /// Always the same.
+    Dimension(Dimension),
+    /// That of the argument of this index, times a dimension.
+    Argument(usize, Dimension),
+}
+
+/// A whole line of values along the consumed axis.
+pub type Line<'a> = &'a [f64];
+
+/// How a function is worked out.
+#[derive(Clone, Copy)]
+pub enum Compute {
+    /// Condition by condition: arguments in SI, text arguments beside them (empty where a number stands), results.
+    Each(fn(&[f64], &[&str], &mut [f64])),
+    /// Whole lines: every argument as a line (an argument that is no line has one value); each result is filled with
+    /// one value, or with one for each label.
+    Lines(fn(&[Line<'_>], &[&str], &mut [Vec<f64>])),
+    /// By the language itself: general mathematics and the functions of axes.
+    Language,
+}
+
+/// Where a method holds.
+#[derive(Clone, Copy)]
+pub struct Validity {
+    /// Whether the arguments (in SI) lie where the method holds.
+    pub holds: fn(&[f64]) -> bool,
+    /// The advice where they do not.
+    pub advice: &'static str,
+}
