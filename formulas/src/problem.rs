@@ -224,6 +224,7 @@ pub enum Fault {
         record: String,
         field: String,
         fields: Vec<String>,
+        nearest: Option<String>,
     },
     RecordAsNumber {
         record: String,
@@ -267,7 +268,8 @@ pub enum Fault {
         left: Operand,
         right: Operand,
     },
-    /// A power, root or function that wants a pure number.
+    /// A power, root or function that wants a pure number. `place` reads before 'is to be a pure number' (`the
+    /// exponent`, `the argument of exp`); the span is the value.
     NotANumber {
         place: String,
         value: Operand,
@@ -284,8 +286,9 @@ pub enum Fault {
         base: Operand,
     },
     DimensionLimit,
-    /// A pure number where an angle is due: the value is kept in radians. `in_denominator` is the number for which the
-    /// fix `/deg` applies.
+    /// A pure number where an angle is due: the value is kept in radians. The span is the whole value; `place` reads
+    /// before 'is to be an angle' (a symbol, `the argument incidence of tail_lift`). `number` is the whole value where
+    /// it is a number typed in place, `divides` the number below the line for which the fix `/deg` applies.
     NumberAsAngle {
         place: String,
         number: Option<Span>,
@@ -337,7 +340,9 @@ pub enum Fault {
         mend: String,
     },
     // --- kinds ---
-    /// Text for a number, a condition for a text and so on. `quote` is the fix for a designation typed as a number.
+    /// Text for a number, a condition for a text and so on. `place` reads before 'is to be' (`the condition of if`),
+    /// `wanted` and `found` carry their article (`a number`, `text`, `a condition`); the span is the value. `quote` is
+    /// the fix for a designation typed as a number.
     WrongKind {
         place: String,
         wanted: &'static str,
@@ -354,6 +359,15 @@ pub enum Fault {
         function: String,
         name: String,
         names: Vec<String>,
+        nearest: Option<String>,
+    },
+    /// A text that is none of the words the argument knows: `rule: "CS 99"`, `maneuver: "loop"`. The span is the text.
+    UnknownWord {
+        function: String,
+        argument: String,
+        found: String,
+        words: Vec<String>,
+        nearest: Option<String>,
     },
     ArgumentTwice {
         function: String,
@@ -378,7 +392,6 @@ pub enum Fault {
         axis: String,
         refused: bool,
     },
-    /// A result that would be text or a condition where only numbers may stand (governing, free body, figure).
     // --- axes ---
     ByCount {
         symbol: String,
@@ -404,10 +417,11 @@ pub enum Fault {
     TwoAxes {
         axes: Vec<String>,
     },
-    /// A list item of a `by` that varies over more than its axis is fine; an axis of numbers used with other points is not.
+    /// The points of an axis of numbers neither rise nor fall all along.
     AxisOrder {
         axis: String,
     },
+    /// A point of an axis of numbers that is not made of numbers and units alone.
     AxisNumbers {
         axis: String,
     },
@@ -445,11 +459,13 @@ pub enum Fault {
         cause: Cause,
         conditions: Conditions,
     },
+    /// `force`, `axial` and `moment` are the sums left over in the worst condition, as shown, with their units.
     FreebodyOpen {
         name: String,
         conditions: Conditions,
-        force: f64,
-        moment: f64,
+        force: String,
+        axial: Option<String>,
+        moment: String,
     },
     FreebodyUnits {
         name: String,
@@ -469,6 +485,47 @@ pub enum Fault {
     },
     RulesMixed {
         rules: Vec<String>,
+    },
+    /// A method outside what its argument may be at all: `text` reads after 'is to be' (`at most 1.5, such as 0.25 or
+    /// 25 %`); the span is the value.
+    ArgumentRange {
+        function: String,
+        argument: String,
+        text: String,
+    },
+    /// An unknown with more sign changes in its bounds than the one taken: advice.
+    FurtherSolutions {
+        symbol: String,
+        conditions: Conditions,
+    },
+    /// More unknowns than equations in a statement, or the reverse.
+    EquationCount {
+        unknowns: usize,
+        equations: usize,
+    },
+    /// Axes of a figure that are neither named behind `each` nor picked.
+    FigureAxes {
+        symbol: String,
+        axes: Vec<String>,
+    },
+    // --- other sheets ---
+    MissingSheet {
+        sheet: String,
+    },
+    /// A name of another sheet that is a path, or this sheet itself.
+    SheetName {
+        sheet: String,
+    },
+    /// An axis of both sheets with other labels, or in another order.
+    SheetAxis {
+        sheet: String,
+        axis: String,
+    },
+    /// The other sheet has findings of its own.
+    SheetFindings {
+        sheet: String,
+        errors: usize,
+        warnings: usize,
     },
     MemoryLimit {
         symbol: String,
