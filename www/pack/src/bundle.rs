@@ -1,0 +1,55 @@
+//! Checks the page's TypeScript and bundles its scripts and styles.
+
+use std::fs;
+use std::process::Command;
+
+use crate::command::{command, run};
+use crate::failure::{Outcome, while_doing};
+use crate::paths::Paths;
+
+/// The page's own code, ready to be put into the file.
+#[derive(Clone, Debug)]
+pub struct Bundle {
+    /// The one script; it holds the worker's source as text.
+    pub script: String,
+    /// The one style sheet.
+    pub style: String,
+}
+
+/// Type-checks and bundles the page. The worker comes first, because the page's script carries it as text.
+///
+/// # Errors
+/// When the types do not agree or the bundler fails.
+pub fn build(paths: &Paths) -> Outcome<Bundle> {
+    bundle(paths, "src/worker.ts", "worker.txt")?;
+    run(node(paths, "node_modules/typescript/bin/tsc").args(["--project", "tsconfig.json"]))?;
+    Ok(Bundle {
+        script: bundle(paths, "src/main.ts", "page.js")?,
+        style: bundle(paths, "src/page.css", "page.css")?,
+    })
+}
+
+fn bundle(paths: &Paths, entry: &str, output: &str) -> Outcome<String> {
+    let output = paths.generated.join(output);
+    let mut esbuild = node(paths, "node_modules/esbuild/bin/esbuild");
+    esbuild.args([
+        entry,
+        "--bundle",
+        "--minify",
+        "--charset=utf8",
+        "--target=es2022",
+        "--log-level=warning",
+    ]);
+    if entry.ends_with(".ts") {
+        esbuild.arg("--format=iife");
+    }
+    run(esbuild.arg(format!("--outfile={}", output.display())))?;
+    fs::read_to_string(&output).map_err(while_doing(format!("cannot read {}", output.display())))
+}
+
+/// Node with one of the page's own tools. The tools are called by their scripts, which are the same on every system.
+fn node(paths: &Paths, tool: &str) -> Command {
+    let mut node = command("node", &paths.page);
+    node.arg(paths.page.join(tool));
+    node
+}

@@ -1,0 +1,4 @@
+/** Starts the page. */
+import workerSource from "../generated/worker.txt";
+
+console.log(workerSource.length);
