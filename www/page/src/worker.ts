@@ -1,7 +1,32 @@
-/** The engine's own thread. */
-import init, { version } from "../generated/engine.js";
+/** The engine's thread: takes a text, gives its report. */
+import { evaluate, initSync, last_panic } from "../generated/engine.js";
+import type { FromWorker } from "./engine.js";
+import type { Report } from "./report.js";
 
-self.onmessage = async (event: MessageEvent<WebAssembly.Module>) => {
-  await init({ module_or_path: event.data });
-  self.postMessage(version());
+type ToWorker = { module: WebAssembly.Module } | { serial: number; text: string };
+
+const answer = (message: FromWorker, transfer: Transferable[] = []) => self.postMessage(message, { transfer });
+
+self.onmessage = (event: MessageEvent<ToWorker>) => {
+  const message = event.data;
+  if ("module" in message) {
+    initSync({ module: message.module });
+    answer({ ready: true });
+  } else {
+    work(message.serial, message.text);
+  }
 };
+
+function work(serial: number, text: string): void {
+  try {
+    const report = evaluate(text) as Report;
+    answer({ serial, report }, columns(report));
+  } catch (error) {
+    answer({ serial, failure: last_panic() ?? String(error) });
+  }
+}
+
+/** The columns of numbers go over to the page without a copy. */
+function columns(report: Report): Transferable[] {
+  return report.quantities.flatMap(({ values }) => (values instanceof Float64Array ? [values.buffer] : []));
+}
