@@ -149,7 +149,7 @@ pub fn standard_atmosphere(
 /// - `density`: air density.
 ///
 /// Gives the geopotential altitude. Method: the inverse of [`standard_atmosphere`], exact in each layer. Holds for the
-/// densities of -2 to 32 km, 1.478 to 0.01355 kg/m^3; outside it is NaN: no value.
+/// densities of -2 to 32 km, 1.478 to 0.01323 kg/m^3; outside it is NaN: no value.
 ///
 /// Source: ISO 2533:1975; US Standard Atmosphere 1976.
 ///
@@ -287,6 +287,15 @@ mod tests {
             assert_abs_diff_eq!(air.density.si(), density, epsilon = 6e-5);
             assert_abs_diff_eq!(air.sound_speed.si(), sound, epsilon = 0.06);
         }
+    }
+
+    /// US Standard Atmosphere 1976, layer boundaries at 20 and 32 km: 5474.89 Pa and 868.02 Pa, 228.65 K (values from
+    /// memory, sure).
+    #[test]
+    fn the_upper_boundaries_are_the_standards() {
+        assert_abs_diff_eq!(at(20_000.0).pressure.si(), 5_474.89, epsilon = 0.006);
+        assert_abs_diff_eq!(at(32_000.0).pressure.si(), 868.02, epsilon = 0.006);
+        assert_abs_diff_eq!(at(32_000.0).temperature.si(), 228.65, epsilon = 1e-12);
     }
 
     #[test]
