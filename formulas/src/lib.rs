@@ -5,6 +5,7 @@
 
 pub mod axes;
 pub mod catalogue;
+pub mod diagnostics;
 pub mod problem;
 pub mod program;
 pub mod span;

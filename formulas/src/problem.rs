@@ -340,7 +340,7 @@ pub enum Fault {
         mend: String,
     },
     // --- kinds ---
-    /// Text for a number, a condition for a text and so on. `place` reads before 'is to be' (`the condition of if`),
+    /// Text for a number, a condition for a text and so on. `place` reads before 'is to be' (`what stands behind if`),
     /// `wanted` and `found` carry their article (`a number`, `text`, `a condition`); the span is the value. `quote` is
     /// the fix for a designation typed as a number.
     WrongKind {

@@ -1,0 +1,53 @@
+//! An if inside arithmetic without brackets.
+
+use crate::diagnostics::draft::{Draft, Site, put_before, put_behind};
+use crate::diagnostics::finding::{Code, Severity};
+
+pub(super) const ROW: Code = Code {
+    code: "if-in-arithmetic",
+    severity: Severity::Error,
+    what: "An if stands alone as a right side, argument, list value, cell or branch; elsewhere it stands in brackets.",
+    why: "Without brackets one cannot see whether what follows belongs to the last branch.",
+    example: Some("a = 1\nb = 2 + if a > 0 then 2 else 3\n"),
+    fixed: Some("a = 1\nb = 2 + (if a > 0 then 2 else 3)\n"),
+};
+
+pub(super) fn draft(site: &Site<'_>) -> Draft {
+    let draft = Draft::says("Inside arithmetic an if stands in brackets.");
+    if site.typed().starts_with("if") && site.typed().contains("else") {
+        let around = vec![put_before(site.span, "("), put_behind(site.span, ")")];
+        draft.fix("Put it in brackets", false, around)
+    } else {
+        draft
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use crate::diagnostics::check::check;
+    use crate::problem::Fault;
+
+    const TEXT: &str = "b = 2 + if a > 0 then 2 else 3";
+    const MESSAGE: &str = "Inside arithmetic an if stands in brackets.";
+
+    #[test]
+    fn offers_the_brackets() {
+        let fixes = [(
+            "Put it in brackets",
+            false,
+            "b = 2 + (if a > 0 then 2 else 3)",
+        )];
+        check(
+            TEXT,
+            "if a > 0 then 2 else 3",
+            Fault::IfPlace,
+            MESSAGE,
+            &fixes,
+        );
+    }
+
+    #[test]
+    fn offers_nothing_where_the_end_is_unknown() {
+        check(TEXT, "if", Fault::IfPlace, MESSAGE, &[]);
+    }
+}
