@@ -8,6 +8,7 @@ pub mod catalogue;
 pub mod diagnostics;
 pub mod problem;
 pub mod program;
+pub mod report;
 pub mod span;
 pub mod syntax;
 pub mod values;
