@@ -2,6 +2,7 @@
 //! written as JSON, CSV or text; the page gets the same structs.
 
 mod build;
+pub mod cautions;
 mod convert;
 pub mod csv;
 pub mod form;
