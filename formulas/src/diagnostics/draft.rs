@@ -40,6 +40,20 @@ impl<'a> Site<'a> {
         Some(Span::new(at, at + part.len()))
     }
 
+    /// The end of the argument, cell or right side in which the stretch at fault stands, blanks left off.
+    pub(super) fn end_of_part(&self) -> Option<Span> {
+        let start = self.span.start as usize;
+        let rest = self.text.get(start..)?;
+        let length = part_length(rest);
+        // What stands behind a remark is the next line of the same part, and that is not searched for its end.
+        let behind = rest.get(length..)?;
+        if behind.starts_with(';') && behind.trim_end().contains('\n') {
+            return None;
+        }
+        let end = start + rest.get(..length)?.trim_end().len();
+        Some(Span::new(end, end))
+    }
+
     /// Puts a text in the place of the stretch at fault.
     pub(super) fn replace(&self, text: impl Into<String>) -> Mend {
         put(self.span, text)
@@ -61,6 +75,23 @@ impl<'a> Site<'a> {
         });
         own || self.tree.statements.iter().any(|s| gives(&s.kind, name))
     }
+}
+
+/// Bytes up to the first separator or closing bracket outside brackets and texts.
+fn part_length(text: &str) -> usize {
+    let (mut depth, mut quoted) = (0_i32, false);
+    for (at, c) in text.char_indices() {
+        match c {
+            '"' => quoted = !quoted,
+            _ if quoted => {}
+            '(' | '[' => depth += 1,
+            ';' => return at,
+            ')' | ']' | ',' | '|' if depth == 0 => return at,
+            ')' | ']' => depth -= 1,
+            _ => {}
+        }
+    }
+    text.len()
 }
 
 fn gives(kind: &StatementKind, name: &str) -> bool {

@@ -93,9 +93,9 @@ pub(super) fn listed(names: &[String], joint: &str) -> String {
 /// `1 value`, `2 values`, `2 entries`.
 pub(super) fn counted(count: u64, noun: &str) -> String {
     let number = grouped(count);
-    match noun.strip_suffix('y') {
+    match noun.strip_suffix("ry") {
         _ if count == 1 => format!("{number} {noun}"),
-        Some(stem) => format!("{number} {stem}ies"),
+        Some(stem) => format!("{number} {stem}ries"),
         None => format!("{number} {noun}s"),
     }
 }

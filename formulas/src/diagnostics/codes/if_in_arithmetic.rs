@@ -1,6 +1,6 @@
 //! An if inside arithmetic without brackets.
 
-use crate::diagnostics::draft::{Draft, Site, put_before, put_behind};
+use crate::diagnostics::draft::{Draft, Site, put, put_before};
 use crate::diagnostics::finding::{Code, Severity};
 
 pub(super) const ROW: Code = Code {
@@ -14,11 +14,12 @@ pub(super) const ROW: Code = Code {
 
 pub(super) fn draft(site: &Site<'_>) -> Draft {
     let draft = Draft::says("Inside arithmetic an if stands in brackets.");
-    if site.typed().starts_with("if") && site.typed().contains("else") {
-        let around = vec![put_before(site.span, "("), put_behind(site.span, ")")];
-        draft.fix("Put it in brackets", false, around)
-    } else {
-        draft
+    match site.end_of_part() {
+        Some(end) => {
+            let around = vec![put_before(site.span, "("), put(end, ")")];
+            draft.fix("Put it in brackets", false, around)
+        }
+        None => draft,
     }
 }
 
@@ -27,27 +28,19 @@ mod tests {
     use crate::diagnostics::check::check;
     use crate::problem::Fault;
 
-    const TEXT: &str = "b = 2 + if a > 0 then 2 else 3";
     const MESSAGE: &str = "Inside arithmetic an if stands in brackets.";
 
     #[test]
     fn offers_the_brackets() {
-        let fixes = [(
-            "Put it in brackets",
-            false,
-            "b = 2 + (if a > 0 then 2 else 3)",
-        )];
-        check(
-            TEXT,
-            "if a > 0 then 2 else 3",
-            Fault::IfPlace,
-            MESSAGE,
-            &fixes,
-        );
+        let text = "b = 2 + if a > 0 then 2 else 3 ; remark\n";
+        let mended = "b = 2 + (if a > 0 then 2 else 3) ; remark\n";
+        let fixes = [("Put it in brackets", false, mended)];
+        check(text, "if", Fault::IfPlace, MESSAGE, &fixes);
     }
 
     #[test]
     fn offers_nothing_where_the_end_is_unknown() {
-        check(TEXT, "if", Fault::IfPlace, MESSAGE, &[]);
+        let text = "b = 2 + if a > 0 then 2 else ; remark\n 3\n";
+        check(text, "if", Fault::IfPlace, MESSAGE, &[]);
     }
 }

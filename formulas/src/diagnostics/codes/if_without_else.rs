@@ -1,6 +1,6 @@
 //! An if without else.
 
-use crate::diagnostics::draft::{Draft, Site, put_behind};
+use crate::diagnostics::draft::{Draft, Site, put};
 use crate::diagnostics::finding::{Code, Severity};
 
 pub(super) const ROW: Code = Code {
@@ -14,10 +14,9 @@ pub(super) const ROW: Code = Code {
 
 pub(super) fn draft(site: &Site<'_>) -> Draft {
     let draft = Draft::says("This if does not say what holds otherwise: else is missing.");
-    if site.typed().starts_with("if") && site.typed().contains("then") {
-        draft.offers("Add else none", put_behind(site.span, " else none"))
-    } else {
-        draft
+    match site.end_of_part() {
+        Some(end) => draft.offers("Add else none", put(end, " else none")),
+        None => draft,
     }
 }
 
@@ -28,26 +27,31 @@ mod tests {
 
     const MESSAGE: &str = "This if does not say what holds otherwise: else is missing.";
 
+    fn offers(text: &str, mended: &str) {
+        let fixes = [("Add else none", false, mended)];
+        check(text, "if", Fault::IfWithoutElse, MESSAGE, &fixes);
+    }
+
     #[test]
     fn offers_none_for_the_rest() {
-        let fixes = [("Add else none", false, "b = if a > 0 then 2 else none")];
-        check(
-            "b = if a > 0 then 2",
-            "if a > 0 then 2",
-            Fault::IfWithoutElse,
-            MESSAGE,
-            &fixes,
+        offers("b = if a > 0 then 2\n", "b = if a > 0 then 2 else none\n");
+        offers(
+            "b = if a > 0 then 2 ; remark\n",
+            "b = if a > 0 then 2 else none ; remark\n",
+        );
+        offers(
+            "b = max(if a = f(1, 2) then 2, 3)",
+            "b = max(if a = f(1, 2) then 2 else none, 3)",
+        );
+        offers(
+            "b by c = if d = \",|\" then 2 | 3",
+            "b by c = if d = \",|\" then 2 else none | 3",
         );
     }
 
     #[test]
     fn offers_nothing_where_the_end_is_unknown() {
-        check(
-            "b = if a > 0 then 2",
-            "if",
-            Fault::IfWithoutElse,
-            MESSAGE,
-            &[],
-        );
+        let text = "b = if a > 0 then ; remark\n 2\n";
+        check(text, "if", Fault::IfWithoutElse, MESSAGE, &[]);
     }
 }

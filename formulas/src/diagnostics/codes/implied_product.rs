@@ -15,17 +15,20 @@ pub(super) const ROW: Code = Code {
 };
 
 pub(super) fn draft(site: &Site<'_>, mend: &Option<Mend>) -> Draft {
+    let sign = mend.as_ref().map_or("*", |mend| mend.text.trim());
+    let due = match sign {
+        "." => "units are joined by a point",
+        _ => "a product is written with *",
+    };
     let typed = short(site.typed());
-    let draft = Draft::says(if typed.is_empty() {
-        "A sign is missing here; a product is written with *.".to_owned()
+    let place = if typed.is_empty() {
+        "here".to_owned()
     } else {
-        format!(
-            "A sign is missing at {}; a product is written with *.",
-            quoted(&typed)
-        )
-    });
+        format!("before {}", quoted(&typed))
+    };
+    let draft = Draft::says(format!("A sign is missing {place}: {due}."));
     match mend {
-        Some(mend) => draft.offers("Put in *", mend.clone()),
+        Some(mend) => draft.offers(format!("Put in {}", quoted(sign)), mend.clone()),
         None => draft,
     }
 }
@@ -35,25 +38,55 @@ mod tests {
     use crate::diagnostics::check::{check, place};
     use crate::problem::{Fault, Mend};
 
-    #[test]
-    fn offers_the_sign() {
-        let text = "b = 3 (a + 1)";
+    fn offers(
+        text: &str,
+        part: &str,
+        gap: &str,
+        sign: &str,
+        message: &str,
+        title: &str,
+        mended: &str,
+    ) {
         let mend = Mend {
-            span: place(text, " ("),
-            text: "*(".to_owned(),
+            span: place(text, gap),
+            text: sign.to_owned(),
         };
         check(
             text,
-            "3 (a + 1)",
+            part,
             Fault::ImpliedProduct { mend: Some(mend) },
-            "A sign is missing at “3 (a + 1)”; a product is written with *.",
-            &[("Put in *", false, "b = 3*(a + 1)")],
+            message,
+            &[(title, false, mended)],
+        );
+    }
+
+    #[test]
+    fn offers_the_sign() {
+        let message = "A sign is missing before “(”: a product is written with *.";
+        offers(
+            "b = 3 (a)",
+            "(",
+            " ",
+            "*",
+            message,
+            "Put in “*”",
+            "b = 3*(a)",
+        );
+        let message = "A sign is missing before “lb”: units are joined by a point.";
+        offers(
+            "M = 5 ft lb",
+            "lb",
+            " ",
+            ".",
+            message,
+            "Put in “.”",
+            "M = 5 ft.lb",
         );
     }
 
     #[test]
     fn does_without_a_text_or_a_mend() {
-        let message = "A sign is missing here; a product is written with *.";
+        let message = "A sign is missing here: a product is written with *.";
         check(
             "b = S c",
             "",

@@ -34,8 +34,8 @@ mod exponent_not_fixed;
 mod field_of_number;
 mod figure_axes;
 mod foreign_sign;
-mod freebody_open;
-mod freebody_units;
+mod free_body_open;
+mod free_body_units;
 mod function_as_symbol;
 mod further_solutions;
 mod hides_constant;
@@ -191,8 +191,8 @@ pub const CODES: &[&Code] = &[
     &operation_limit::ROW,
     &rows_missing::ROW,
     &without_value::ROW,
-    &freebody_open::ROW,
-    &freebody_units::ROW,
+    &free_body_open::ROW,
+    &free_body_units::ROW,
     &input_without_source::ROW,
     &outside_validity::ROW,
     &not_computed::ROW,
@@ -245,7 +245,7 @@ told_by! {
     IfPlace => if_in_arithmetic::draft(site),
     TableWithoutEnd { key } => table_without_end::draft(site, key),
     EndWithoutTable => end_without_table::draft(),
-    RowLength { expected, found } => row_length::draft(*expected, *found),
+    RowLength { expected, found } => row_length::draft(site, *expected, *found),
     NoStatement { found, looks_like } => no_statement::draft(site, found, looks_like),
     NestingLimit { limit } => nesting_limit::draft(*limit),
     OperatorLimit { limit } => operator_limit::draft(*limit),
@@ -315,8 +315,8 @@ told_by! {
     RowsMissing { axis, labels } => rows_missing::draft(axis, labels),
 
     WithoutValue { symbol, cause, conditions } => without_value::draft(symbol, *cause, conditions),
-    FreebodyOpen { name, conditions, force, axial, moment } => freebody_open::draft(name, conditions, force, axial, moment),
-    FreebodyUnits { name } => freebody_units::draft(name),
+    FreebodyOpen { name, conditions, force, axial, moment } => free_body_open::draft(name, conditions, force, axial, moment),
+    FreebodyUnits { name } => free_body_units::draft(name),
     InputWithoutSource { symbol } => input_without_source::draft(symbol),
     Validity { function, text, conditions } => outside_validity::draft(function, text, conditions),
     NotComputed { what } => not_computed::draft(what),

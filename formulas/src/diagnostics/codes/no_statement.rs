@@ -31,7 +31,7 @@ pub(super) fn draft(site: &Site<'_>, found: &str, looks_like: &Option<String>) -
 /// Most such lines are prose.
 fn as_note(site: &Site<'_>, found: &str) -> Draft {
     let message = format!(
-        "{} is no statement: it gives no symbol a value and begins with no statement word.",
+        "{} begins no statement, and the line gives no symbol a value.",
         quoted(found)
     );
     let line = site.text.len() - site.text.trim_start().len();
@@ -63,13 +63,13 @@ mod tests {
     #[test]
     fn prose_becomes_a_note() {
         let fault = Fault::NoStatement {
-            found: "Balance only".to_owned(),
+            found: "Balance".to_owned(),
             looks_like: None,
         };
-        let message = "“Balance only” is no statement: it gives no symbol a value and begins with no statement word.";
+        let message = "“Balance” begins no statement, and the line gives no symbol a value.";
         check(
             "  Balance only",
-            "Balance only",
+            "Balance",
             fault,
             message,
             &[("Make it a note", false, "  note Balance only")],

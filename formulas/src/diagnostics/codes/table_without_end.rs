@@ -16,15 +16,15 @@ pub(super) const ROW: Code = Code {
 };
 
 pub(super) fn draft(site: &Site<'_>, key: &str) -> Draft {
-    let draft = Draft::says(format!(
-        "The table of {key} has no line “end”; it is read up to here."
-    ));
-    match site.statement.map(|s| &s.kind) {
-        Some(StatementKind::Table(table)) => {
-            draft.mends("Add the line end", closing(site.text, table))
-        }
-        _ => draft,
-    }
+    let message = format!("The table of {key} has no line “end”");
+    let Some((statement, StatementKind::Table(table))) = site.statement.map(|s| (s, &s.kind))
+    else {
+        return Draft::says(message + ".");
+    };
+    let rows = table.rows.last().map_or(0, |row| row.line);
+    let last = statement.line + rows;
+    Draft::says(format!("{message}; it is read up to line {last}."))
+        .mends("Add the line end", closing(site.text, table))
 }
 
 /// Puts the line behind the last row, or behind the header of a table without rows.
@@ -32,7 +32,8 @@ fn closing(text: &str, table: &Table) -> Mend {
     let rows = table.rows.iter().map(|row| row.span);
     let header = table.keys.iter().chain(&table.columns).map(|p| p.name.span);
     let last = rows.chain(header).map(|span| span.end).max().unwrap_or(0) as usize;
-    match text.get(last..).and_then(|rest| rest.find('\n')) {
+    let rest = text.get(last..).unwrap_or("");
+    match rest.find('\n').or_else(|| rest.find('\r')) {
         Some(at) => put(Span::new(last + at + 1, last + at + 1), "end\n"),
         None => put(Span::new(text.len(), text.len()), "\nend\n"),
     }
@@ -76,14 +77,16 @@ mod tests {
         let fault = Fault::TableWithoutEnd {
             key: "point".to_owned(),
         };
-        let message = "The table of point has no line “end”; it is read up to here.";
+        let last = if row.is_some() { 2 } else { 1 };
+        let message =
+            format!("The table of point has no line “end”; it is read up to line {last}.");
         let fixes = [("Add the line end", true, mended)];
         check_in(
             &sheet(text, table(text, row)),
             text,
             place(text, "table"),
             fault,
-            message,
+            &message,
             &fixes,
         );
     }

@@ -6,7 +6,7 @@ use crate::diagnostics::wording::{first_conditions, in_conditions, quoted};
 use crate::problem::Conditions;
 
 pub(super) const ROW: Code = Code {
-    code: "freebody-open",
+    code: "free-body-open",
     severity: Severity::Warning,
     what: "In every condition the forces of a free body, and their moments, come to nothing.",
     why: "A force or a couple is missing, counted twice, or has the wrong sign or station.",

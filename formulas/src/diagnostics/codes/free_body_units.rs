@@ -5,7 +5,7 @@ use crate::diagnostics::finding::{Code, Severity};
 use crate::diagnostics::wording::quoted;
 
 pub(super) const ROW: Code = Code {
-    code: "freebody-units",
+    code: "free-body-units",
     severity: Severity::Error,
     what: "The entries of a free body are forces at stations, axial forces at heights, and couples.",
     why: "Sums of forces and moments can be formed from nothing else.",
