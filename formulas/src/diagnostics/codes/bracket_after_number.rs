@@ -15,22 +15,37 @@ pub(super) const ROW: Code = Code {
 
 pub(super) fn draft(site: &Site<'_>, unit: &str) -> Draft {
     let at = bracket(site);
+    let unit = unit.trim();
     let plain = unit
         .strip_prefix('1')
         .filter(|rest| rest.starts_with('/'))
         .unwrap_or(unit);
-    let plain = plain.trim();
-    if plain.is_empty() || plain.contains([' ', '*', '(', ')']) {
+    if plain.is_empty() {
+        return Draft::says("The brackets behind this number hold no unit.");
+    }
+    if plain.contains([' ', '*', '(', ')']) {
         // Such a unit can be typed in brackets only, where it is a factor like any other.
         return Draft::says(format!(
             "Between a number and [{unit}] a sign is missing: write *[{unit}]."
         ))
         .offers(format!("Write *[{unit}]"), put(at, format!("*[{unit}]")));
     }
-    Draft::says(format!(
-        "Behind a number the unit stands without brackets: write {plain}, not [{unit}]."
-    ))
-    .mends(format!("Write {plain}"), put(at, format!(" {plain}")))
+    let power = site.behind().trim_start().starts_with(['^', '²', '³']);
+    let message =
+        format!("Behind a number the unit stands without brackets: write {plain}, not [{unit}].");
+    let mend = put(at, format!(" {plain}{}", gap(site)));
+    // A power behind the bracket takes the number along, behind the unit it takes the unit alone.
+    Draft::says(message).fix(format!("Write {plain}"), !power, vec![mend])
+}
+
+/// A sign that would make the next name a part of the unit is kept off by a blank.
+fn gap(site: &Site<'_>) -> &'static str {
+    let joins = |c: char| c.is_alphanumeric() || matches!(c, '/' | '.' | '·' | '-');
+    if site.behind().starts_with(joins) {
+        " "
+    } else {
+        ""
+    }
 }
 
 /// The bracket with the blanks before it.
@@ -70,6 +85,21 @@ mod tests {
                 &[("Write kt", true, "V = 65 kt")],
             );
         }
+    }
+
+    #[test]
+    fn what_follows_is_kept_off_the_unit() {
+        let message = "Behind a number the unit stands without brackets: write lb, not [lb].";
+        let fixes = [("Write lb", true, "p = 560 lb /S")];
+        check("p = 560 [lb]/S", "[lb]", bracket("lb"), message, &fixes);
+        let fixes = [("Write lb", false, "p = 560 lb^2")];
+        check("p = 560 [lb]^2", "[lb]", bracket("lb"), message, &fixes);
+    }
+
+    #[test]
+    fn brackets_without_a_unit_say_so() {
+        let message = "The brackets behind this number hold no unit.";
+        check("V = 65 []", "[]", bracket(""), message, &[]);
     }
 
     #[test]

@@ -1,6 +1,6 @@
 //! A comparison with three sides.
 
-use crate::diagnostics::draft::{Draft, Site};
+use crate::diagnostics::draft::{Draft, Site, put};
 use crate::diagnostics::finding::{Code, Severity};
 use crate::diagnostics::wording::short;
 use crate::problem::Mend;
@@ -19,11 +19,22 @@ pub(super) fn draft(site: &Site<'_>, mend: &Option<Mend>) -> Draft {
     let Some(mend) = mend else {
         return Draft::says(format!("{message}; join several by and."));
     };
-    let draft = Draft::says(match site.mended(mend) {
+    let mend = held_together(site, mend);
+    let draft = Draft::says(match site.mended(&mend) {
         Some(mended) => format!("{message}; write {}.", short(&mended)),
         None => format!("{message}; join several by and."),
     });
-    draft.mends("Join two comparisons by and", mend.clone())
+    draft.mends("Join two comparisons by and", mend)
+}
+
+/// A `not` before the chain would take the first comparison alone.
+fn held_together(site: &Site<'_>, mend: &Mend) -> Mend {
+    let negated = site.before().trim_end().ends_with("not");
+    if negated && mend.span == site.span {
+        put(mend.span, format!("({})", mend.text))
+    } else {
+        mend.clone()
+    }
 }
 
 #[cfg(test)]
@@ -48,6 +59,26 @@ mod tests {
                 "Join two comparisons by and",
                 true,
                 "require 1 < n and n < 3",
+            )],
+        );
+    }
+
+    #[test]
+    fn a_not_keeps_hold_of_both() {
+        let text = "require not 1 < n < 3";
+        let mend = Mend {
+            span: place(text, "1 < n < 3"),
+            text: "1 < n and n < 3".to_owned(),
+        };
+        check(
+            text,
+            "1 < n < 3",
+            Fault::ChainedComparison { mend: Some(mend) },
+            "A comparison has two sides; write (1 < n and n < 3).",
+            &[(
+                "Join two comparisons by and",
+                true,
+                "require not (1 < n and n < 3)",
             )],
         );
     }
