@@ -71,7 +71,7 @@ fn value_text(values: &ValueList, condition: usize) -> String {
     match values {
         ValueList::Numbers(list) => {
             let value = list.get(condition).copied().flatten();
-            value.map_or_else(String::new, plain_number)
+            value.map_or_else(String::new, json::plain_number)
         }
         ValueList::Conditions(list) => {
             let value = list.get(condition).copied().flatten();
@@ -79,12 +79,6 @@ fn value_text(values: &ValueList, condition: usize) -> String {
         }
         ValueList::Texts(list) => list.get(condition).cloned().flatten().unwrap_or_default(),
     }
-}
-
-/// As in JSON, but a whole number without `.0`.
-fn plain_number(value: f64) -> String {
-    let text = json::number(value);
-    text.strip_suffix(".0").map_or(text.clone(), str::to_owned)
 }
 
 fn record<'a>(out: &mut String, fields: impl Iterator<Item = &'a str>) {

@@ -23,3 +23,13 @@ pub fn write_any<T: Serialize>(value: &T) -> Result<String, serde_json::Error> {
 pub(super) fn number(value: f64) -> String {
     serde_json::to_string(&value).unwrap_or_default()
 }
+
+/// A number by itself as in JSON, but a whole number without `.0`.
+#[must_use]
+pub fn plain_number(value: f64) -> String {
+    let mut text = number(value);
+    if text.ends_with(".0") {
+        text.truncate(text.len() - 2);
+    }
+    text
+}

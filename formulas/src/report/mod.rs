@@ -3,6 +3,7 @@
 
 mod build;
 pub mod cautions;
+pub mod compare;
 mod convert;
 pub mod csv;
 pub mod form;
