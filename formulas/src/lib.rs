@@ -1,14 +1,21 @@
 //! The sheet language: text in, checked and evaluated report out.
 //!
-//! The stages in the order in which they run: [`source`], lex, [`parse`], names and graph, check, plan, run,
-//! [`report`]. Problems leave any stage as facts ([`problem`]) and become findings in [`diagnostics`].
+//! The stages in the order in which they run: [`source`], [`lex`], [`parse`], [`names`] and [`graph`], [`check`],
+//! [`plan`], [`run`], [`report`]. Problems leave any stage as facts ([`problem`]) and become findings in
+//! [`diagnostics`]. [`sheet`] is the front door.
 
 pub mod axes;
 pub mod catalogue;
+pub mod check;
 pub mod diagnostics;
+pub mod graph;
+pub mod names;
+mod nearest;
+pub mod plan;
 pub mod problem;
 pub mod program;
 pub mod report;
+pub mod run;
 pub mod span;
 pub mod syntax;
 pub mod values;

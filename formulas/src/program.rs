@@ -126,11 +126,6 @@ pub enum Op {
         axes: Vec<AxisId>,
         items: Vec<Option<NodeId>>,
     },
-    /// An input with a tolerance: nominal value and which tolerance it is.
-    Toleranced {
-        value: NodeId,
-        tolerance: u32,
-    },
     /// The value of a quantity.
     Quantity(QuantityId),
     Negate(NodeId),

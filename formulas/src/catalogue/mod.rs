@@ -5,6 +5,9 @@ mod row;
 
 pub use row::{Compute, Entry, Field, Gives, Line, Parameter, Validity, Wants};
 
+/// The group of general mathematics.
+pub const GENERAL: &str = "General mathematics";
+
 /// Every group of functions, in reading order.
 static GROUPS: &[&[Entry]] = &[];
 

@@ -69,6 +69,8 @@ pub struct Parameter {
     pub line: bool,
     /// The value taken where it is not given, in SI; a NaN stands for `none`.
     pub default: Option<f64>,
+    /// The text taken where it is not given.
+    pub default_text: Option<&'static str>,
     /// Whether it is a lift slope per radian, for which a bare number below 1 looks like one per degree.
     pub slope: bool,
 }

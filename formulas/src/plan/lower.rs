@@ -1,0 +1,382 @@
+//! From nodes to steps.
+
+use super::{Instruction, Plan, SlotId, Step, Work};
+use crate::axes::AxisSet;
+use crate::catalogue::Compute;
+use crate::program::{Axis, NodeId, Op, Program, QuantityId};
+use crate::values::{EXCLUDED, NONE};
+use std::collections::HashMap;
+
+/// Lays out the steps of a program.
+#[must_use]
+pub fn plan(program: &Program) -> Plan {
+    let mut lowering = Lowering {
+        program,
+        plan: Plan {
+            quantities: vec![None; program.quantities.len()],
+            lengths: program.axes.iter().map(|a| a.labels.len()).collect(),
+            ..Plan::default()
+        },
+        fields: HashMap::new(),
+        quantity: None,
+    };
+    for id in &program.order {
+        lowering.quantity(*id);
+    }
+    lowering.quantity = None;
+    for requirement in &program.requirements {
+        let sides = requirement.parts.iter().flat_map(|p| [p.left, p.right]);
+        for node in requirement.condition.into_iter().chain(sides) {
+            lowering.slot(node);
+        }
+    }
+    for entry in program.freebodies.iter().flat_map(|b| &b.items) {
+        lowering.slot(entry.value);
+        if let Some(at) = entry.at {
+            lowering.slot(at);
+        }
+    }
+    for tolerance in &program.tolerances {
+        if let crate::program::ToleranceWidth::Node(node) = tolerance.width {
+            lowering.slot(node);
+        }
+    }
+    lowering.plan
+}
+
+struct Lowering<'a> {
+    program: &'a Program,
+    plan: Plan,
+    /// The columns of the fields of calls that give records.
+    fields: HashMap<NodeId, Vec<SlotId>>,
+    quantity: Option<QuantityId>,
+}
+
+impl Lowering<'_> {
+    fn quantity(&mut self, id: QuantityId) {
+        let Some(node) = self
+            .program
+            .quantities
+            .get(id.0 as usize)
+            .and_then(|q| q.node)
+        else {
+            return;
+        };
+        self.quantity = Some(id);
+        let slot = self.slot(node);
+        self.plan.quantities[id.0 as usize] = slot;
+    }
+
+    fn new_slot(&mut self, axes: AxisSet) -> SlotId {
+        self.plan.slots.push(axes);
+        SlotId(self.plan.slots.len() as u32 - 1)
+    }
+
+    fn step(&mut self, axes: AxisSet, reads: Vec<SlotId>, work: Work) -> SlotId {
+        let out = self.new_slot(axes);
+        let quantity = self.quantity;
+        self.plan.steps.push(Step {
+            out: vec![out],
+            reads,
+            work,
+            quantity,
+        });
+        out
+    }
+
+    /// The column of a node, worked out by steps of its own where it has none yet. `None` where it rests on a line
+    /// that failed.
+    fn slot(&mut self, node: NodeId) -> Option<SlotId> {
+        if let Some(slot) = self.plan.nodes.get(&node) {
+            return Some(*slot);
+        }
+        let slot = self.make(node)?;
+        self.plan.nodes.insert(node, slot);
+        Some(slot)
+    }
+
+    fn slots(&mut self, nodes: &[NodeId]) -> Option<Vec<SlotId>> {
+        nodes.iter().map(|n| self.slot(*n)).collect()
+    }
+
+    fn make(&mut self, id: NodeId) -> Option<SlotId> {
+        let program = self.program;
+        let node = program.nodes.get(id.0 as usize)?;
+        let axes = node.axes;
+        match &node.op {
+            Op::Constant(value) => Some(self.step(axes, Vec::new(), Work::Values(vec![*value]))),
+            Op::None => Some(self.step(axes, Vec::new(), Work::Values(vec![NONE]))),
+            Op::Excluded => Some(self.step(axes, Vec::new(), Work::Values(vec![EXCLUDED]))),
+            Op::Labels(axis) => {
+                let texts = &program.axes.get(axis.0 as usize)?.label_texts;
+                let values = texts.iter().map(|t| f64::from(t.0)).collect();
+                Some(self.step(axes, Vec::new(), Work::Values(values)))
+            }
+            Op::Points(axis) => {
+                let Axis {
+                    values: Some(values),
+                    ..
+                } = program.axes.get(axis.0 as usize)?
+                else {
+                    return None;
+                };
+                Some(self.step(axes, Vec::new(), Work::Values(values.clone())))
+            }
+            Op::Quantity(quantity) => self
+                .plan
+                .quantities
+                .get(quantity.0 as usize)
+                .copied()
+                .flatten(),
+            Op::List { axis, items } => self.list(*axis, items, axes),
+            Op::Grid { axes: keys, items } => self.grid(keys, items, axes),
+            Op::Reduce { how, value, over } => {
+                let read = self.slot(*value)?;
+                Some(self.step(
+                    axes,
+                    vec![read],
+                    Work::Reduce {
+                        how: *how,
+                        over: *over,
+                    },
+                ))
+            }
+            Op::Pick { base, selections } => {
+                let mut reads = vec![self.slot(*base)?];
+                for (_, position, _) in selections {
+                    reads.push(self.slot(*position)?);
+                }
+                let selections = selections
+                    .iter()
+                    .map(|(axis, _, mode)| (*axis, *mode))
+                    .collect();
+                Some(self.step(axes, reads, Work::Pick { selections }))
+            }
+            Op::Along {
+                how,
+                value,
+                x,
+                axis,
+            } => {
+                let mut reads = vec![self.slot(*value)?];
+                if let Some(x) = x {
+                    reads.push(self.slot(*x)?);
+                }
+                Some(self.step(
+                    axes,
+                    reads,
+                    Work::Along {
+                        how: *how,
+                        axis: *axis,
+                        has_x: x.is_some(),
+                    },
+                ))
+            }
+            Op::Field(call, at) => self.field(*call, *at, id),
+            Op::Call { .. } => None,
+            _ => self.kernel(id, axes),
+        }
+    }
+
+    fn list(
+        &mut self,
+        axis: crate::axes::AxisId,
+        items: &[NodeId],
+        axes: AxisSet,
+    ) -> Option<SlotId> {
+        let constants: Option<Vec<f64>> = items.iter().map(|n| self.known(*n)).collect();
+        if let Some(values) = constants {
+            return Some(self.step(axes, Vec::new(), Work::Values(values)));
+        }
+        let reads = self.slots(items)?;
+        Some(self.step(axes, reads, Work::List { axis }))
+    }
+
+    fn grid(
+        &mut self,
+        keys: &[crate::axes::AxisId],
+        items: &[Option<NodeId>],
+        axes: AxisSet,
+    ) -> Option<SlotId> {
+        let mut reads = Vec::new();
+        let mut places = Vec::with_capacity(items.len());
+        for item in items {
+            match item {
+                None => places.push(None),
+                Some(node) => {
+                    places.push(Some(reads.len()));
+                    reads.push(self.slot(*node)?);
+                }
+            }
+        }
+        Some(self.step(
+            axes,
+            reads,
+            Work::Grid {
+                axes: keys.to_vec(),
+                items: places,
+            },
+        ))
+    }
+
+    /// A value that needs no working out.
+    fn known(&self, node: NodeId) -> Option<f64> {
+        match self.program.nodes.get(node.0 as usize)?.op {
+            Op::Constant(value) => Some(value),
+            Op::None => Some(NONE),
+            Op::Excluded => Some(EXCLUDED),
+            _ => None,
+        }
+    }
+
+    /// A field of a catalogue function: one result condition by condition is part of a kernel, all else a step.
+    fn field(&mut self, call: NodeId, at: usize, id: NodeId) -> Option<SlotId> {
+        let program = self.program;
+        let node = program.nodes.get(call.0 as usize)?;
+        let Op::Call {
+            entry,
+            arguments,
+            over,
+        } = &node.op
+        else {
+            return None;
+        };
+        if matches!(entry.compute, Compute::Each(_)) && !entry.is_record() {
+            return self.kernel(id, node.axes);
+        }
+        if !self.fields.contains_key(&call) {
+            let mut reads = Vec::new();
+            let mut places = Vec::new();
+            for argument in arguments {
+                match argument {
+                    None => places.push(None),
+                    Some(node) => {
+                        places.push(Some(reads.len()));
+                        reads.push(self.slot(*node)?);
+                    }
+                }
+            }
+            let out: Vec<SlotId> = entry
+                .fields
+                .iter()
+                .map(|f| {
+                    let along = over.filter(|_| f.line).map_or(AxisSet::NONE, AxisSet::of);
+                    self.new_slot(node.axes.with(along))
+                })
+                .collect();
+            let work = Work::Call {
+                entry,
+                arguments: places,
+                over: *over,
+            };
+            let quantity = self.quantity;
+            self.plan.steps.push(Step {
+                out: out.clone(),
+                reads,
+                work,
+                quantity,
+            });
+            self.fields.insert(call, out);
+        }
+        self.fields.get(&call)?.get(at).copied()
+    }
+
+    fn kernel(&mut self, id: NodeId, axes: AxisSet) -> Option<SlotId> {
+        let mut code = Vec::new();
+        let mut reads = Vec::new();
+        self.emit(id, axes, &mut code, &mut reads)?;
+        Some(self.step(axes, reads, Work::Kernel(code)))
+    }
+
+    /// Writes the instructions of a node, operands first. Works with a list of its own: a long sum leans to the left
+    /// as deep as it is long.
+    fn emit(
+        &mut self,
+        root: NodeId,
+        axes: AxisSet,
+        code: &mut Vec<Instruction>,
+        reads: &mut Vec<SlotId>,
+    ) -> Option<()> {
+        enum Task {
+            Visit(NodeId),
+            Write(Instruction),
+        }
+        let program = self.program;
+        let mut tasks = vec![Task::Visit(root)];
+        while let Some(task) = tasks.pop() {
+            let id = match task {
+                Task::Write(instruction) => {
+                    code.push(instruction);
+                    continue;
+                }
+                Task::Visit(id) => id,
+            };
+            let node = program.nodes.get(id.0 as usize)?;
+            if let Some(value) = self.known(id) {
+                code.push(Instruction::Constant(value));
+                continue;
+            }
+            match self
+                .operation(id)
+                .filter(|_| id == root || node.axes == axes)
+            {
+                Some((instruction, operands)) => {
+                    tasks.push(Task::Write(instruction));
+                    tasks.extend(operands.into_iter().rev().map(Task::Visit));
+                }
+                None => {
+                    let slot = self.slot(id)?;
+                    let at = reads.iter().position(|r| *r == slot).unwrap_or_else(|| {
+                        reads.push(slot);
+                        reads.len() - 1
+                    });
+                    code.push(Instruction::Load(at));
+                }
+            }
+        }
+        Some(())
+    }
+
+    /// The instruction of a node that is worked out condition by condition.
+    fn operation(&self, id: NodeId) -> Option<(Instruction, Vec<NodeId>)> {
+        let node = self.program.nodes.get(id.0 as usize)?;
+        Some(match &node.op {
+            Op::Negate(a) => (Instruction::Negate, vec![*a]),
+            Op::Not(a) => (Instruction::Not, vec![*a]),
+            Op::Binary(op, a, b) => (Instruction::Binary(*op), vec![*a, *b]),
+            Op::Power(a, exponent) => (Instruction::Power(*exponent), vec![*a]),
+            Op::Select {
+                condition,
+                then,
+                otherwise,
+            } => (Instruction::Select, vec![*condition, *then, *otherwise]),
+            Op::Function(function, arguments) => (
+                Instruction::Function(*function, arguments.len()),
+                arguments.clone(),
+            ),
+            Op::HasValue(a) => (Instruction::HasValue, vec![*a]),
+            Op::Field(call, 0) => {
+                let Op::Call {
+                    entry,
+                    arguments,
+                    over: None,
+                } = &self.program.nodes.get(call.0 as usize)?.op
+                else {
+                    return None;
+                };
+                if entry.is_record() || !matches!(entry.compute, Compute::Each(_)) {
+                    return None;
+                }
+                let mask = arguments
+                    .iter()
+                    .enumerate()
+                    .fold(0, |m, (i, a)| m | u32::from(a.is_some()) << i);
+                (
+                    Instruction::Call(entry, mask),
+                    arguments.iter().copied().flatten().collect(),
+                )
+            }
+            _ => return None,
+        })
+    }
+}

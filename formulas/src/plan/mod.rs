@@ -1,0 +1,101 @@
+//! The plan: the checked program as a row of steps over columns. A step works out one column (or the fields of one
+//! record) over its own axes only; what varies over fewer axes than its line is worked out once, beforehand.
+
+mod lower;
+
+use crate::axes::{AxisId, AxisSet};
+use crate::catalogue::Entry;
+use crate::program::{Along, Function, NodeId, PickMode, QuantityId, Reduction};
+use crate::syntax::BinaryOp;
+use std::collections::HashMap;
+
+pub use lower::plan;
+
+/// Number of a column.
+#[derive(Clone, Copy, PartialEq, Eq, Hash, Debug, PartialOrd, Ord)]
+pub struct SlotId(pub u32);
+
+/// The whole plan.
+#[derive(Debug, Default)]
+pub struct Plan {
+    /// The axes of each column.
+    pub slots: Vec<AxisSet>,
+    /// The steps in order: what a step reads was worked out before it.
+    pub steps: Vec<Step>,
+    /// The column of each quantity; `None` where its line failed.
+    pub quantities: Vec<Option<SlotId>>,
+    /// The columns of the nodes that outputs ask for.
+    pub nodes: HashMap<NodeId, SlotId>,
+    /// The length of every axis.
+    pub lengths: Vec<usize>,
+}
+
+/// One step.
+#[derive(Debug)]
+pub struct Step {
+    /// What it works out; the fields of a record are several.
+    pub out: Vec<SlotId>,
+    /// What it reads.
+    pub reads: Vec<SlotId>,
+    /// How.
+    pub work: Work,
+    /// The quantity whose line it belongs to; `None` for the sides of requirements and the like.
+    pub quantity: Option<QuantityId>,
+}
+
+/// How a step works.
+#[derive(Debug)]
+#[allow(missing_docs)]
+pub enum Work {
+    /// Values that are known already.
+    Values(Vec<f64>),
+    /// Condition by condition, in blocks.
+    Kernel(Vec<Instruction>),
+    /// One read for each label of the axis.
+    List {
+        axis: AxisId,
+    },
+    /// One read for each combination of labels; `None` where there is none.
+    Grid {
+        axes: Vec<AxisId>,
+        items: Vec<Option<usize>>,
+    },
+    Reduce {
+        how: Reduction,
+        over: AxisSet,
+    },
+    /// The first read is the base, one more for each selection.
+    Pick {
+        selections: Vec<(AxisId, PickMode)>,
+    },
+    /// The first read is the value, the second the abscissa where there is one.
+    Along {
+        how: Along,
+        axis: AxisId,
+        has_x: bool,
+    },
+    /// A catalogue function that gives a record, or takes whole lines. For each argument the read that holds it.
+    Call {
+        entry: &'static Entry,
+        arguments: Vec<Option<usize>>,
+        over: Option<AxisId>,
+    },
+}
+
+/// One instruction of a kernel: it takes its operands from a stack of blocks and leaves its result there.
+#[derive(Clone, Copy, Debug)]
+#[allow(missing_docs)]
+pub enum Instruction {
+    /// The read of this index.
+    Load(usize),
+    Constant(f64),
+    Negate,
+    Not,
+    Binary(BinaryOp),
+    Power(f64),
+    Select,
+    Function(Function, usize),
+    HasValue,
+    /// A catalogue function of one result; the arguments given are the bits of the mask.
+    Call(&'static Entry, u32),
+}

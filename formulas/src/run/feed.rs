@@ -1,0 +1,128 @@
+//! Broadcasting: how a column of fewer axes is read along the conditions of a line.
+
+use crate::axes::Shape;
+
+/// Reads a column along the conditions of a larger shape, block by block.
+pub(super) struct Feed<'a> {
+    values: &'a [f64],
+    /// Lengths and strides of the merged axes, outermost first.
+    runs: Vec<(usize, usize)>,
+}
+
+impl<'a> Feed<'a> {
+    /// A column of shape `inner`, read along `outer`.
+    #[must_use]
+    pub(super) fn new(values: &'a [f64], inner: &Shape, outer: &Shape) -> Self {
+        let strides = outer.strides_of(inner);
+        let mut runs: Vec<(usize, usize)> = Vec::new();
+        for (length, stride) in outer.lengths.iter().copied().zip(strides) {
+            if length == 1 {
+                continue;
+            }
+            match runs.last_mut() {
+                // Neighbouring axes that are both repeated, or both stepped through, make one longer run.
+                Some(last) if last.1 == stride * length => *last = (last.0 * length, stride),
+                _ => runs.push((length, stride)),
+            }
+        }
+        Feed { values, runs }
+    }
+
+    /// The whole column, where it is read straight through.
+    #[must_use]
+    pub(super) fn straight(&self) -> Option<&'a [f64]> {
+        match self.runs.as_slice() {
+            [(length, 1)] if *length == self.values.len() => Some(self.values),
+            _ => None,
+        }
+    }
+
+    fn at(&self, offset: usize) -> f64 {
+        self.values.get(offset).copied().unwrap_or(f64::NAN)
+    }
+
+    /// The value for one condition.
+    #[must_use]
+    pub(super) fn value(&self, mut condition: usize) -> f64 {
+        let mut offset = 0;
+        for (length, stride) in self.runs.iter().rev() {
+            offset += condition % length * stride;
+            condition /= length;
+        }
+        self.at(offset)
+    }
+
+    /// The values for the conditions from `start` on.
+    pub(super) fn fill(&self, start: usize, out: &mut [f64]) {
+        if let Some(all) = self.straight()
+            && let Some(part) = all.get(start..start + out.len())
+        {
+            out.copy_from_slice(part);
+            return;
+        }
+        let Some(&(inner, stride)) = self.runs.last() else {
+            out.fill(self.at(0));
+            return;
+        };
+        let mut done = 0;
+        while done < out.len() {
+            let condition = start + done;
+            let along = condition % inner;
+            let length = (inner - along).min(out.len() - done);
+            let mut offset = along * stride;
+            let mut rest = condition / inner;
+            for (length, stride) in self.runs[..self.runs.len() - 1].iter().rev() {
+                offset += rest % length * stride;
+                rest /= length;
+            }
+            let part = &mut out[done..done + length];
+            match stride {
+                0 => part.fill(self.at(offset)),
+                1 => match self.values.get(offset..offset + length) {
+                    Some(values) => part.copy_from_slice(values),
+                    None => part.fill(f64::NAN),
+                },
+                _ => part
+                    .iter_mut()
+                    .enumerate()
+                    .for_each(|(i, v)| *v = self.at(offset + i * stride)),
+            }
+            done += length;
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::Feed;
+    use crate::axes::{AxisSet, Shape};
+
+    #[test]
+    fn reads_columns_of_fewer_axes_in_condition_order() {
+        let lengths = [2, 3, 2];
+        let outer = Shape::of(AxisSet(0b111), &lengths);
+        for inner in 0..8u64 {
+            let inner = Shape::of(AxisSet(inner), &lengths);
+            let values: Vec<f64> = (0..inner.conditions()).map(|i| i as f64).collect();
+            let feed = Feed::new(&values, &inner, &outer);
+            let strides = outer.strides_of(&inner);
+            let mut all = vec![0.0; outer.conditions()];
+            feed.fill(0, &mut all);
+            for (condition, value) in all.iter().enumerate() {
+                let offset: usize = outer
+                    .indices(condition)
+                    .iter()
+                    .zip(&strides)
+                    .map(|(i, s)| i * s)
+                    .sum();
+                assert_eq!(*value, values[offset]);
+                assert_eq!(feed.value(condition), values[offset]);
+            }
+            for start in 0..all.len() {
+                let mut part = vec![0.0; (all.len() - start).min(5)];
+                feed.fill(start, &mut part);
+                assert_eq!(part, all[start..start + part.len()]);
+            }
+        }
+    }
+}
