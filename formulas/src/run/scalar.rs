@@ -10,7 +10,7 @@ const EQUAL_WITHIN: f64 = 1e-12;
 
 /// Whether two numbers count as equal.
 #[must_use]
-pub fn equal(a: f64, b: f64) -> bool {
+pub(crate) fn equal(a: f64, b: f64) -> bool {
     a == b || (a - b).abs() <= EQUAL_WITHIN * a.abs().max(b.abs())
 }
 
@@ -20,7 +20,7 @@ fn truth(condition: bool) -> f64 {
 
 /// A sign between two finite values. A result that is no finite number has no value.
 #[must_use]
-pub fn binary(op: BinaryOp, a: f64, b: f64) -> f64 {
+pub(crate) fn binary(op: BinaryOp, a: f64, b: f64) -> f64 {
     match op {
         BinaryOp::Add => a + b,
         BinaryOp::Subtract => a - b,
@@ -40,13 +40,13 @@ pub fn binary(op: BinaryOp, a: f64, b: f64) -> f64 {
 
 /// A power: 0.5 is the square root, a whole exponent up to 16 repeated squaring, any other that of `libm`.
 #[must_use]
-pub fn power(base: f64, exponent: f64) -> f64 {
+pub(crate) fn power(base: f64, exponent: f64) -> f64 {
     elementary::power(base, exponent) + 0.0
 }
 
 /// A general function of finite values.
 #[must_use]
-pub fn function(function: Function, v: &[f64]) -> f64 {
+pub(crate) fn function(function: Function, v: &[f64]) -> f64 {
     let a = v.first().copied().unwrap_or(f64::NAN);
     let b = v.get(1).copied().unwrap_or(f64::NAN);
     let c = v.get(2).copied().unwrap_or(f64::NAN);

@@ -1,0 +1,256 @@
+//! Operands: numbers, names, calls, brackets, and what binds tightest behind them.
+
+use super::cursor::{Cursor, Read, error};
+use crate::problem::Fault;
+use crate::span::Span;
+use crate::syntax::{Argument, Expr, ExprKind, Name, PickWord, Selection};
+use crate::token::{Token, TokenKind, Word};
+
+impl Cursor<'_> {
+    /// An operand with its fields and picks.
+    ///
+    /// ```text
+    /// air.density   P_t at (point: "D")   f(x) at (alpha: 2 deg) smooth
+    /// ```
+    pub(super) fn postfix(&mut self) -> Read<Expr> {
+        let first = self.at;
+        let mut base = self.operand()?;
+        loop {
+            base = match self.kind() {
+                Some(TokenKind::Dot) => self.field(first, base)?,
+                Some(TokenKind::Word(Word::At)) => self.pick(first, base)?,
+                _ => return Ok(base),
+            };
+        }
+    }
+
+    fn field(&mut self, first: usize, base: Expr) -> Read<Expr> {
+        self.count_operator()?;
+        let dot = self.here();
+        let hard = self
+            .previous()
+            .is_some_and(|last| last.span.end == dot.start);
+        self.bump();
+        let next = self.peek().filter(|next| next.kind == TokenKind::Name);
+        match next.filter(|next| hard && next.span.start == dot.end) {
+            Some(token) => {
+                self.bump();
+                let field = self.name_of(token);
+                let base = Box::new(base);
+                Ok(Expr {
+                    span: self.since(first),
+                    kind: ExprKind::Field { base, field },
+                })
+            }
+            None if next.is_some() => {
+                let (text, mend) = (".".to_owned(), "*".to_owned());
+                self.fail(dot, Fault::ForeignSign { text, mend })
+            }
+            None => self.expected("the name of a field"),
+        }
+    }
+
+    /// `at (axis: position, …)` and a word behind it.
+    fn pick(&mut self, first: usize, base: Expr) -> Read<Expr> {
+        self.count_operator()?;
+        self.bump();
+        let selections = self.in_brackets(false, Cursor::selections)?;
+        let word = self.opt_pick_word();
+        let kind = ExprKind::Pick {
+            base: Box::new(base),
+            selections,
+            word,
+        };
+        Ok(Expr {
+            span: self.since(first),
+            kind,
+        })
+    }
+
+    fn selections(&mut self) -> Read<Vec<Selection>> {
+        let mut selections = Vec::new();
+        loop {
+            let axis = self.name("the name of an axis")?;
+            if !self.eat(TokenKind::Colon) {
+                return self.expected("`:` behind the axis");
+            }
+            let position = self.whole()?;
+            selections.push(Selection { axis, position });
+            if !self.eat(TokenKind::Comma) {
+                return Ok(selections);
+            }
+        }
+    }
+
+    fn opt_pick_word(&mut self) -> Option<(PickWord, Span)> {
+        let token = self.peek().filter(|token| token.kind == TokenKind::Name)?;
+        let word = match self.word_of(token) {
+            "smooth" => PickWord::Smooth,
+            "nearest" => PickWord::Nearest,
+            "held" => PickWord::Held,
+            _ => return None,
+        };
+        self.bump();
+        Some((word, token.span))
+    }
+
+    fn operand(&mut self) -> Read<Expr> {
+        let Some(token) = self.peek() else {
+            return self.expected("a value");
+        };
+        match token.kind {
+            TokenKind::Name if self.kind_ahead(1) == Some(TokenKind::Open) => self.call(token),
+            TokenKind::Name => {
+                let name = self.name_of(token).text;
+                Ok(self.leaf(token, ExprKind::Name(name)))
+            }
+            TokenKind::Number | TokenKind::BrokenNumber => self.number(token),
+            TokenKind::Open => self.in_brackets(false, Cursor::whole),
+            TokenKind::Text => {
+                let text = unquoted(self.word_of(token));
+                Ok(self.leaf(token, ExprKind::Text(text)))
+            }
+            TokenKind::Bracket | TokenKind::OpenBracket => Ok(self.unit_one(token)),
+            TokenKind::Word(word) => self.word_operand(token, word),
+            _ => self.expected("a value"),
+        }
+    }
+
+    fn leaf(&mut self, token: Token, kind: ExprKind) -> Expr {
+        self.bump();
+        Expr {
+            span: token.span,
+            kind,
+        }
+    }
+
+    /// `[kt]`: one of that unit.
+    fn unit_one(&mut self, token: Token) -> Expr {
+        self.bump();
+        let (unit, fine) = self.unit_of(token);
+        let kind = if fine {
+            ExprKind::UnitOne(unit)
+        } else {
+            ExprKind::Error
+        };
+        Expr {
+            span: token.span,
+            kind,
+        }
+    }
+
+    /// A word of the language where a value is due.
+    fn word_operand(&mut self, token: Token, word: Word) -> Read<Expr> {
+        match word {
+            Word::None => Ok(self.leaf(token, ExprKind::None)),
+            Word::Excluded => Ok(self.leaf(token, ExprKind::Excluded)),
+            Word::If => {
+                self.note(token.span, Fault::IfPlace);
+                let span = self.conditional()?.span;
+                Ok(error(span))
+            }
+            Word::Then | Word::Else | Word::And | Word::Or | Word::Not | Word::At => {
+                self.expected("a value")
+            }
+            _ => {
+                let word = self.word_of(token).to_owned();
+                self.note(token.span, Fault::WordAsName { word });
+                Ok(self.leaf(token, ExprKind::Error))
+            }
+        }
+    }
+
+    /// `( … )`, one level deeper; `commas` says whether commas separate arguments inside.
+    pub(super) fn in_brackets<T>(
+        &mut self,
+        commas: bool,
+        rule: impl FnOnce(&mut Self) -> Read<T>,
+    ) -> Read<T> {
+        let bracket = self.here();
+        if !self.eat(TokenKind::Open) {
+            return self.expected("`(`");
+        }
+        self.enter()?;
+        self.open += 1;
+        let outer = std::mem::replace(&mut self.commas, commas);
+        let inner = rule(self);
+        // Where the line ends inside, the bracket that nothing closes is the problem, unless one is known.
+        if self.peek().is_none() && (inner.is_ok() || self.dangles_at(bracket)) {
+            if inner.is_err() {
+                self.problems.pop();
+            }
+            return self.fail(bracket, Fault::UnclosedBracket { bracket: '(' });
+        }
+        let inner = inner?;
+        if !self.eat(TokenKind::Close) {
+            return self.expected("an operator or `)`");
+        }
+        self.open -= 1;
+        self.commas = outer;
+        self.leave();
+        Ok(inner)
+    }
+
+    /// Whether the bracket is the last token, so that what was reported is only that nothing follows it.
+    fn dangles_at(&self, bracket: Span) -> bool {
+        self.previous().is_some_and(|last| last.span == bracket)
+    }
+
+    /// `name(a, b, c: d over axis)`.
+    fn call(&mut self, token: Token) -> Read<Expr> {
+        let first = self.at;
+        let function = self.name_of(token);
+        self.bump();
+        let (arguments, over) = self.in_brackets(true, Cursor::arguments)?;
+        let kind = ExprKind::Call {
+            function,
+            arguments,
+            over,
+        };
+        Ok(Expr {
+            span: self.since(first),
+            kind,
+        })
+    }
+
+    pub(super) fn arguments(&mut self) -> Read<(Vec<Argument>, Option<Vec<Name>>)> {
+        let mut arguments = Vec::new();
+        if self.kind() == Some(TokenKind::Close) {
+            return Ok((arguments, None));
+        }
+        loop {
+            arguments.push(self.argument()?);
+            if self.eat(TokenKind::Word(Word::Over)) {
+                let axes = self.names("the name of an axis")?;
+                return Ok((arguments, Some(axes)));
+            }
+            if !self.eat(TokenKind::Comma) {
+                return Ok((arguments, None));
+            }
+        }
+    }
+
+    fn argument(&mut self) -> Read<Argument> {
+        let named =
+            self.kind() == Some(TokenKind::Name) && self.kind_ahead(1) == Some(TokenKind::Colon);
+        let name = if named {
+            Some(self.name("a name")?)
+        } else {
+            None
+        };
+        if named {
+            self.bump();
+        }
+        let value = self.whole()?;
+        Ok(Argument { name, value })
+    }
+}
+
+/// What stands between the quotes of a text.
+pub(super) fn unquoted(text: &str) -> String {
+    let inner = text.strip_prefix('"').unwrap_or(text);
+    inner
+        .strip_suffix('"')
+        .unwrap_or(inner)
+        .replace("\"\"", "\"")
+}
