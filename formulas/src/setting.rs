@@ -16,14 +16,22 @@ pub(crate) fn replaced(
 ) -> Result<String, String> {
     let expression = expression.trim();
     if expression.is_empty() || expression.contains(['\n', '\r', ';']) {
-        return Err(format!("{symbol} is to be set to an expression or a list, not to '{expression}'."));
+        return Err(format!(
+            "{symbol} is to be set to an expression or a list, not to '{expression}'."
+        ));
     }
     let quantity = program.quantities.iter().find(|q| q.symbol == symbol);
-    let Some(quantity) = quantity else { return Err(format!("Nothing in this sheet is called {symbol}.")) };
+    let Some(quantity) = quantity else {
+        return Err(format!("Nothing in this sheet is called {symbol}."));
+    };
     if !quantity.input {
-        return Err(format!("{symbol} is no input of this sheet, so it cannot be set."));
+        return Err(format!(
+            "{symbol} is no input of this sheet, so it cannot be set."
+        ));
     }
-    let Some(statement) = tree.statements.get(quantity.statement) else { return Ok(text.to_string()) };
+    let Some(statement) = tree.statements.get(quantity.statement) else {
+        return Ok(text.to_string());
+    };
     let places = match &statement.kind {
         StatementKind::Definition(definition) => definition_places(definition),
         StatementKind::Table(table) => column_places(table, quantity),
@@ -41,7 +49,10 @@ pub(crate) fn replaced(
 }
 
 fn place(value: &Toleranced) -> (usize, usize) {
-    let end = value.tolerance.as_ref().map_or(value.value.span, |t| t.span);
+    let end = value
+        .tolerance
+        .as_ref()
+        .map_or(value.value.span, |t| t.span);
     (value.value.span.start as usize, end.end as usize)
 }
 
@@ -53,24 +64,49 @@ fn definition_places(definition: &Definition) -> Vec<(usize, usize)> {
 }
 
 fn column_places(table: &Table, quantity: &Quantity) -> Vec<(usize, usize)> {
-    let Some(at) = table.columns.iter().position(|c| c.name.text == quantity.symbol) else { return Vec::new() };
-    table.rows.iter().filter_map(|row| row.cells.get(at)).map(place).collect()
+    let Some(at) = table
+        .columns
+        .iter()
+        .position(|c| c.name.text == quantity.symbol)
+    else {
+        return Vec::new();
+    };
+    table
+        .rows
+        .iter()
+        .filter_map(|row| row.cells.get(at))
+        .map(place)
+        .collect()
 }
 
 /// The text for each place: one value for all, or a list as in the sheet.
-fn values_for(symbol: &str, expression: &str, count: usize, kind: &StatementKind) -> Result<Vec<String>, String> {
+fn values_for(
+    symbol: &str,
+    expression: &str,
+    count: usize,
+    kind: &StatementKind,
+) -> Result<Vec<String>, String> {
     let parts: Vec<&str> = expression.split('|').map(str::trim).collect();
     if parts.len() == 1 {
         return Ok(vec![expression.to_string(); count]);
     }
     if parts.len() != count || count == 1 {
-        return Err(format!("{symbol} takes {count} values, and {} are given.", parts.len()));
+        return Err(format!(
+            "{symbol} takes {count} values, and {} are given.",
+            parts.len()
+        ));
     }
-    let StatementKind::Definition(Definition { value: DefinitionValue::ByAxis { items, .. }, .. }) = kind else {
+    let StatementKind::Definition(Definition {
+        value: DefinitionValue::ByAxis { items, .. },
+        ..
+    }) = kind
+    else {
         return Ok(parts.into_iter().map(str::to_string).collect());
     };
-    let labelled: Option<Vec<(&str, &str)>> =
-        parts.iter().map(|p| p.split_once(':').map(|(l, v)| (l.trim(), v.trim()))).collect();
+    let labelled: Option<Vec<(&str, &str)>> = parts
+        .iter()
+        .map(|p| p.split_once(':').map(|(l, v)| (l.trim(), v.trim())))
+        .collect();
     match labelled {
         None => Ok(parts.into_iter().map(str::to_string).collect()),
         Some(pairs) => items
@@ -83,7 +119,10 @@ fn values_for(symbol: &str, expression: &str, count: usize, kind: &StatementKind
                     None => pairs.get(at),
                 };
                 found.map(|(_, v)| (*v).to_string()).ok_or_else(|| {
-                    format!("{symbol} takes a value for {}, and none is given.", label.unwrap_or("each label"))
+                    format!(
+                        "{symbol} takes a value for {}, and none is given.",
+                        label.unwrap_or("each label")
+                    )
                 })
             })
             .collect(),

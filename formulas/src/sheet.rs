@@ -52,7 +52,15 @@ impl Sheet {
         let plan = plan::plan(&program);
         let (values, found) = run::run(&program, &plan, limits, asked);
         problems.extend(found);
-        Sheet { text: text.to_string(), asked: asked.to_vec(), tree, program, values, problems, limits }
+        Sheet {
+            text: text.to_string(),
+            asked: asked.to_vec(),
+            tree,
+            program,
+            values,
+            problems,
+            limits,
+        }
     }
 
     /// The text that was read.
@@ -111,9 +119,14 @@ impl Sheet {
     /// # Errors
     /// Gives a sentence where the symbol is no input or the expression cannot stand there; then nothing changes.
     pub fn set(&mut self, symbol: &str, expression: &str) -> Result<(), String> {
-        let text = crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
+        let text =
+            crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
         let other = Self::open_within(&text, self.limits, &self.asked);
-        let errors = |s: &Sheet| s.findings().into_iter().filter(|f| f.severity == diagnostics::Severity::Error);
+        let errors = |s: &Sheet| {
+            s.findings()
+                .into_iter()
+                .filter(|f| f.severity == diagnostics::Severity::Error)
+        };
         let known: Vec<String> = errors(self).map(|f| f.message).collect();
         if let Some(finding) = errors(&other).find(|f| !known.contains(&f.message)) {
             return Err(finding.message);
@@ -125,9 +138,19 @@ impl Sheet {
 
 /// The problems of reading, with the statements they stand in.
 fn reading_problems(tree: &Tree) -> Vec<Located> {
-    let whole = tree.problems.iter().map(|p| Located { statement: None, problem: p.clone() });
-    let each = tree.statements.iter().enumerate().flat_map(|(index, statement)| {
-        statement.problems.iter().map(move |p| Located { statement: Some(index), problem: p.clone() })
+    let whole = tree.problems.iter().map(|p| Located {
+        statement: None,
+        problem: p.clone(),
     });
+    let each = tree
+        .statements
+        .iter()
+        .enumerate()
+        .flat_map(|(index, statement)| {
+            statement.problems.iter().map(move |p| Located {
+                statement: Some(index),
+                problem: p.clone(),
+            })
+        });
     whole.chain(each).collect()
 }

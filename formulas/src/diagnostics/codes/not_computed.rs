@@ -5,7 +5,7 @@ use crate::diagnostics::finding::{Code, Severity};
 
 pub(super) const ROW: Code = Code {
     code: "not-computed",
-    severity: Severity::Warning,
+    severity: Severity::Advice,
     what: "Everything that a sheet asks for is worked out.",
     why: "What is not has no value, and neither has what rests on it.",
     example: None,
