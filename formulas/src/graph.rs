@@ -6,7 +6,7 @@ use crate::problem::{Fault, Located};
 use crate::syntax::{StatementKind, Tree};
 
 /// Unknown names for which the nearest known one is looked for.
-const NEAREST_MOST: usize = 200;
+const NEAREST_MOST: usize = 100;
 
 /// The order of the statements, and which of them stand in a circle.
 #[derive(Clone, Debug, Default)]
@@ -105,8 +105,12 @@ fn unknown(names: &Names, used: Use<'_>, name: &str, told: usize) -> Option<Faul
             })
         }
         Use::Symbol(..) => {
-            let twin =
-                crate::nearest::other_script(name, names.symbols.iter().map(|s| s.name.as_str()));
+            let twin = (told <= NEAREST_MOST)
+                .then(|| {
+                    let symbols = names.symbols.iter().map(|s| s.name.as_str());
+                    crate::nearest::other_script(name, symbols)
+                })
+                .flatten();
             let other_script = twin.is_some();
             let constants = engine::quantity::constants::rows().iter().map(|c| c.name);
             let known = names
