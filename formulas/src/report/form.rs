@@ -507,4 +507,119 @@ mod tests {
         assert_eq!(split_cells("a | \"x|y\" |"), ["a", "\"x|y\"", ""]);
         assert_eq!(code_of("\"say \"\";\"\"\" ; z"), "\"say \"\";\"\"\" ");
     }
+
+    fn rows_of(text: &str) -> Vec<FormRow> {
+        form(text, &crate::parse::parse(text), &Program::default()).rows
+    }
+
+    /// Word, symbol, unit and right side of the only statement of a text.
+    fn cut(text: &str) -> [String; 4] {
+        let rows = rows_of(text);
+        assert_eq!(rows.len(), 1, "{rows:?}");
+        let row = &rows[0];
+        let or_none = |part: &Option<String>| part.clone().unwrap_or_default();
+        [
+            or_none(&row.word),
+            or_none(&row.symbol),
+            or_none(&row.unit),
+            row.how.clone(),
+        ]
+    }
+
+    #[test]
+    fn each_kind_of_statement_is_cut_in_its_columns() {
+        for (text, columns) in [
+            (
+                "f(a, b [1/ft]) [lb] = a*(b + 1) ; r",
+                ["", "f(a, b [1/ft])", "lb", "a*(b + 1)"],
+            ),
+            ("f(a) = a", ["", "f(a)", "", "a"]),
+            (
+                "vary V [kt]: 60 to 90 step 5",
+                ["vary", "V", "kt", "60 to 90 step 5"],
+            ),
+            (
+                "unknown d [deg] between -10 and 10 such that M(d) = 0",
+                [
+                    "unknown",
+                    "d",
+                    "deg",
+                    "between -10 and 10 such that M(d) = 0",
+                ],
+            ),
+            (
+                "unknown a between 0 and 1, b between 0 and 1 such that a = b and a + b = 1",
+                [
+                    "unknown",
+                    "",
+                    "",
+                    "a between 0 and 1, b between 0 and 1 such that a = b and a + b = 1",
+                ],
+            ),
+            (
+                "figure \"Tail load; up\": P against x each cg",
+                ["figure", "", "", "\"Tail load; up\": P against x each cg"],
+            ),
+            (
+                "use \"osier-geometry\" as g",
+                ["use", "g", "", "\"osier-geometry\" as g"],
+            ),
+            ("S c ; area", ["", "", "", "S c"]),
+            (
+                "sub Wing ; not a remark",
+                ["sub", "", "", "Wing ; not a remark"],
+            ),
+            ("; only a remark", ["", "", "", "only a remark"]),
+            (
+                "S [ft^2] = 2* ; one\r\n  (a +\r\n  b) ; two\r\n",
+                ["", "S", "ft^2", "2* (a + b)"],
+            ),
+        ] {
+            assert_eq!(cut(text), columns, "{text}");
+        }
+    }
+
+    #[test]
+    fn a_table_keeps_its_cells_as_typed() {
+        let text = "table flap, alpha [deg] | CL | name ; wind tunnel\n\
+                    up, -4 | -0.1 | \"a|b\" ; assumed\n\
+                    aside checked\n\
+                    up, 2 | - |\n\
+                    end\nx = 1\n";
+        let rows = rows_of(text);
+        let row = &rows[0];
+        let table = row.table.as_ref().unwrap();
+        let head = |symbol: &str, unit: Option<&str>| FormHead {
+            symbol: symbol.to_owned(),
+            unit: unit.map(str::to_owned),
+        };
+        assert_eq!(row.how, "flap, alpha [deg] | CL | name");
+        assert_eq!(row.remark.as_deref(), Some("wind tunnel"));
+        assert_eq!(table.keys, [head("flap", None), head("alpha", Some("deg"))]);
+        assert_eq!(table.columns, [head("CL", None), head("name", None)]);
+        let cells: Vec<_> = table
+            .rows
+            .iter()
+            .map(|r| (r.line, r.cells.join("/")))
+            .collect();
+        assert_eq!(
+            cells,
+            [
+                (2, "up/-4/-0.1/\"a|b\"".to_owned()),
+                (4, "up/2/-/".to_owned())
+            ]
+        );
+        assert_eq!(table.rows[0].remark.as_deref(), Some("assumed"));
+        assert_eq!(
+            (row.item, rows[1].item, rows[1].line),
+            (Some(1), Some(2), 6)
+        );
+    }
+
+    #[test]
+    fn the_texts_of_all_rows_are_the_lines_of_the_sheet() {
+        let text = "title a\n\nx = 1 +\n  2\ntable p | V\nA | 1\nend\n";
+        let lines: Vec<String> = rows_of(text).into_iter().map(|row| row.text).collect();
+        assert_eq!(lines.join("\n"), text.trim_end_matches('\n'));
+    }
 }
