@@ -205,3 +205,133 @@ pub(crate) fn compare(old: &OsStr, new: &OsStr) -> Outcome {
 fn full_report(loaded: &Loaded) -> Report {
     complete(loaded, &[], &Sheet::open(&loaded.text).report(&[]))
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::outcome::BAD_USAGE;
+
+    /// A sheet in a file of its own, removed at the end.
+    struct File(std::path::PathBuf);
+
+    impl File {
+        fn of(name: &str, text: &[u8]) -> Self {
+            let name = format!("pitchwright-{}-{name}", std::process::id());
+            let path = std::env::temp_dir().join(name);
+            std::fs::write(&path, text).unwrap();
+            File(path)
+        }
+
+        fn path(&self) -> OsString {
+            self.0.clone().into_os_string()
+        }
+    }
+
+    impl Drop for File {
+        fn drop(&mut self) {
+            let _ = std::fs::remove_file(&self.0);
+        }
+    }
+
+    fn run_of(sheet: OsString, format: Format) -> Run {
+        Run {
+            sheet,
+            format,
+            set: Vec::new(),
+            quantities: Vec::new(),
+        }
+    }
+
+    #[test]
+    fn the_exit_status_tells_how_the_sheet_fared() {
+        for (i, (text, expected)) in [
+            (&b"x = 1\nrequire x <= 2\n"[..], WELL),
+            (b"x = 3\nrequire x <= 2\n", NOT_MET),
+            (b"x = none\nrequire x <= 2\n", NOT_MET),
+            (b"x = 1 +\nrequire x <= 2\n", SHEET_ERROR),
+            (b"x = 1 ; \xff\n", SHEET_ERROR),
+        ]
+        .into_iter()
+        .enumerate()
+        {
+            let file = File::of(&format!("status-{i}"), text);
+            assert_eq!(
+                run(&run_of(file.path(), Format::Text)).status,
+                expected,
+                "{i}"
+            );
+            assert_eq!(check(&[file.path()]).status, expected, "{i}");
+        }
+        assert_eq!(
+            run(&run_of("no such file".into(), Format::Text)).status,
+            NO_FILE
+        );
+        assert_eq!(check(&["no such file".into()]).status, NO_FILE);
+    }
+
+    #[test]
+    fn inputs_are_set_and_unknown_symbols_are_bad_usage() {
+        let file = File::of("set", b"x [ft] = 2\ny = 2*x\n");
+        let mut asked = run_of(file.path(), Format::Csv);
+        asked.set = vec![("x".to_owned(), "12 in".to_owned())];
+        assert_eq!(
+            run(&asked).results,
+            "symbol,value,unit\r\nx,1,ft\r\ny,2,ft\r\n"
+        );
+        asked.set = vec![("y".to_owned(), "1 ft".to_owned())];
+        assert_eq!(
+            (run(&asked).status, run(&asked).results.as_str()),
+            (BAD_USAGE, "")
+        );
+        let mut asked = run_of(file.path(), Format::Json);
+        asked.quantities = vec!["z".to_owned()];
+        assert_eq!(run(&asked).status, BAD_USAGE);
+    }
+
+    #[test]
+    fn every_condition_has_its_row_of_values_however_many_there_are() {
+        let file = File::of("rows", b"vary a [1]: 1 to 12000 step 1\nb = 2*a\n");
+        let results = run(&run_of(file.path(), Format::Csv)).results;
+        assert_eq!(results.lines().count(), 1 + 2 * 12_000);
+    }
+
+    #[test]
+    fn findings_are_told_in_lines() {
+        let file = File::of("findings", b"x = foo\n");
+        let name = file.0.display().to_string();
+        let outcome = check(&[file.path()]);
+        assert!(
+            outcome
+                .results
+                .starts_with(&format!("{name}:1:5: error[unknown-symbol]: ")),
+            "{}",
+            outcome.results
+        );
+        assert_eq!(
+            run(&run_of(file.path(), Format::Json)).diagnostics,
+            outcome.results
+        );
+    }
+
+    #[test]
+    fn safe_fixes_are_written_back_unless_it_is_a_dry_run() {
+        let file = File::of("fix", b"x = 2,5\n");
+        let outcome = fix(&file.path(), true);
+        assert!(outcome.results.contains(":1:5: "), "{}", outcome.results);
+        assert_eq!(std::fs::read(&file.0).unwrap(), b"x = 2,5\n");
+        assert_eq!(fix(&file.path(), false).status, WELL);
+        assert_eq!(std::fs::read(&file.0).unwrap(), b"x = 2.5\n");
+    }
+
+    #[test]
+    fn two_sheets_are_compared() {
+        let old = File::of("old", b"x [ft] = 2\n");
+        let new = File::of("new", b"x [ft] = 3\n");
+        let outcome = compare(&old.path(), &new.path());
+        assert_eq!(
+            outcome.results,
+            "quantities\n  x: 2 ft -> 3 ft, change 1 ft\n"
+        );
+        assert_eq!(compare(&old.path(), &old.path()).results, "no difference\n");
+    }
+}
