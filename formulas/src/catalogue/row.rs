@@ -82,6 +82,8 @@ pub enum Wants {
     Dimension(Dimension),
     /// A force or a mass.
     ForceOrMass,
+    /// A mass, or a weight, which is taken as the mass that weighs so much.
+    MassOrWeight,
     /// Text.
     Text,
 }

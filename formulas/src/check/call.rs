@@ -6,8 +6,8 @@ use crate::catalogue::{Compute, Entry, Gives, Parameter, Wants};
 use crate::problem::{Fault, Mend};
 use crate::program::{Kind, NodeId, NumberKind, Op};
 use crate::span::Span;
-use crate::syntax::{Argument, Expr, ExprKind, Name};
-use engine::quantity::{Dimension, SpeedKind};
+use crate::syntax::{Argument, BinaryOp, Expr, ExprKind, Name};
+use engine::quantity::{Dimension, SpeedKind, constants};
 
 impl Checker<'_> {
     pub(crate) fn call(
@@ -197,7 +197,24 @@ impl Checker<'_> {
         let typed = self.expression(expr)?;
         let dimension = match parameter.wants {
             Wants::Text => return self.text_argument(entry, parameter, expr, typed),
-            Wants::ForceOrMass if typed.dimension().matches(Dimension::MASS) => Dimension::MASS,
+            Wants::ForceOrMass | Wants::MassOrWeight
+                if typed.dimension().matches(Dimension::MASS) =>
+            {
+                Dimension::MASS
+            }
+            Wants::MassOrWeight => {
+                let weight =
+                    self.fits_argument(entry.name, parameter.name, Dimension::FORCE, &typed)?;
+                let g0 = self.number(constants::G0);
+                let node = self.binary(BinaryOp::Divide, weight.node, g0);
+                let kind = Kind::Number(NumberKind::of(Dimension::MASS));
+                return Some(Typed {
+                    node,
+                    kind,
+                    unit: None,
+                    ..weight
+                });
+            }
             Wants::ForceOrMass => Dimension::FORCE,
             Wants::Dimension(dimension) => dimension,
         };

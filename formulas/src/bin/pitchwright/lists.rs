@@ -93,7 +93,7 @@ fn parameter_line(parameter: &Parameter) -> String {
 fn wanted(wants: Wants) -> String {
     match wants {
         Wants::Dimension(dimension) => dimension_text(dimension),
-        Wants::ForceOrMass => "force or mass".to_owned(),
+        Wants::ForceOrMass | Wants::MassOrWeight => "force or mass".to_owned(),
         Wants::Text => "text".to_owned(),
     }
 }
