@@ -12,6 +12,7 @@ pub mod graph;
 pub mod lex;
 pub mod names;
 mod nearest;
+pub mod numbers;
 pub mod parse;
 pub mod plan;
 pub mod problem;

@@ -65,7 +65,7 @@ impl Checker<'_> {
             Points::Numbers(values, unit) => Axis {
                 name: name.to_string(),
                 statement: self.statement,
-                labels: number_labels(&values, &unit, self.program.digits),
+                labels: point_labels(&values, &unit, self.program.digits),
                 label_texts: Vec::new(),
                 values: Some(values),
                 unit: (!unit.text.is_empty()).then_some(unit),
@@ -361,29 +361,8 @@ fn unit_one() -> ShownUnit {
 }
 
 /// The values of an axis as shown, with as many digits as make them differ.
-fn number_labels(values: &[f64], unit: &ShownUnit, digits: u8) -> Vec<String> {
+fn point_labels(values: &[f64], unit: &ShownUnit, digits: u8) -> Vec<String> {
     let shown: Vec<f64> = values.iter().map(|v| unit.unit.from_si(*v)).collect();
-    for digits in usize::from(digits)..17 {
-        let rounded: Vec<String> = shown
-            .iter()
-            .map(|v| label(*v, digits, &unit.text))
-            .collect();
-        let distinct: HashSet<&str> = rounded.iter().map(String::as_str).collect();
-        if distinct.len() == rounded.len() {
-            return rounded;
-        }
-    }
-    shown.iter().map(|v| label(*v, 17, &unit.text)).collect()
-}
-
-fn label(value: f64, digits: usize, unit: &str) -> String {
-    let rounded: f64 = format!("{value:.*e}", digits.saturating_sub(1))
-        .parse()
-        .unwrap_or(value);
-    let number = format!("{}", rounded + 0.0);
-    if unit.is_empty() {
-        number
-    } else {
-        format!("{number} {unit}")
-    }
+    let text = (!unit.text.is_empty()).then_some(&*unit.text);
+    crate::numbers::labels(&shown, digits, text)
 }

@@ -53,7 +53,7 @@ pub fn build(input: &Input) -> Report {
         findings: input.findings.clone(),
         digits: match program.digits {
             digits @ 1..=15 => digits,
-            _ => super::numbers::DIGITS,
+            _ => crate::numbers::DIGITS,
         },
     }
 }

@@ -8,7 +8,6 @@ mod convert;
 pub mod csv;
 pub mod form;
 pub mod json;
-pub mod numbers;
 mod requirement;
 #[cfg(test)]
 mod sample;

@@ -222,10 +222,10 @@ impl Machine<'_> {
             match unit {
                 Some(u) => format!(
                     "{} {}",
-                    crate::report::numbers::shown(u.unit.from_si(value), digits),
+                    crate::numbers::shown(u.unit.from_si(value), digits),
                     u.text
                 ),
-                None => format!("{} {si}", crate::report::numbers::shown(value, digits)),
+                None => format!("{} {si}", crate::numbers::shown(value, digits)),
             }
         };
         let axial = body.items.iter().any(|e| e.kind == EntryKind::Axial);

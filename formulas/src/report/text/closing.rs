@@ -2,7 +2,7 @@
 
 use super::page::{Page, padded};
 use super::{at_condition, behind, condition_text, counted};
-use crate::report::numbers::shown;
+use crate::numbers::shown;
 use crate::report::{
     Extreme, Form, Freebody, Governing, GoverningGroup, Report, Requirement, WorstCondition,
 };

@@ -2,7 +2,7 @@
 
 use super::page::{Page, WIDTH, padded};
 use super::{at_condition, counted};
-use crate::report::numbers::shown;
+use crate::numbers::shown;
 use crate::report::{Quantity, Report, ValueList};
 
 /// Where the tables of values begin.

@@ -19,7 +19,7 @@ const EXACT_DIGITS: usize = 767;
 /// Rounded from the exact binary value, ties away from zero. What is no finite number is shown as `-`.
 ///
 /// ```
-/// use formulas::report::numbers::shown;
+/// use formulas::numbers::shown;
 /// assert_eq!(shown(142.0, 4), "142.0");
 /// assert_eq!(shown(12_345_678.0, 4), "1.235e7");
 /// assert_eq!(shown(0.5, 1), "0.5");
@@ -42,7 +42,7 @@ pub fn shown(value: f64, digits: u8) -> String {
 /// not tell them apart, and the unit behind. Values that are equal as doubles stay equal.
 ///
 /// ```
-/// use formulas::report::numbers::labels;
+/// use formulas::numbers::labels;
 /// assert_eq!(labels(&[-4.0, 0.0, 12.5], 4, Some("deg")), ["-4 deg", "0 deg", "12.5 deg"]);
 /// assert_eq!(labels(&[1.00001, 1.00002], 4, None), ["1.00001", "1.00002"]);
 /// ```
