@@ -4,6 +4,7 @@
 //! [`plan`], [`run`], [`report`]. Problems leave any stage as facts ([`problem`]) and become findings in
 //! [`diagnostics`]. [`sheet`] is the front door.
 
+pub mod assist;
 pub mod axes;
 pub mod catalogue;
 pub mod check;
@@ -15,6 +16,7 @@ mod nearest;
 pub mod numbers;
 pub mod parse;
 pub mod plan;
+pub mod print;
 pub mod problem;
 pub mod program;
 pub mod report;

@@ -337,9 +337,10 @@ fn is_defined(line: &str, word_end: usize) -> bool {
 /// The texts of the remarks of a statement as one.
 fn remark(text: &str, spans: &[Span], keep_empty: bool) -> Option<Words> {
     let (first, last) = (spans.first()?, spans.last()?);
-    let parts = spans
-        .iter()
-        .map(|span| trimmed(span.of(text).trim_start_matches(';')));
+    let parts = spans.iter().map(|span| {
+        let words = span.of(text);
+        trimmed(words.strip_prefix(';').unwrap_or(words))
+    });
     let parts: Vec<&str> = parts.filter(|part| !part.is_empty()).collect();
     let words = parts.join(" ");
     (keep_empty || !words.is_empty()).then(|| Words {

@@ -15,17 +15,22 @@ impl Cursor<'_> {
     pub(super) fn postfix(&mut self) -> Read<Expr> {
         let first = self.at;
         let mut base = self.operand()?;
+        let mut links = 0;
         loop {
             base = match self.kind() {
                 Some(TokenKind::Dot) => self.field(first, base)?,
                 Some(TokenKind::Word(Word::At)) => self.pick(first, base)?,
-                _ => return Ok(base),
+                _ => break,
             };
+            // A chain of fields and picks is as deep as it is long.
+            self.enter()?;
+            links += 1;
         }
+        self.nesting -= links;
+        Ok(base)
     }
 
     fn field(&mut self, first: usize, base: Expr) -> Read<Expr> {
-        self.count_operator()?;
         let dot = self.here();
         let hard = self
             .previous()
@@ -50,12 +55,11 @@ impl Cursor<'_> {
         }
     }
 
-    /// `at (axis: position, …)` and a word behind it.
+    /// `at (axis: position, …, held)`; the word may also stand behind the bracket.
     fn pick(&mut self, first: usize, base: Expr) -> Read<Expr> {
-        self.count_operator()?;
         self.bump();
-        let selections = self.in_brackets(false, Cursor::selections)?;
-        let word = self.opt_pick_word();
+        let (selections, inside) = self.in_brackets(false, Cursor::selections)?;
+        let word = inside.or_else(|| self.opt_pick_word());
         let kind = ExprKind::Pick {
             base: Box::new(base),
             selections,
@@ -67,7 +71,7 @@ impl Cursor<'_> {
         })
     }
 
-    fn selections(&mut self) -> Read<Vec<Selection>> {
+    fn selections(&mut self) -> Read<(Vec<Selection>, Option<(PickWord, Span)>)> {
         let mut selections = Vec::new();
         loop {
             let axis = self.name("the name of an axis")?;
@@ -76,8 +80,11 @@ impl Cursor<'_> {
             }
             let position = self.whole()?;
             selections.push(Selection { axis, position });
-            if !self.eat(TokenKind::Comma) {
-                return Ok(selections);
+            let comma = self.eat(TokenKind::Comma);
+            let last = self.kind_ahead(1) == Some(TokenKind::Close);
+            let word = last.then(|| self.opt_pick_word()).flatten();
+            if word.is_some() || !comma {
+                return Ok((selections, word));
             }
         }
     }

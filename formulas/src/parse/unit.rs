@@ -268,6 +268,10 @@ impl Reader<'_> {
 
     /// Whether the line of a group is drawn clearly.
     fn judge(&mut self, group: &Group, first: usize) {
+        // One remark on a unit is enough, and keeps the problems of a long one short.
+        if !self.problems.is_empty() {
+            return;
+        }
         let span = Span::new(self.start, self.start + self.text.len());
         let text = self.text.to_owned();
         if group.second {

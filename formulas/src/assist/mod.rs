@@ -1,0 +1,3 @@
+//! Help while a sheet is typed.
+
+pub mod marks;
