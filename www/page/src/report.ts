@@ -1,0 +1,162 @@
+/** The report that the engine gives for a sheet, as plain data. */
+
+/** A label for each axis of a condition. */
+export type Condition = Record<string, string>;
+
+export interface Axis {
+  name: string;
+  labels: string[];
+  unit: string | null;
+  values: ArrayLike<number> | null;
+}
+
+export interface Extreme {
+  value: number;
+  condition: Condition;
+}
+
+/** One value: a number, a text, a condition, or nothing. */
+export type Value = number | string | boolean | null;
+
+export interface Quantity {
+  symbol: string;
+  line: number;
+  kind: "number" | "condition" | "text";
+  unit: string | null;
+  axes: string[];
+  conditions: number;
+  without_value: number;
+  excluded: number;
+  /** Row-major over `axes`, in `unit`; NaN or null where there is none. Null altogether where there are too many. */
+  values: ArrayLike<Value> | null;
+  largest: Extreme | null;
+  smallest: Extreme | null;
+  input: boolean;
+  remark: string | null;
+  part: string | null;
+}
+
+export interface Group {
+  condition: Condition;
+  largest: Extreme | null;
+  smallest: Extreme | null;
+}
+
+export interface Governing {
+  symbol: string;
+  unit: string | null;
+  over: string[];
+  conditions: number;
+  without_value: number;
+  excluded: number;
+  largest: Extreme | null;
+  smallest: Extreme | null;
+  groups: Group[];
+}
+
+export interface Worst {
+  condition: Condition;
+  left: Value;
+  right: Value;
+  unit: string | null;
+  reserve: number | null;
+  margin: number | null;
+}
+
+export interface Requirement {
+  line: number;
+  text: string;
+  reason: string | null;
+  met: boolean | null;
+  conditions: number;
+  not_met: number;
+  without_value: number;
+  worst: Worst | null;
+}
+
+export interface FreeBody {
+  name: string;
+  line: number;
+  closes: boolean | null;
+  by_construction: boolean;
+}
+
+export interface Figure {
+  name: string;
+  line: number;
+  svg?: string | null;
+}
+
+export interface Edit {
+  line: number;
+  column: number;
+  length: number;
+  text: string;
+}
+
+export interface Fix {
+  title: string;
+  safe: boolean;
+  edits: Edit[];
+}
+
+export interface Finding {
+  severity: "error" | "warning" | "advice";
+  line: number;
+  column: number;
+  length: number;
+  message: string;
+  fixes: Fix[];
+}
+
+export type RowKind =
+  | "title" | "part" | "sub" | "note" | "prose" | "aside" | "blank" | "definition" | "function" | "vary" | "table"
+  | "unknown" | "governing" | "require" | "freebody" | "figure" | "use" | "unreadable";
+
+export interface FormTable {
+  keys: string[];
+  columns: { symbol: string; unit: string | null }[];
+  rows: { line: number; cells: string[]; remark: string | null }[];
+}
+
+/** One statement of the sheet as a row of the form. */
+export interface FormRow {
+  item: number | null;
+  line: number;
+  lines: number;
+  kind: RowKind;
+  word: string | null;
+  symbol: string | null;
+  unit: string | null;
+  how: string;
+  remark: string | null;
+  quantities: string[];
+  text: string;
+  table: FormTable | null;
+}
+
+export interface Report {
+  engine: string;
+  digest: string;
+  sheet: Record<string, unknown>;
+  axes: Axis[];
+  quantities: Quantity[];
+  governing: Governing[];
+  requirements: Requirement[];
+  freebodies: FreeBody[];
+  figures: Figure[];
+  findings: Finding[];
+  form: { rows: FormRow[] };
+}
+
+/** The significant figures that the sheet asks for. */
+export function digitsOf(report: Report): number {
+  const digits = Number(report.sheet["digits"] ?? 4);
+  return Number.isInteger(digits) && digits >= 1 && digits <= 15 ? digits : 4;
+}
+
+/** The findings of lines `from` to before `to`, each with its number in the whole list. */
+export function findingsAt(report: Report, from: number, to: number): { number: number; finding: Finding }[] {
+  const numbered = report.findings.map((finding, index) => ({ number: index + 1, finding }));
+  return numbered.filter(({ finding }) => finding.line >= from && finding.line < to);
+}
