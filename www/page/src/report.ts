@@ -160,3 +160,8 @@ export function findingsAt(report: Report, from: number, to: number): { number: 
   const numbered = report.findings.map((finding, index) => ({ number: index + 1, finding }));
   return numbered.filter(({ finding }) => finding.line >= from && finding.line < to);
 }
+
+/** The entries for `symbol`. */
+export function findAll<T extends { symbol: string }>(entries: readonly T[], symbol: string): T[] {
+  return entries.filter((entry) => entry.symbol === symbol);
+}

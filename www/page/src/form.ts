@@ -1,0 +1,286 @@
+/** The computation form: a ruled table that is patched in place after each evaluation. */
+import type { CellSpec } from "./cells.js";
+import { el, fill } from "./dom.js";
+import { drawHead } from "./head.js";
+import type { Shown } from "./conditions.js";
+import type { FormRow } from "./report.js";
+import { rowSpec, type RowSpec } from "./rows.js";
+import { words } from "./strings.js";
+
+/** The columns that a row can be opened at. */
+export type Place = "symbol" | "unit" | "how" | "remark";
+
+export interface FormEvents {
+  /** A row, or the empty one at the foot (null), was clicked or activated at `place`. */
+  open(row: FormRow | null, place: Place): void;
+  /** A key went down on a closed row. */
+  key(event: KeyboardEvent): void;
+}
+
+/** A drawn statement. */
+interface RowView {
+  body: HTMLTableSectionElement;
+  row: FormRow;
+  spec: RowSpec | null;
+}
+
+/** An open editor and the line it stands at. */
+interface OpenEditor {
+  body: HTMLTableSectionElement;
+  line: number;
+  count: number;
+}
+
+/** Rows that are nothing but text, which the open editor shows already. */
+const TEXT_ONLY = new Set(["part", "sub", "note", "prose", "aside", "blank", "unreadable"]);
+
+export class Form {
+  readonly table: HTMLTableElement;
+  #caption = el("caption", { class: "unseen" }, words.form);
+  #columns = el("colgroup");
+  #head = el("thead");
+  #foot: HTMLTableSectionElement;
+  #views: RowView[] = [];
+  #editor: OpenEditor | null = null;
+  #current = 0;
+  #anchor = 0;
+
+  constructor(events: FormEvents) {
+    const add = el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": words.newRow }, "+");
+    const line = el("tr", {}, el("th", { class: "item", scope: "row" }, add), el("td", { class: "text" }));
+    this.#foot = el("tbody", { class: "foot" }, line);
+    this.table = el("table", { class: "form" }, this.#caption, this.#columns, this.#head, this.#foot);
+    this.table.addEventListener("click", (event) => this.#click(event, events));
+    this.table.addEventListener("keydown", (event) => {
+      if (!this.#inEditor(event.target)) events.key(event);
+    });
+    this.table.addEventListener("focusin", (event) => this.#focused(event));
+  }
+
+  /** The drawn rows, in order. */
+  get rows(): FormRow[] {
+    return this.#views.map(({ row }) => row);
+  }
+
+  /** The chosen rows: first and last position; the empty row at the foot is behind the last. */
+  get chosen(): { from: number; to: number } {
+    return { from: Math.min(this.#current, this.#anchor), to: Math.max(this.#current, this.#anchor) };
+  }
+
+  /** The position that the keyboard is at. */
+  get current(): number {
+    return this.#current;
+  }
+
+  /** Draws `rows` under the conditions shown. Only what differs is touched; an open editor stays where it is. */
+  show(rows: readonly FormRow[], shown: Shown): void {
+    drawHead(this.#head, this.#columns, shown);
+    const width = shown.across?.labels.length ?? 1;
+    this.table.style.setProperty("--value-columns", String(width));
+    this.table.lastElementChild?.querySelector("td")?.setAttribute("colspan", String(width + 4));
+    this.#views = aligned(this.#views, rows);
+    for (const view of this.#views) draw(view, shown);
+    this.#arrange();
+    this.#mark();
+  }
+
+  /** Shows an editor at its line, or none. */
+  place(editor: OpenEditor | null): void {
+    if (this.#editor && this.#editor !== editor) this.#editor.body.remove();
+    this.#editor = editor;
+    this.#arrange();
+  }
+
+  /** Keeps the rows' lines right between a change of the text and its report. */
+  shift(line: number, removed: number, inserted: number): void {
+    for (const { row } of this.#views) {
+      if (row.line >= line + removed) row.line += inserted - removed;
+      else if (row.line === line && removed > 0) row.lines = Math.max(1, row.lines + inserted - removed);
+    }
+  }
+
+  /** The position of the row that covers `line`; the number of rows where none does. */
+  positionAt(line: number): number {
+    const found = this.#views.findIndex(({ row }) => line < row.line + row.lines);
+    return found < 0 ? this.#views.length : found;
+  }
+
+  /** Moves the keyboard to a position, extending the choice or starting it anew. */
+  choose(position: number, extend = false): void {
+    this.#current = Math.max(0, Math.min(position, this.#views.length));
+    if (!extend) this.#anchor = this.#current;
+    this.#mark();
+    this.#button(this.#current)?.focus();
+  }
+
+  /** The chosen rows went past a neighbour: they stay chosen, and their lines are right at once. */
+  moved(from: number, to: number, by: 1 | -1): void {
+    const views = [...this.#views];
+    const [neighbour] = views.splice(by < 0 ? from - 1 : to + 1, 1);
+    if (!neighbour) return;
+    views.splice(by < 0 ? to : from, 0, neighbour);
+    let line = Math.min(...this.#views.map(({ row }) => row.line));
+    for (const { row } of views) {
+      row.line = line;
+      line += row.lines;
+    }
+    this.#views = views;
+    this.#arrange();
+    this.#anchor += by;
+    const anchor = this.#anchor;
+    this.choose(this.#current + by, true);
+    this.#anchor = anchor;
+  }
+
+  /** The table rows of the chosen statements. */
+  get chosenRows(): HTMLTableRowElement[] {
+    const { from, to } = this.chosen;
+    return this.#views.slice(from, to + 1).flatMap(({ body }) => Array.from(body.rows));
+  }
+
+  #bodyAt(position: number): HTMLTableSectionElement {
+    return this.#views[position]?.body ?? this.#foot;
+  }
+
+  #button(position: number): HTMLButtonElement | null {
+    return this.#bodyAt(position).querySelector<HTMLButtonElement>("button.opens");
+  }
+
+  #mark(): void {
+    const { from, to } = this.chosen;
+    this.#current = Math.min(this.#current, this.#views.length);
+    for (let position = 0; position <= this.#views.length; position++) {
+      this.#bodyAt(position).classList.toggle("chosen", from < to && position >= from && position <= to);
+      this.#button(position)?.setAttribute("tabindex", position === this.#current ? "0" : "-1");
+    }
+  }
+
+  #arrange(): void {
+    const editor = this.#editor;
+    const bodies: HTMLElement[] = [];
+    let placed = false;
+    for (const { body, row } of this.#views) {
+      const covered = editor !== null && row.line >= editor.line && row.line < editor.line + editor.count;
+      if (editor && !placed && row.line >= editor.line) {
+        bodies.push(editor.body);
+        placed = true;
+      }
+      body.classList.toggle("open", covered);
+      body.hidden = covered && TEXT_ONLY.has(row.kind);
+      bodies.push(body);
+    }
+    if (editor && !placed) bodies.push(editor.body);
+    arrange(this.table, this.#head, [...bodies, this.#foot]);
+  }
+
+  #inEditor(target: EventTarget | null): boolean {
+    return target instanceof Node && (this.#editor?.body.contains(target) ?? false);
+  }
+
+  #focused(event: FocusEvent): void {
+    if (!(event.target instanceof HTMLButtonElement) || !event.target.classList.contains("opens")) return;
+    const position = this.#positionOf(event.target);
+    if (position === null || position === this.#current) return;
+    this.#current = this.#anchor = position;
+    this.#mark();
+  }
+
+  #positionOf(target: Element): number | null {
+    const body = target.closest("table.form > tbody");
+    if (body === this.#foot) return this.#views.length;
+    const found = this.#views.findIndex((view) => view.body === body);
+    return found < 0 ? null : found;
+  }
+
+  #click(event: MouseEvent, events: FormEvents): void {
+    const target = event.target as Element;
+    if (this.#inEditor(target) || target.closest("a")) return;
+    // A text that was just marked with the mouse is to be copied, not to be typed over.
+    if (document.getSelection()?.isCollapsed === false && !target.closest("button")) return;
+    const position = this.#positionOf(target);
+    if (position === null) return;
+    if (event.shiftKey) {
+      this.choose(position, true);
+      return;
+    }
+    this.#current = this.#anchor = position;
+    events.open(this.#views[position]?.row ?? null, placeOf(target));
+  }
+}
+
+function placeOf(target: Element): Place {
+  const className = target.closest("table.form > tbody > tr > *")?.className ?? "";
+  if (className.startsWith("unit")) return "unit";
+  if (className.startsWith("symbol") || className.startsWith("item")) return "symbol";
+  return className.startsWith("remark") ? "remark" : "how";
+}
+
+/** Puts `bodies` behind `head` in their order, moving only those that stand elsewhere. */
+function arrange(table: HTMLTableElement, head: Element, bodies: readonly HTMLElement[]): void {
+  const wanted = new Set<Element>(bodies);
+  for (const body of Array.from(table.tBodies)) if (!wanted.has(body)) body.remove();
+  let next = head.nextElementSibling;
+  for (const body of bodies) {
+    if (body === next) next = next.nextElementSibling;
+    else table.insertBefore(body, next);
+  }
+}
+
+/** Gives each row a view, the old ones where a row is the same as before. */
+function aligned(old: readonly RowView[], rows: readonly FormRow[]): RowView[] {
+  const same = (view: RowView | undefined, row: FormRow | undefined) =>
+    view !== undefined && row !== undefined && view.row.kind === row.kind && view.row.text === row.text;
+  const most = Math.min(old.length, rows.length);
+  let head = 0;
+  while (head < most && same(old[head], rows[head])) head++;
+  let tail = 0;
+  while (tail < most - head && same(old[old.length - 1 - tail], rows[rows.length - 1 - tail])) tail++;
+  return rows.map((row, index) => {
+    const fromEnd = rows.length - index;
+    const source = fromEnd <= tail ? old[old.length - fromEnd] : index < old.length - tail ? old[index] : undefined;
+    return source ? { ...source, row } : { body: el("tbody", { role: "rowgroup" }), row, spec: null };
+  });
+}
+
+function draw(view: RowView, shown: Shown): void {
+  const spec = rowSpec(view.row, shown);
+  const before = view.spec;
+  view.spec = spec;
+  if (view.body.dataset["kind"] !== spec.className) view.body.dataset["kind"] = spec.className;
+  while (view.body.rows.length > spec.rows.length) view.body.lastElementChild?.remove();
+  spec.rows.forEach((cells, index) => {
+    const line = view.body.rows[index] ?? view.body.appendChild(el("tr", { role: "row" }));
+    patch(line, before?.rows[index] ?? [], cells);
+  });
+}
+
+function patch(line: HTMLTableRowElement, before: readonly CellSpec[], cells: readonly CellSpec[]): void {
+  while (line.cells.length > cells.length) line.lastElementChild?.remove();
+  cells.forEach((spec, index) => {
+    const old = before[index];
+    const drawn = line.cells[index];
+    if (old && drawn && sameFrame(old, spec)) {
+      if (old.key !== spec.key) fill(drawn, spec.content());
+      return;
+    }
+    const made = make(spec);
+    if (drawn) drawn.replaceWith(made);
+    else line.append(made);
+  });
+}
+
+function sameFrame(a: CellSpec, b: CellSpec): boolean {
+  return a.tag === b.tag && a.className === b.className && a.columns === b.columns && a.rows === b.rows && a.caption === b.caption;
+}
+
+function make(spec: CellSpec): HTMLTableCellElement {
+  const role = spec.tag === "th" ? "rowheader" : "cell";
+  return el(spec.tag, {
+    class: spec.className,
+    role,
+    scope: spec.tag === "th" ? "row" : null,
+    colspan: spec.columns > 1 ? spec.columns : null,
+    rowspan: spec.rows > 1 ? spec.rows : null,
+    "data-caption": spec.caption || null,
+  }, spec.content());
+}

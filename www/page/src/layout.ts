@@ -1,0 +1,59 @@
+/** Where the parts of the page stand. */
+import { el, setText } from "./dom.js";
+import { words } from "./strings.js";
+
+export interface Acts {
+  newSheet(): void;
+  open(): void;
+  save(): void;
+  sheetText(): void;
+  print(): void;
+  stop(): void;
+}
+
+export interface Parts {
+  notices: HTMLElement;
+  titleBlock: HTMLElement;
+  selectors: HTMLElement;
+  form: HTMLElement;
+  governing: HTMLElement;
+  findings: HTMLElement;
+}
+
+export interface Controls {
+  element: HTMLElement;
+  /** What the sheet text takes the place of. */
+  formPlace: HTMLElement;
+  textMode(on: boolean): void;
+  busy(busy: boolean): void;
+}
+
+/** Puts the parts in their places. */
+export function frame(acts: Acts, parts: Parts): Controls {
+  const button = (text: string, act: () => void) => el("button", { type: "button", onclick: act }, text);
+  const sheetText = button(words.sheetText, () => acts.sheetText());
+  const working = el("span", { class: "working", role: "status", hidden: true }, words.working, " ", button(words.stop, () => acts.stop()));
+  const controls = el("nav", { class: "controls", "aria-label": "Sheet" },
+    button(words.newSheet, () => acts.newSheet()), button(words.open, () => acts.open()), button(words.save, () => acts.save()),
+    sheetText, button(words.print, () => acts.print()));
+  const masthead = el("header", { class: "masthead" }, el("h1", {}, words.program), working, controls);
+  const formPlace = el("div", { class: "form-place" }, parts.selectors, parts.form, keyList());
+  const element = el("div", { class: "paper" }, masthead, parts.notices,
+    el("main", {}, parts.titleBlock, formPlace, el("div", { class: "gathering" }, parts.governing, parts.findings)),
+    el("footer", {}, words.cautions.map((caution) => el("p", {}, caution))));
+  return {
+    element,
+    formPlace,
+    textMode(on) {
+      formPlace.hidden = on;
+      setText(sheetText, on ? words.form : words.sheetText);
+    },
+    busy(busy) {
+      working.hidden = !busy;
+    },
+  };
+}
+
+function keyList(): HTMLElement {
+  return el("p", { class: "keys" }, words.keys.map(([key, does]) => el("span", {}, el("kbd", {}, key), ` ${does}`)));
+}

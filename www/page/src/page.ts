@@ -1,0 +1,271 @@
+/** The page: its parts, and how a change of the sheet goes through them. */
+import { shownBy, type Choice, type Shown } from "./conditions.js";
+import { el, setText } from "./dom.js";
+import { loadHighlighter } from "./editing.js";
+import { Engine } from "./engine.js";
+import { acceptDrops, fileField, nameFor, read, save } from "./files.js";
+import { Findings } from "./findings.js";
+import { Form } from "./form.js";
+import { GoverningConditions } from "./governing.js";
+import { Selectors } from "./head.js";
+import { frame, type Controls } from "./layout.js";
+import { Notices } from "./notices.js";
+import type { Fix, Report } from "./report.js";
+import { RowDesk, tabbed } from "./row-desk.js";
+import { SheetText } from "./sheet-text.js";
+import { spoken } from "./speech.js";
+import { newId, Store, type Draft } from "./store.js";
+import { words } from "./strings.js";
+import { TitleBlock } from "./title-block.js";
+import { WholeText } from "./whole-text.js";
+
+/** How a sheet that is begun anew looks. */
+const FRESH_SHEET = "";
+
+export class Page {
+  #sheet: SheetText;
+  #draft: Draft;
+  #store: Store;
+  #engine: Engine;
+  #serial = 0;
+  #changedAt = 0;
+  #report: Report | null = null;
+  #choice: Choice = { at: {} };
+  #spokenLine: number | null = null;
+  #saved: string;
+  #notices = new Notices();
+  #controls: Controls;
+  #live = el("div", { class: "unseen", role: "status", "aria-live": "polite" });
+  #form: Form;
+  #desk: RowDesk;
+  #titleBlock: TitleBlock;
+  #selectors: Selectors;
+  #findings: Findings;
+  #governing = new GoverningConditions();
+  #whole: WholeText | null = null;
+
+  /** Starts with the last draft, or with `starting` where there is none. */
+  constructor(packedEngine: string, starting: string) {
+    this.#store = new Store({ trouble: (trouble) => this.#trouble(trouble), otherWindow: () => this.#notices.show("window", words.otherWindow) });
+    this.#draft = this.#store.last() ?? { id: newId(), name: null, text: starting };
+    this.#saved = this.#draft.text;
+    this.#sheet = new SheetText(this.#draft.text);
+    this.#engine = new Engine(packedEngine, {
+      report: (report, serial) => this.#received(report, serial),
+      failure: (message, serial) => this.#failed(message, serial),
+      busy: (busy) => this.#busy(busy),
+    });
+    this.#engine.module.then(loadHighlighter, () => {});
+    this.#titleBlock = new TitleBlock(this.#sheet);
+    this.#selectors = new Selectors(this.#choice, (choice) => this.#choose(choice));
+    this.#form = new Form({ open: (row, place) => this.#desk.open(row, place), key: (event) => this.#desk.key(event) });
+    this.#desk = new RowDesk(this.#form, this.#sheet, {
+      taken: (line) => this.#speakNext(line),
+      fix: (fix) => this.#fix(fix),
+      say: (text) => this.#say(text),
+    });
+    this.#findings = new Findings({ fix: (fix) => this.#fix(fix), goTo: (line) => this.#goTo(line) });
+    this.#controls = this.#layOut();
+    this.#listen();
+    this.#changed();
+  }
+
+  #layOut(): Controls {
+    const field = fileField((file) => void this.#openFile(file));
+    const made = frame({
+      newSheet: () => this.#begin({ id: newId(), name: null, text: FRESH_SHEET }),
+      open: () => field.click(),
+      save: () => void this.#save(),
+      sheetText: () => this.#switch(),
+      print: () => window.print(),
+      stop: () => this.#engine.stop(),
+    }, {
+      notices: this.#notices.element, titleBlock: this.#titleBlock.element, selectors: this.#selectors.element,
+      form: this.#form.table, governing: this.#governing.element, findings: this.#findings.element,
+    });
+    document.body.append(made.element, field, this.#live);
+    return made;
+  }
+
+  #listen(): void {
+    this.#sheet.onChange(() => this.#changed());
+    acceptDrops((file) => void this.#openFile(file));
+    document.addEventListener("keydown", (event) => this.#key(event));
+    for (const kind of ["copy", "cut", "paste"] as const) document.addEventListener(kind, (event) => this.#clipboard(event));
+    window.addEventListener("beforeunload", (event) => {
+      if (!this.#store.works && this.#sheet.text !== this.#saved) event.preventDefault();
+    });
+  }
+
+  /** Every change of the text comes through here: it is kept, and worked out. */
+  #changed(): void {
+    this.#changedAt = performance.now();
+    this.#draft.text = this.#sheet.text;
+    this.#store.keep(this.#draft);
+    this.#engine.evaluate(++this.#serial, this.#sheet.text);
+  }
+
+  #received(report: Report, serial: number): void {
+    this.#notices.clear("engine");
+    // A report of an older text would put rows at lines that have moved; the newer one is on its way.
+    if (serial !== this.#serial) return;
+    this.#report = report;
+    this.#draw();
+    performance.measure("key to values", { start: this.#changedAt });
+    document.documentElement.dataset["ready"] = String(serial);
+  }
+
+  #draw(): void {
+    if (!this.#report) return;
+    const shown = shownBy(this.#report, this.#choice);
+    this.#titleBlock.show(this.#report, this.#sheet.text);
+    this.#selectors.show(shown);
+    this.#form.show(this.#report.form.rows.filter(({ kind }) => kind !== "title"), shown);
+    this.#desk.show(this.#report);
+    this.#governing.show(shown);
+    this.#findings.show(this.#report);
+    this.#whole?.show(this.#report);
+    this.#speak(shown);
+  }
+
+  #choose(choice: Choice): void {
+    this.#choice = choice;
+    this.#draw();
+  }
+
+  #failed(message: string, serial: number): void {
+    const text = serial === 0 ? `${words.engineStarts}: ${message}` : words.engineBroke(message);
+    this.#notices.show("engine", text);
+  }
+
+  #busy(busy: boolean): void {
+    this.#controls.busy(busy);
+  }
+
+  #trouble(trouble: "refused" | null): void {
+    if (trouble) this.#notices.show("store", words.notKept, [{ text: words.save, act: () => void this.#save() }]);
+    else this.#notices.clear("store");
+  }
+
+  #fix(fix: Fix): void {
+    this.#desk.close();
+    this.#sheet.apply(fix.edits);
+    this.#whole?.follow();
+    const line = fix.edits[0]?.line;
+    if (line === undefined || this.#whole) return;
+    this.#form.choose(this.#form.positionAt(line));
+    this.#speakNext(line);
+  }
+
+  #goTo(line: number): void {
+    if (this.#whole) this.#whole.goTo(line);
+    else this.#desk.openLine(line);
+  }
+
+  #speakNext(line: number): void {
+    this.#spokenLine = line;
+    if (this.#report && document.documentElement.dataset["ready"] === String(this.#serial)) this.#speak(shownBy(this.#report, this.#choice));
+  }
+
+  #speak(shown: Shown): void {
+    const line = this.#spokenLine;
+    this.#spokenLine = null;
+    const row = line === null ? undefined : shown.report.form.rows.find((each) => line >= each.line && line < each.line + each.lines);
+    if (row) this.#say(spoken(row, shown));
+  }
+
+  #say(text: string): void {
+    setText(this.#live, text);
+  }
+
+  /** Another sheet; the one before stays in the store. */
+  #begin(draft: Draft): void {
+    const before = this.#draft;
+    this.#desk.close();
+    this.#store.flush();
+    this.#draft = draft;
+    this.#saved = draft.text;
+    this.#choice = { at: {} };
+    this.#sheet.reset(draft.text);
+    this.#whole?.follow();
+    if (before.text.trim() === "" || before.text === draft.text || !this.#store.works) return;
+    const name = before.name ?? words.untitled;
+    this.#notices.show("before", words.replaced(name), [{ text: words.backToIt, act: () => this.#back(before) }]);
+  }
+
+  #back(before: Draft): void {
+    this.#begin(this.#store.read(before.id) ?? before);
+  }
+
+  async #openFile(file: File): Promise<void> {
+    const opened = await read(file);
+    if ("refused" in opened) {
+      this.#notices.show("file", (opened.refused === "too long" ? words.tooLong : words.notText)(opened.name));
+      return;
+    }
+    this.#begin({ id: newId(), name: opened.name, text: opened.text });
+  }
+
+  async #save(): Promise<void> {
+    const text = this.#sheet.text;
+    const title = this.#report?.form.rows.find(({ word }) => word === "title")?.how ?? "";
+    const name = await save(text, this.#draft.name ?? nameFor(title));
+    if (name === null) return;
+    this.#saved = text;
+    this.#draft.name = name;
+    this.#store.keep(this.#draft);
+    this.#say(words.saved(name));
+  }
+
+  #switch(): void {
+    if (this.#whole) {
+      this.#whole.element.remove();
+      this.#whole = null;
+    } else {
+      this.#desk.close();
+      this.#whole = new WholeText(this.#sheet);
+      this.#controls.formPlace.before(this.#whole.element);
+      if (this.#report) this.#whole.show(this.#report);
+    }
+    this.#controls.textMode(this.#whole !== null);
+  }
+
+  #key(event: KeyboardEvent): void {
+    const control = event.ctrlKey || event.metaKey;
+    if (!control || event.defaultPrevented) return;
+    const key = event.key.toLowerCase();
+    const act = key === "s" ? () => void this.#save() : this.#typing(event.target) ? null : this.#stepFor(key, event.shiftKey);
+    if (!act) return;
+    event.preventDefault();
+    act();
+  }
+
+  #stepFor(key: string, shift: boolean): (() => void) | null {
+    if (key === "z") return () => (shift ? this.#desk.redo() : this.#desk.undo());
+    if (key === "y") return () => this.#desk.redo();
+    if (key === "c" && shift) return () => this.#copyValues();
+    return null;
+  }
+
+  /** Fields and editors have their own undo and clipboard. */
+  #typing(target: EventTarget | null): boolean {
+    return target instanceof Element && target.closest(".cm-editor, input, select") !== null;
+  }
+
+  #copyValues(): void {
+    void navigator.clipboard?.writeText(tabbed(this.#form.chosenRows)).then(() => this.#say(words.valuesCopied), () => {});
+  }
+
+  #clipboard(event: ClipboardEvent): void {
+    const onRow = event.target instanceof Element && event.target.closest("table.form") !== null;
+    const marked = document.getSelection()?.isCollapsed === false;
+    if (!onRow || marked || this.#typing(event.target) || !event.clipboardData) return;
+    event.preventDefault();
+    if (event.type === "paste") {
+      this.#desk.paste(event.clipboardData.getData("text/plain"));
+      return;
+    }
+    event.clipboardData.setData("text/plain", this.#desk.copied());
+    if (event.type === "cut") this.#desk.remove();
+  }
+}

@@ -1,0 +1,109 @@
+/** The draft in the browser's store. Saved files are the truth; the draft brings back what was not saved yet. */
+
+/** A sheet as the store keeps it. */
+export interface Draft {
+  id: string;
+  /** Its file name, where it came from or went to a file. */
+  name: string | null;
+  text: string;
+}
+
+export interface StoreEvents {
+  /** The store refused; null where it works again. */
+  trouble(trouble: "refused" | null): void;
+  /** Another window wrote the same sheet. */
+  otherWindow(): void;
+}
+
+// All local files share one store in some browsers, so every key carries the program's name and the sheet's.
+const PREFIX = "pitchwright:";
+const LAST = `${PREFIX}last`;
+const keyOf = (id: string) => `${PREFIX}sheet:${id}`;
+
+/** Longer texts are not written with every key. */
+const AT_ONCE_MOST = 100_000;
+const LATER_MS = 400;
+
+export class Store {
+  #events: StoreEvents;
+  #waiting: Draft | null = null;
+  #timer = 0;
+  #refused = false;
+  #current = "";
+
+  constructor(events: StoreEvents) {
+    this.#events = events;
+    window.addEventListener("pagehide", () => this.flush());
+    document.addEventListener("visibilitychange", () => this.flush());
+    window.addEventListener("storage", (event) => {
+      if (event.key === keyOf(this.#current) && event.newValue !== null) this.#events.otherWindow();
+    });
+  }
+
+  /** Whether drafts are kept. */
+  get works(): boolean {
+    return !this.#refused;
+  }
+
+  /** The sheet that this window, or else the last one, had open. */
+  last(): Draft | null {
+    const id = this.#try(() => sessionStorage.getItem(LAST)) ?? this.#try(() => localStorage.getItem(LAST));
+    return id ? this.read(id) : null;
+  }
+
+  /** The sheet kept as `id`. */
+  read(id: string): Draft | null {
+    const kept = this.#try(() => localStorage.getItem(keyOf(id)));
+    if (!kept) return null;
+    try {
+      const { name, text } = JSON.parse(kept) as { name: unknown; text: unknown };
+      return typeof text === "string" ? { id, text, name: typeof name === "string" ? name : null } : null;
+    } catch {
+      return null;
+    }
+  }
+
+  /** Keeps `draft` as this window's sheet. */
+  keep(draft: Draft): void {
+    this.#current = draft.id;
+    this.#waiting = draft;
+    window.clearTimeout(this.#timer);
+    if (draft.text.length <= AT_ONCE_MOST) this.flush();
+    else this.#timer = window.setTimeout(() => this.flush(), LATER_MS);
+  }
+
+  /** Writes what still waits to be written. */
+  flush(): void {
+    const draft = this.#waiting;
+    if (!draft) return;
+    this.#waiting = null;
+    try {
+      localStorage.setItem(keyOf(draft.id), JSON.stringify({ name: draft.name, text: draft.text }));
+      localStorage.setItem(LAST, draft.id);
+      sessionStorage.setItem(LAST, draft.id);
+      this.#tell(false);
+    } catch {
+      this.#tell(true);
+    }
+  }
+
+  #tell(refused: boolean): void {
+    if (refused === this.#refused) return;
+    this.#refused = refused;
+    this.#events.trouble(refused ? "refused" : null);
+  }
+
+  /** A store that is closed to the page throws already when it is read. */
+  #try<T>(read: () => T): T | null {
+    try {
+      return read();
+    } catch {
+      return null;
+    }
+  }
+}
+
+/** A name for a new sheet in the store. */
+export function newId(): string {
+  return crypto.randomUUID();
+}
