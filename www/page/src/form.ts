@@ -44,6 +44,7 @@ export class Form {
   #editor: OpenEditor | null = null;
   #current = 0;
   #anchor = 0;
+  #width = 1;
 
   constructor(events: FormEvents) {
     const add = el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": words.newRow }, "+");
@@ -62,6 +63,11 @@ export class Form {
     return this.#views.map(({ row }) => row);
   }
 
+  /** How many columns lie between item and the form's right edge. */
+  get columns(): number {
+    return this.#width + 4;
+  }
+
   /** The chosen rows: first and last position; the empty row at the foot is behind the last. */
   get chosen(): { from: number; to: number } {
     return { from: Math.min(this.#current, this.#anchor), to: Math.max(this.#current, this.#anchor) };
@@ -74,14 +80,19 @@ export class Form {
 
   /** Draws `rows` under the conditions shown. Only what differs is touched; an open editor stays where it is. */
   show(rows: readonly FormRow[], shown: Shown): void {
+    const focused = document.activeElement !== null && document.activeElement === this.#button(this.#current);
     drawHead(this.#head, this.#columns, shown);
     const width = shown.across?.labels.length ?? 1;
-    this.table.style.setProperty("--value-columns", String(width));
+    this.#width = width;
+    // The paper has to be as wide as its form, which the form's style alone could not tell it.
+    document.documentElement.style.setProperty("--value-columns", String(width));
     this.table.lastElementChild?.querySelector("td")?.setAttribute("colspan", String(width + 4));
     this.#views = aligned(this.#views, rows);
     for (const view of this.#views) draw(view, shown);
     this.#arrange();
     this.#mark();
+    // A new item number comes with a new button.
+    if (focused) this.#button(this.#current)?.focus({ preventScroll: true });
   }
 
   /** Shows an editor at its line, or none. */
@@ -174,7 +185,8 @@ export class Form {
   }
 
   #inEditor(target: EventTarget | null): boolean {
-    return target instanceof Node && (this.#editor?.body.contains(target) ?? false);
+    // An editor that this very event closed is no longer in the table, so the editor's own frame counts too.
+    return target instanceof Element && target.closest("tbody.editor, .cm-editor") !== null;
   }
 
   #focused(event: FocusEvent): void {

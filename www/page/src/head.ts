@@ -87,5 +87,5 @@ export class Selectors {
 function field(id: string, caption: string, options: [string, string][], chosen: string, change: (value: string) => void): HTMLElement {
   const select = el("select", { id: `choose-${id}`, onchange: (event: Event) => change((event.target as HTMLSelectElement).value) },
     options.map(([value, text]) => el("option", { value, selected: value === chosen }, text)));
-  return el("label", {}, el("span", { class: "caption" }, caption), select);
+  return el("div", {}, el("label", { class: "caption", for: select.id }, caption), select);
 }

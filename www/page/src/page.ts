@@ -73,7 +73,7 @@ export class Page {
   #layOut(): Controls {
     const field = fileField((file) => void this.#openFile(file));
     const made = frame({
-      newSheet: () => this.#begin({ id: newId(), name: null, text: FRESH_SHEET }),
+      newSheet: () => this.#beginFresh(),
       open: () => field.click(),
       save: () => void this.#save(),
       sheetText: () => this.#switch(),
@@ -103,6 +103,7 @@ export class Page {
     this.#draft.text = this.#sheet.text;
     this.#store.keep(this.#draft);
     this.#engine.evaluate(++this.#serial, this.#sheet.text);
+    document.documentElement.dataset["asked"] = String(this.#serial);
   }
 
   #received(report: Report, serial: number): void {
@@ -111,6 +112,8 @@ export class Page {
     if (serial !== this.#serial) return;
     this.#report = report;
     this.#draw();
+    if (performance.getEntriesByName("first values").length === 0) performance.mark("first values");
+    performance.clearMeasures("key to values");
     performance.measure("key to values", { start: this.#changedAt });
     document.documentElement.dataset["ready"] = String(serial);
   }
@@ -191,6 +194,12 @@ export class Page {
     if (before.text.trim() === "" || before.text === draft.text || !this.#store.works) return;
     const name = before.name ?? words.untitled;
     this.#notices.show("before", words.replaced(name), [{ text: words.backToIt, act: () => this.#back(before) }]);
+  }
+
+  #beginFresh(): void {
+    this.#begin({ id: newId(), name: null, text: FRESH_SHEET });
+    if (this.#whole) this.#whole.goTo(1);
+    else this.#desk.openFresh(1);
   }
 
   #back(before: Draft): void {

@@ -102,8 +102,7 @@ export class RowDesk {
 
   #openAt(line: number, count: number, label: string, place: Place): void {
     this.close();
-    const columns = this.#columns();
-    const editor: RowEditor = new RowEditor(this.#sheet, line, count, columns, label, {
+    const editor: RowEditor = new RowEditor(this.#sheet, line, count, this.#form.columns, label, {
       changed: (at, removed, inserted) => this.#form.shift(at, removed, inserted),
       taken: (next) => this.#taken(editor, next),
       givenBack: () => this.#closeAt(editor, editor.line),
@@ -118,17 +117,13 @@ export class RowDesk {
     editor.focus(place);
   }
 
-  #columns(): number {
-    return Number(this.#form.table.style.getPropertyValue("--value-columns") || 1) + 4;
-  }
-
   #closeAt(editor: RowEditor, line: number): void {
     if (this.#editor !== editor) return;
     this.close();
     this.#form.choose(this.#form.positionAt(line));
   }
 
-  /** Fresh rows follow each other until one is left empty; other rows lead to the one that follows. */
+  /** Fresh rows follow each other, empty ones too, until Escape; other rows lead to the one that follows. */
   #taken(editor: RowEditor, next: Next): void {
     if (this.#editor !== editor) return;
     const { line, count, fresh } = editor;
@@ -136,7 +131,9 @@ export class RowDesk {
     if (next === "stay") {
       this.close();
     } else if (count === 0) {
-      this.#closeAt(editor, line);
+      this.#sheet.replaceLines(line, 0, [""]);
+      this.#form.shift(line, 0, 1);
+      this.openFresh(line + 1);
     } else if (next === "beneath" || fresh || behind > this.#sheet.lines.length) {
       this.openFresh(behind);
     } else {

@@ -90,14 +90,14 @@ function valueContent({ text, ring, where }: ValueCell): Child[] {
   const figure = ring
     ? el("span", { class: `ring ${ring}` }, text, el("span", { class: "unseen" }, ` (${words[ring]})`))
     : text;
-  return [figure, where && el("span", { class: "where" }, where)];
+  return [figure, where && where !== text && el("span", { class: "where" }, where)];
 }
 
 /** The item number, which opens the row. */
 function itemCell(row: FormRow): CellSpec {
   const number = row.item === null ? "" : String(row.item);
   return cell("item", `${number} ${nameOf(row)}`, () => [
-    el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": nameOf(row) }, number || "\u00b7"),
+    el("button", { type: "button", class: number ? "opens" : "opens unnumbered", tabindex: -1, "aria-label": nameOf(row) }, number || "\u00b7"),
   ], { tag: "th" });
 }
 

@@ -75,7 +75,10 @@ export class TitleBlock {
       if (refocus) box.querySelector("button")?.focus();
     };
     input.addEventListener("keydown", (event) => {
-      if (event.key === "Enter" || event.key === "Escape") finish(event.key === "Enter", true);
+      if (event.key !== "Enter" && event.key !== "Escape") return;
+      // The same key would press the button that takes the field's place.
+      event.preventDefault();
+      finish(event.key === "Enter", true);
     });
     input.addEventListener("blur", () => finish(true, false));
     fill(box, el("span", { class: "caption" }, caption), input);
