@@ -1,5 +1,5 @@
 /** Which conditions the form shows: one axis across, the others each at a label or all where one quantity governs. */
-import { digitsOf, type Axis, type Condition, type Extreme, type Governing, type Report } from "./report.js";
+import { digitsOf, type Axis, type Condition, type Extreme, type Finding, type Governing, type Quantity, type Report } from "./report.js";
 
 /** What the person chose; what is left open is chosen by `shownBy`. */
 export interface Choice {
@@ -19,6 +19,16 @@ export interface Shown {
   governedBy: string | null;
   /** A label for each axis; the across axis has the governing one here, if it has one. */
   at: Condition;
+  /** The report's quantities by their symbols. */
+  quantities: ReadonlyMap<string, Quantity>;
+  /** The report's findings by their lines. */
+  findings: ReadonlyMap<number, NumberedFinding[]>;
+}
+
+/** A finding with its number in the whole list. */
+export interface NumberedFinding {
+  number: number;
+  finding: Finding;
 }
 
 /** More labels than this make an axis too wide to run across unasked. */
@@ -34,7 +44,26 @@ export function shownBy(report: Report, choice: Choice): Shown {
     const label = condition[name] ?? choice.at[name];
     at[name] = label !== undefined && labels.includes(label) ? label : (labels[0] ?? "");
   }
-  return { report, digits: digitsOf(report), across: acrossAxis(report, choice), governedBy, at };
+  const quantities = new Map(report.quantities.map((quantity) => [quantity.symbol, quantity]));
+  const findings = byLine(report.findings);
+  return { report, digits: digitsOf(report), across: acrossAxis(report, choice), governedBy, at, quantities, findings };
+}
+
+/** The findings of `lines` lines from `line`. */
+export function findingsAt(shown: Shown, line: number, lines: number): NumberedFinding[] {
+  if (shown.findings.size === 0) return [];
+  return Array.from({ length: lines }, (_, index) => shown.findings.get(line + index) ?? []).flat();
+}
+
+function byLine(findings: readonly Finding[]): Map<number, NumberedFinding[]> {
+  const lines = new Map<number, NumberedFinding[]>();
+  findings.forEach((finding, index) => {
+    const entry = { number: index + 1, finding };
+    const others = lines.get(finding.line);
+    if (others) others.push(entry);
+    else lines.set(finding.line, [entry]);
+  });
+  return lines;
 }
 
 /** The extreme of larger magnitude, which is the one that governs. */

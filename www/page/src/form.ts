@@ -44,7 +44,7 @@ export class Form {
   #editor: OpenEditor | null = null;
   #current = 0;
   #anchor = 0;
-  #width = 1;
+  #width = 0;
 
   constructor(events: FormEvents) {
     const add = el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": words.newRow }, "+");
@@ -82,11 +82,7 @@ export class Form {
   show(rows: readonly FormRow[], shown: Shown): void {
     const focused = document.activeElement !== null && document.activeElement === this.#button(this.#current);
     drawHead(this.#head, this.#columns, shown);
-    const width = shown.across?.labels.length ?? 1;
-    this.#width = width;
-    // The paper has to be as wide as its form, which the form's style alone could not tell it.
-    document.documentElement.style.setProperty("--value-columns", String(width));
-    this.table.lastElementChild?.querySelector("td")?.setAttribute("colspan", String(width + 4));
+    this.#widen(shown.across?.labels.length ?? 1);
     this.#views = aligned(this.#views, rows);
     for (const view of this.#views) draw(view, shown);
     this.#arrange();
@@ -149,6 +145,14 @@ export class Form {
     return this.#views.slice(from, to + 1).flatMap(({ body }) => Array.from(body.rows));
   }
 
+  /** The paper has to be as wide as its form, which the form's style alone could not tell it. */
+  #widen(width: number): void {
+    if (width === this.#width) return;
+    this.#width = width;
+    document.documentElement.style.setProperty("--value-columns", String(width));
+    this.#foot.querySelector("td")?.setAttribute("colspan", String(this.columns));
+  }
+
   #bodyAt(position: number): HTMLTableSectionElement {
     return this.#views[position]?.body ?? this.#foot;
   }
@@ -161,8 +165,12 @@ export class Form {
     const { from, to } = this.chosen;
     this.#current = Math.min(this.#current, this.#views.length);
     for (let position = 0; position <= this.#views.length; position++) {
-      this.#bodyAt(position).classList.toggle("chosen", from < to && position >= from && position <= to);
-      this.#button(position)?.setAttribute("tabindex", position === this.#current ? "0" : "-1");
+      const chosen = from < to && position >= from && position <= to;
+      const body = this.#bodyAt(position);
+      if (body.classList.contains("chosen") !== chosen) body.classList.toggle("chosen", chosen);
+      const button = body.querySelector<HTMLButtonElement>("button.opens");
+      const index = position === this.#current ? 0 : -1;
+      if (button && button.tabIndex !== index) button.tabIndex = index;
     }
   }
 
@@ -176,8 +184,9 @@ export class Form {
         bodies.push(editor.body);
         placed = true;
       }
-      body.classList.toggle("open", covered);
-      body.hidden = covered && TEXT_ONLY.has(row.kind);
+      if (body.classList.contains("open") !== covered) body.classList.toggle("open", covered);
+      const hidden = covered && TEXT_ONLY.has(row.kind);
+      if (body.hidden !== hidden) body.hidden = hidden;
       bodies.push(body);
     }
     if (editor && !placed) bodies.push(editor.body);

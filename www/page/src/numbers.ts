@@ -1,25 +1,27 @@
 /** How numbers are shown: significant figures with trailing zeros, decimal points whatever the locale. */
 
-const EXPONENT_FROM = 1e7;
-const EXPONENT_BELOW = 1e-4;
+const EXPONENT_FROM = 7;
+const EXPONENT_BELOW = -4;
 
 /** `value` with `digits` significant figures; in exponent form from 10^7 and below 10^-4. Ties go away from zero. */
 export function format(value: number, digits: number): string {
   if (value === 0) return "0";
-  const rounded = Math.abs(Number(value.toPrecision(digits)));
-  if (rounded >= EXPONENT_FROM || rounded < EXPONENT_BELOW) return value.toExponential(digits - 1).replace("e+", "e");
-  const before = Math.floor(Math.log10(rounded)) + 1;
-  // A whole number longer than the figures asked for keeps its zeros in front of the point.
-  if (before >= digits) return Number(value.toPrecision(digits)).toFixed(0);
-  return withoutExponent(value, digits);
+  // The standard rounds the exact value here, ties to the larger magnitude.
+  const [mantissa = "", power = "0"] = Math.abs(value).toExponential(digits - 1).split("e");
+  const sign = value < 0 ? "-" : "";
+  return sign + placed(mantissa.replace(".", ""), Number(power));
 }
 
-function withoutExponent(value: number, digits: number): string {
-  const text = value.toPrecision(digits);
-  if (!text.includes("e")) return text;
-  const [mantissa = "", exponent = "0"] = text.split("e");
-  const decimals = Math.max(0, (mantissa.split(".")[1]?.length ?? 0) - Number(exponent));
-  return Number(text).toFixed(decimals);
+/** The figures with point, zeros and exponent. */
+function placed(figures: string, power: number): string {
+  if (power >= EXPONENT_FROM || power < EXPONENT_BELOW) return `${pointed(figures, 1)}e${power}`;
+  return power < 0 ? `0.${"0".repeat(-power - 1)}${figures}` : pointed(figures, power + 1);
+}
+
+/** The figures with so many of them before the point, zeros filled in. */
+function pointed(figures: string, whole: number): string {
+  const padded = figures.padEnd(whole, "0");
+  return padded.length === whole ? padded : `${padded.slice(0, whole)}.${padded.slice(whole)}`;
 }
 
 /** The same with a true minus sign, for the eye. */
@@ -37,7 +39,7 @@ export function typed(text: string): string {
   return text.replaceAll("\u2212", "-");
 }
 
-/** A count with blanks between thousands. */
+/** A count with narrow blanks between thousands. */
 export function count(value: number): string {
   return String(value).replace(/\B(?=(\d{3})+$)/g, "\u202f");
 }

@@ -10,6 +10,7 @@ import { GoverningConditions } from "./governing.js";
 import { Selectors } from "./head.js";
 import { frame, type Controls } from "./layout.js";
 import { Notices } from "./notices.js";
+import { preparePrint } from "./print.js";
 import type { Fix, Report } from "./report.js";
 import { RowDesk, tabbed } from "./row-desk.js";
 import { SheetText } from "./sheet-text.js";
@@ -92,6 +93,9 @@ export class Page {
     acceptDrops((file) => void this.#openFile(file));
     document.addEventListener("keydown", (event) => this.#key(event));
     for (const kind of ["copy", "cut", "paste"] as const) document.addEventListener(kind, (event) => this.#clipboard(event));
+    window.addEventListener("beforeprint", () => {
+      if (this.#report) preparePrint(this.#report);
+    });
     window.addEventListener("beforeunload", (event) => {
       if (!this.#store.works && this.#sheet.text !== this.#saved) event.preventDefault();
     });
@@ -121,10 +125,10 @@ export class Page {
   #draw(): void {
     if (!this.#report) return;
     const shown = shownBy(this.#report, this.#choice);
-    this.#titleBlock.show(this.#report, this.#sheet.text);
+    this.#titleBlock.show(shown, this.#sheet.text);
     this.#selectors.show(shown);
     this.#form.show(this.#report.form.rows.filter(({ kind }) => kind !== "title"), shown);
-    this.#desk.show(this.#report);
+    this.#desk.show(shown);
     this.#governing.show(shown);
     this.#findings.show(this.#report);
     this.#whole?.show(this.#report);

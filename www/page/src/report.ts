@@ -113,9 +113,15 @@ export type RowKind =
   | "title" | "part" | "sub" | "note" | "prose" | "aside" | "blank" | "definition" | "function" | "vary" | "table"
   | "unknown" | "governing" | "require" | "freebody" | "figure" | "use" | "unreadable";
 
+/** Head of a table's key or column. */
+export interface FormHead {
+  symbol: string;
+  unit: string | null;
+}
+
 export interface FormTable {
-  keys: string[];
-  columns: { symbol: string; unit: string | null }[];
+  keys: FormHead[];
+  columns: FormHead[];
   rows: { line: number; cells: string[]; remark: string | null }[];
 }
 
@@ -155,11 +161,6 @@ export function digitsOf(report: Report): number {
   return Number.isInteger(digits) && digits >= 1 && digits <= 15 ? digits : 4;
 }
 
-/** The findings of lines `from` to before `to`, each with its number in the whole list. */
-export function findingsAt(report: Report, from: number, to: number): { number: number; finding: Finding }[] {
-  const numbered = report.findings.map((finding, index) => ({ number: index + 1, finding }));
-  return numbered.filter(({ finding }) => finding.line >= from && finding.line < to);
-}
 
 /** The entries for `symbol`. */
 export function findAll<T extends { symbol: string }>(entries: readonly T[], symbol: string): T[] {

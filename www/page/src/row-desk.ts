@@ -1,7 +1,8 @@
 /** Working on rows: opening and taking them, adding, moving, deleting, cutting and pasting, by key and by click. */
+import type { Shown } from "./conditions.js";
 import type { Form, Place } from "./form.js";
 import { typed } from "./numbers.js";
-import type { Fix, FormRow, Report } from "./report.js";
+import type { Fix, FormRow } from "./report.js";
 import { RowEditor, type Next } from "./row-editor.js";
 import { nameOf } from "./rows.js";
 import { linesOf, normalised, type SheetText } from "./sheet-text.js";
@@ -26,9 +27,9 @@ export class RowDesk {
     this.#events = events;
   }
 
-  /** Shows the report in the open row. */
-  show(report: Report): void {
-    this.#editor?.show(report);
+  /** Shows the findings in the open row. */
+  show(shown: Shown): void {
+    this.#editor?.show(shown);
   }
 
   /** Opens `row` at `place`; without a row, a fresh one at the foot. */

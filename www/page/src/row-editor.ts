@@ -2,11 +2,12 @@
 import { standardKeymap } from "@codemirror/commands";
 import { EditorState, type Extension } from "@codemirror/state";
 import { EditorView, keymap, type KeyBinding } from "@codemirror/view";
+import { findingsAt, type Shown } from "./conditions.js";
 import { el, fill } from "./dom.js";
 import { foundation, underline } from "./editing.js";
 import { fixButtons } from "./findings.js";
 import type { Place } from "./form.js";
-import { findingsAt, type Fix, type Report } from "./report.js";
+import type { Fix } from "./report.js";
 import { difference, type SheetText } from "./sheet-text.js";
 import { words } from "./strings.js";
 
@@ -65,10 +66,9 @@ export class RowEditor {
   }
 
   /** Shows the findings of the open lines, with their fixes. */
-  show(report: Report): void {
+  show(shown: Shown): void {
     if (this.#closed) return;
-    const found = findingsAt(report, this.line, this.line + Math.max(1, this.count));
-    const notes = this.count > 0 ? found : [];
+    const notes = findingsAt(shown, this.line, this.count);
     underline(this.#view, notes.map(({ finding }) => finding), this.line);
     fill(this.#notes, notes.map(({ number, finding }) => el("p", { class: `finding ${finding.severity}` },
       el("b", {}, `${number} `), finding.message, fixButtons(finding, (fix) => this.#events.fix(fix)))));

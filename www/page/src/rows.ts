@@ -1,8 +1,8 @@
 /** What each statement looks like in the form: its table rows, cell by cell, as data. */
 import { cell, howCell, symbolCell, unitCell, valueColumns, type CellSpec } from "./cells.js";
-import type { Shown } from "./conditions.js";
+import { findingsAt, type Shown } from "./conditions.js";
 import { el, type Child } from "./dom.js";
-import { findingsAt, type FormRow, type Quantity } from "./report.js";
+import type { FormRow, Quantity } from "./report.js";
 import { resultCells } from "./results.js";
 import { words } from "./strings.js";
 import { acrossTable, ownTable } from "./tables.js";
@@ -64,7 +64,7 @@ function withCells(row: FormRow, rows: CellSpec[][], marks: Marks): RowSpec {
 }
 
 function tableSpec(row: FormRow, shown: Shown, marks: Marks): RowSpec {
-  const rows = row.table && shown.across && row.table.keys.length === 1 && row.table.keys[0] === shown.across.name
+  const rows = row.table && shown.across && row.table.keys.length === 1 && row.table.keys[0]?.symbol === shown.across.name
     ? acrossTable(row, row.table, shown)
     : [[ownTable(row, valueColumns(shown))]];
   return withCells(row, rows, marks);
@@ -72,7 +72,7 @@ function tableSpec(row: FormRow, shown: Shown, marks: Marks): RowSpec {
 
 /** The quantities that `row` gives, in its order. */
 export function quantitiesOf(row: FormRow, shown: Shown): Quantity[] {
-  return row.quantities.flatMap((symbol) => shown.report.quantities.find((each) => each.symbol === symbol) ?? []);
+  return row.quantities.flatMap((symbol) => shown.quantities.get(symbol) ?? []);
 }
 
 /** The cells of values, each under its label. */
@@ -139,7 +139,7 @@ interface Marks {
 
 /** The numbered marks of the findings that lie in `row`. */
 function marksOf(row: FormRow, shown: Shown): Marks {
-  const found = findingsAt(shown.report, row.line, row.line + row.lines);
+  const found = findingsAt(shown, row.line, row.lines);
   const key = found.map(({ number, finding }) => `${number}${finding.severity}`).join();
   return { key, content: () => found.map(({ number, finding }) => queryMark(number, finding.severity)) };
 }

@@ -1,16 +1,15 @@
 /** What is spoken of a row once it is taken: its value and its findings. */
-import { conditionText, governs, type Shown } from "./conditions.js";
-import { findingsAt, type FormRow } from "./report.js";
+import { conditionText, findingsAt, governs, type Shown } from "./conditions.js";
 import { nameOf, quantitiesOf } from "./rows.js";
 import { words } from "./strings.js";
 import { count } from "./numbers.js";
 import { extremeText, valueCells } from "./values.js";
-import type { Quantity } from "./report.js";
+import type { FormRow, Quantity } from "./report.js";
 
 /** The row in words. */
 export function spoken(row: FormRow, shown: Shown): string {
   const values = quantitiesOf(row, shown).map((quantity) => valueInWords(quantity, shown));
-  const found = findingsAt(shown.report, row.line, row.line + row.lines);
+  const found = findingsAt(shown, row.line, row.lines);
   const queries = found.map(({ number, finding }) => `${words.finding(number)}, ${words.severity[finding.severity]}: ${finding.message}`);
   return [nameOf(row), ...values, ...(queries.length > 0 ? queries : [words.noFindings])].join(". ");
 }

@@ -2,7 +2,7 @@
 import { cell, symbolCell, unitCell, type CellSpec } from "./cells.js";
 import type { Shown } from "./conditions.js";
 import { el } from "./dom.js";
-import type { FormRow, FormTable } from "./report.js";
+import type { FormHead, FormRow, FormTable } from "./report.js";
 import { words } from "./strings.js";
 import { signed } from "./numbers.js";
 
@@ -14,14 +14,14 @@ export function acrossTable(row: FormRow, table: FormTable, shown: Shown): CellS
   const rowAt = (index: number) => byLabel.get(labels[index] ?? "") ?? table.rows[index];
   return table.columns.map(({ symbol, unit }, column) => [
     symbolCell(symbol),
-    unitCell(unit ?? shown.report.quantities.find((each) => each.symbol === symbol)?.unit ?? null),
+    unitCell(unit ?? shown.quantities.get(symbol)?.unit ?? null),
     ...(column === 0 ? [headCell(row, table.columns.length)] : []),
     ...labels.map((label, index) => typedCell(rowAt(index)?.cells[column + table.keys.length] ?? "", label)),
   ]);
 }
 
 function headCell(row: FormRow, rows: number): CellSpec {
-  const text = `table by ${row.table?.keys.join(", ") ?? ""}`;
+  const text = row.table ? tableName(row.table) : "";
   return cell("how", text, () => [text], { rows });
 }
 
@@ -38,16 +38,20 @@ export function ownTable(row: FormRow, valueColumns: number): CellSpec {
 
 function drawn(table: FormTable): HTMLTableElement {
   const remarks = table.rows.some(({ remark }) => remark);
+  const head = ({ symbol, unit }: FormHead, className: string) =>
+    el("th", { scope: "col", class: className }, symbol, unit !== null && el("span", { class: "where" }, unit));
   const heads = [
-    ...table.keys.map((key) => el("th", { scope: "col", class: "key" }, key)),
-    ...table.columns.map(({ symbol, unit }) =>
-      el("th", { scope: "col" }, symbol, unit !== null && el("span", { class: "where" }, unit))),
+    ...table.keys.map((key) => head(key, "key")),
+    ...table.columns.map((column) => head(column, "")),
     remarks && el("th", { scope: "col" }, words.remark),
   ];
   const body = table.rows.map(({ cells, remark }) => el("tr", {},
     cells.map((text, column) =>
       column < table.keys.length ? el("th", { scope: "row", class: "key" }, signed(text)) : el("td", {}, signed(text))),
     remarks && el("td", { class: "remark" }, remark)));
-  const label = `table by ${table.keys.join(", ")}`;
-  return el("table", { class: "own", "aria-label": label }, el("thead", {}, el("tr", {}, heads)), el("tbody", {}, body));
+  return el("table", { class: "own", "aria-label": tableName(table) }, el("thead", {}, el("tr", {}, heads)), el("tbody", {}, body));
+}
+
+function tableName(table: FormTable): string {
+  return `table by ${table.keys.map(({ symbol }) => symbol).join(", ")}`;
 }

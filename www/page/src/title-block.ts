@@ -1,6 +1,7 @@
 /** The title block, as on a drawing: boxes with small captions, filled from the sheet's first lines. */
+import { findingsAt, type Shown } from "./conditions.js";
 import { el, fill } from "./dom.js";
-import { findingsAt, type FormRow, type Report } from "./report.js";
+import type { FormRow } from "./report.js";
 import { queryMark } from "./rows.js";
 import type { SheetText } from "./sheet-text.js";
 import { words } from "./strings.js";
@@ -31,9 +32,10 @@ export class TitleBlock {
   }
 
   /** Fills the boxes from the report's title lines. */
-  show(report: Report, text: string): void {
+  show(shown: Shown, text: string): void {
+    const { report } = shown;
     this.#rows = report.form.rows.filter(({ kind }) => kind === "title");
-    for (const [word, box] of this.#boxes) this.#fillBox(box, word, report);
+    for (const [word, box] of this.#boxes) this.#fillBox(box, word, shown);
     this.#digest.textContent = report.digest.slice(0, DIGEST_SHOWN);
     this.#engine.textContent = report.engine;
     this.#pound.hidden = !usesPounds(text);
@@ -45,11 +47,11 @@ export class TitleBlock {
     return this.#rows.find((row) => row.word === word);
   }
 
-  #fillBox(box: HTMLElement, word: string, report: Report): void {
+  #fillBox(box: HTMLElement, word: string, shown: Shown): void {
     if (box.querySelector("input")) return;
     const row = this.#row(word);
     const text = row?.how ?? "";
-    const found = row ? findingsAt(report, row.line, row.line + row.lines) : [];
+    const found = row ? findingsAt(shown, row.line, row.lines) : [];
     const key = JSON.stringify([text, found]);
     if (box.dataset["key"] === key) return;
     box.dataset["key"] = key;
