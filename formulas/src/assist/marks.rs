@@ -1,219 +1,148 @@
-//! Marks for highlighting: which stretch of the text is what.
+//! What each piece of a sheet's text is, for highlighting while it is typed.
 
 use crate::lex::lex;
 use crate::parse::parse;
-use crate::span::Span;
-use crate::syntax::{DefinitionValue, Statement, StatementKind};
-use crate::token::{Token, TokenKind, Word};
+use crate::token::{Token, TokenKind};
 
-/// What a stretch of the text is.
-#[derive(Clone, Copy, PartialEq, Eq, Debug)]
-pub enum MarkKind {
-    /// A word of the language.
-    Word,
-    /// A symbol, axis or field.
-    Symbol,
-    /// A number.
-    Number,
-    /// A unit, behind a number or in brackets.
-    Unit,
-    /// Text in quotes, a label, or prose.
-    Text,
-    /// A remark or an aside.
-    Remark,
-    /// The text of a heading or of the title block.
-    Heading,
-    /// A sign.
-    Sign,
-    /// The name of a function.
-    Function,
-    /// What the language does not have.
-    Error,
-}
+/// The kinds of marks, by the names that styles know them by.
+pub const KINDS: [&str; 9] = [
+    "word", "name", "function", "number", "unit", "text", "label", "remark", "prose",
+];
 
-/// A stretch of the text, in UTF-16 units from its start.
-#[derive(Clone, Copy, PartialEq, Eq, Debug)]
-pub struct Mark {
-    /// First unit.
-    pub start16: u32,
-    /// One past the last unit.
-    pub end16: u32,
-    /// What it is.
-    pub kind: MarkKind,
-}
-
-/// The marks of a whole text, in order and without overlap; blanks have none.
-///
-/// ```
-/// use formulas::assist::marks::{MarkKind, marks};
-/// let kinds: Vec<MarkKind> = marks("S [ft^2] = 142 ; drawing").iter().map(|mark| mark.kind).collect();
-/// assert_eq!(kinds, [MarkKind::Symbol, MarkKind::Unit, MarkKind::Sign, MarkKind::Number, MarkKind::Remark]);
-/// ```
+/// The marks of `text`: from, to and kind of each, one after the other. Places count in UTF-16 units, as a browser's
+/// strings do; kinds are positions in [`KINDS`]. What has no kind, such as signs, has no mark.
 #[must_use]
-pub fn marks(text: &str) -> Vec<Mark> {
-    let mut marks = Vec::new();
-    let mut counter = Counter {
-        text,
-        byte: 0,
-        units: 0,
-    };
-    for statement in &parse(text).statements {
-        let end = statement.start + statement.length;
-        let typed = text.get(statement.start..end).unwrap_or("");
-        for (span, kind) in statement_marks(statement, typed) {
-            let start16 = counter.units_at(statement.start + span.start as usize);
-            let end16 = counter.units_at(statement.start + span.end as usize);
-            marks.push(Mark {
-                start16,
-                end16,
-                kind,
-            });
-        }
+pub fn marks(text: &str) -> Vec<u32> {
+    let mut marks = Marks::default();
+    // How a line is to be read depends on the statement that it belongs to, so the statements are found first.
+    for statement in parse(text).statements {
+        let end = statement.start.saturating_add(statement.length);
+        let own = text.get(statement.start..end).unwrap_or("");
+        marks.units = utf16_length(text, marks.byte, statement.start).saturating_add(marks.units);
+        marks.statement(own);
+        marks.byte = end;
     }
-    marks
+    marks.flat
 }
 
-/// Counts UTF-16 units on a single walk over the text.
-struct Counter<'t> {
-    text: &'t str,
+/// Marks on their way, with the place reached in bytes of the text and in UTF-16 units.
+#[derive(Default)]
+struct Marks {
+    flat: Vec<u32>,
     byte: usize,
     units: u32,
 }
 
-impl Counter<'_> {
-    fn units_at(&mut self, byte: usize) -> u32 {
-        let stretch = self.text.get(self.byte..byte).unwrap_or("");
-        self.units += stretch
-            .chars()
-            .map(|character| character.len_utf16() as u32)
-            .sum::<u32>();
-        self.byte = byte.max(self.byte);
-        self.units
-    }
-}
-
-fn statement_marks(statement: &Statement, typed: &str) -> Vec<(Span, MarkKind)> {
-    let mut tokens = lex(typed);
-    tokens.retain(|token| !matches!(token.kind, TokenKind::Blank | TokenKind::LineEnd));
-    let labels = label_spans(statement);
-    let wrong: Vec<Span> = statement
-        .problems
-        .iter()
-        .map(|problem| problem.span)
-        .filter(|span| {
-            tokens
-                .binary_search_by_key(span, |token| token.span)
-                .is_ok()
-        })
-        .collect();
-    let mut marks = Vec::with_capacity(tokens.len());
-    let mut labels = labels.iter().peekable();
-    for (index, token) in tokens.iter().enumerate() {
-        while labels
-            .next_if(|label| label.end <= token.span.start)
-            .is_some()
-        {}
-        let in_label = labels
-            .peek()
-            .is_some_and(|label| label.start <= token.span.start);
-        let kind = if in_label {
-            MarkKind::Text
-        } else if wrong.contains(&token.span) {
-            MarkKind::Error
-        } else {
-            token_kind(statement, typed, &tokens, index, *token)
-        };
-        marks.push((token.span, kind));
-    }
-    marks
-}
-
-/// Where the labels of a list by axis stand.
-fn label_spans(statement: &Statement) -> Vec<Span> {
-    match &statement.kind {
-        StatementKind::Definition(definition) => match &definition.value {
-            DefinitionValue::ByAxis { items, .. } => items
-                .iter()
-                .filter_map(|item| item.label.as_ref())
-                .map(|label| label.span)
-                .collect(),
-            DefinitionValue::One(_) => Vec::new(),
-        },
-        _ => Vec::new(),
-    }
-}
-
-fn token_kind(
-    statement: &Statement,
-    typed: &str,
-    tokens: &[Token],
-    index: usize,
-    token: Token,
-) -> MarkKind {
-    match token.kind {
-        TokenKind::Word(_) | TokenKind::Title(_) => MarkKind::Word,
-        TokenKind::Name => name_kind(statement, typed, tokens, index),
-        TokenKind::Number | TokenKind::Raised => MarkKind::Number,
-        TokenKind::Unit | TokenKind::Bracket => MarkKind::Unit,
-        TokenKind::Text | TokenKind::Label => MarkKind::Text,
-        TokenKind::Remark => MarkKind::Remark,
-        TokenKind::Prose => match statement.kind {
-            StatementKind::Title { .. } | StatementKind::Part(_) | StatementKind::Sub(_) => {
-                MarkKind::Heading
+impl Marks {
+    fn statement(&mut self, text: &str) {
+        let tokens = lex(text);
+        for (index, token) in tokens.iter().enumerate() {
+            let start = self.units;
+            self.units += utf16_length(text, token.span.start as usize, token.span.end as usize);
+            if let Some(kind) = kind_of(token.kind, behind(&tokens, index)) {
+                self.flat.extend([start, self.units, kind]);
             }
-            StatementKind::Note(_) => MarkKind::Text,
-            _ => MarkKind::Remark,
-        },
-        TokenKind::BrokenNumber
-        | TokenKind::OpenBracket
-        | TokenKind::OpenText
-        | TokenKind::Foreign
-        | TokenKind::Unknown => MarkKind::Error,
-        _ => MarkKind::Sign,
+        }
     }
 }
 
-/// A name is a function before `(`, a word in its place, or a symbol.
-fn name_kind(statement: &Statement, typed: &str, tokens: &[Token], index: usize) -> MarkKind {
-    let kind_at = |index: usize| tokens.get(index).map(|token| token.kind);
-    let text = tokens.get(index).map_or("", |token| token.span.of(typed));
-    let before = index.checked_sub(1).and_then(kind_at);
-    let ends_operand = !matches!(
-        before,
-        None | Some(
-            TokenKind::Sign(_)
-                | TokenKind::Equals
-                | TokenKind::Comma
-                | TokenKind::Open
-                | TokenKind::Dot
-                | TokenKind::Word(_)
-                | TokenKind::Bar
-        )
-    );
-    let opens_item = matches!(before, Some(TokenKind::Colon | TokenKind::Comma));
-    let word = match (&statement.kind, text) {
-        (StatementKind::Definition(_), "by") => index > 0 && ends_operand,
-        (StatementKind::Vary(_), "to" | "step" | "count") => {
-            ends_operand && before != Some(TokenKind::Colon)
-        }
-        (StatementKind::Unknown(_), "between" | "such" | "that") => ends_operand,
-        (StatementKind::Figure { .. }, "against" | "each" | "closed") => {
-            ends_operand && before != Some(TokenKind::Colon)
-        }
-        (StatementKind::Freebody { .. }, "couple" | "axial") => {
-            opens_item && !matches!(kind_at(index + 1), Some(TokenKind::At))
-        }
-        (StatementKind::Use { .. }, "as") => before == Some(TokenKind::Text),
-        (_, "smooth" | "nearest" | "held") => before == Some(TokenKind::Close),
-        _ => false,
+fn utf16_length(text: &str, start: usize, end: usize) -> u32 {
+    let stretch = text.get(start..end).unwrap_or("");
+    stretch.chars().map(|c| c.len_utf16() as u32).sum()
+}
+
+/// The first token behind `index` that is no blank.
+fn behind(tokens: &[Token], index: usize) -> Option<TokenKind> {
+    let rest = tokens.iter().skip(index + 1).map(|token| token.kind);
+    rest.into_iter().find(|kind| *kind != TokenKind::Blank)
+}
+
+fn kind_of(kind: TokenKind, next: Option<TokenKind>) -> Option<u32> {
+    let name = match kind {
+        TokenKind::Word(_) | TokenKind::Title(_) => "word",
+        TokenKind::Name if next == Some(TokenKind::Open) => "function",
+        TokenKind::Name => "name",
+        TokenKind::Number | TokenKind::BrokenNumber => "number",
+        TokenKind::Unit | TokenKind::Bracket | TokenKind::OpenBracket => "unit",
+        TokenKind::Text | TokenKind::OpenText => "text",
+        TokenKind::Label => "label",
+        TokenKind::Remark => "remark",
+        TokenKind::Prose => "prose",
+        _ => return None,
     };
-    if word {
-        MarkKind::Word
-    } else if kind_at(index + 1) == Some(TokenKind::Open)
-        && before != Some(TokenKind::Word(Word::Over))
-    {
-        MarkKind::Function
-    } else {
-        MarkKind::Symbol
+    KINDS
+        .iter()
+        .position(|known| *known == name)
+        .and_then(|position| u32::try_from(position).ok())
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// The marked stretches with their kinds.
+    fn check(text: &str, expected: &[(&str, &str)]) {
+        let units: Vec<u16> = text.encode_utf16().collect();
+        let flat = marks(text);
+        let marked: Vec<(String, &str)> = flat
+            .chunks(3)
+            .map(|mark| {
+                let stretch =
+                    String::from_utf16(&units[mark[0] as usize..mark[1] as usize]).unwrap();
+                (stretch, KINDS[mark[2] as usize])
+            })
+            .collect();
+        let expected: Vec<(String, &str)> = expected
+            .iter()
+            .map(|(s, k)| ((*s).to_owned(), *k))
+            .collect();
+        assert_eq!(marked, expected);
+    }
+
+    #[test]
+    fn a_definition_is_marked_piece_by_piece() {
+        check(
+            "q [lb/ft^2] = dynamic_pressure_of_eas(V) ; at sea level\n",
+            &[
+                ("q", "name"),
+                ("[lb/ft^2]", "unit"),
+                ("dynamic_pressure_of_eas", "function"),
+                ("V", "name"),
+                ("; at sea level", "remark"),
+            ],
+        );
+    }
+
+    #[test]
+    fn places_count_in_utf_16_units() {
+        check(
+            "note \u{1d6fc} first\nα = 2 ; ok\n",
+            &[
+                ("note", "word"),
+                ("\u{1d6fc} first", "prose"),
+                ("α", "name"),
+                ("2", "number"),
+                ("; ok", "remark"),
+            ],
+        );
+    }
+
+    #[test]
+    fn cells_of_a_table_are_marked_as_labels_and_numbers() {
+        check(
+            "table point | V [kt]\nA 1 | 55\nend\nW = 2 lb\n",
+            &[
+                ("table", "word"),
+                ("point", "name"),
+                ("V", "name"),
+                ("[kt]", "unit"),
+                ("A 1", "label"),
+                ("55", "number"),
+                ("end", "word"),
+                ("W", "name"),
+                ("2", "number"),
+                ("lb", "unit"),
+            ],
+        );
     }
 }
