@@ -54,7 +54,7 @@ test("a finding leads to its row", async () => {
   const { page, context } = await openPage(browser);
   await misspell(page);
   await page.keyboard.press("Enter");
-  await page.getByRole("button", { name: /^Go to item/ }).first().click();
+  await page.locator(".queries li", { hasText: "P_tt" }).first().getByRole("button", { name: /^Go to item/ }).click();
   assert.match(await page.locator(".typing .cm-content").textContent(), /P_tt/);
   await context.close();
 });

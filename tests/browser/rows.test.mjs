@@ -159,3 +159,33 @@ test("a row that is taken is spoken with its value and findings", () => withPage
   await settled(page);
   await page.waitForFunction(() => /S 142\.0 ft\^2.*no findings/.test(document.querySelector("body > [aria-live]").textContent));
 }));
+
+test("numbers are shown with the sheet's figures", () => withPage(async (page) => {
+  // Significant figures with their zeros, exponent form from 10^7 and below 10^-4, ties away from zero.
+  const cases = [["142", "142.0"], ["123456", "123500"], ["9999499", "9999000"], ["9999500", "1.000e7"], ["1e-4", "0.0001000"],
+    ["0.00009999", "9.999e-5"], ["-0.055", "-0.05500"], ["0.125", "0.1250"], ["2.00025", "2.000"], ["1234.5", "1235"], ["0", "0"]];
+  await page.getByRole("button", { name: "New sheet" }).click();
+  await typeRows(page, cases.map(([typed], index) => `a_${index} = ${typed}`));
+  await page.keyboard.press("Escape");
+  await settled(page);
+  for (const [index, [, shown]] of cases.entries()) assert.deepEqual(await valuesOf(page, `a_${index}`), [shown]);
+}));
+
+test("the values of chosen rows are copied, separated by tabs", () => withPage(async (page) => {
+  await rowOf(page, "S").locator("button.opens").focus();
+  await page.keyboard.press("Shift+ArrowDown");
+  await page.keyboard.press("Alt+c");
+  const copied = await page.evaluate(() => navigator.clipboard.readText());
+  assert.equal(copied.split("\n")[0], "1\tS\tft^2\t142\t142.0\tdrawing OS-010");
+  assert.match(copied.split("\n")[1], /^2\tc\tft\t4\.6\t4\.600\t/);
+}, { permissions: ["clipboard-read", "clipboard-write"] }));
+
+test("a table whose key does not run across is drawn by itself", () => withPage(async (page) => {
+  await page.getByRole("button", { name: "New sheet" }).click();
+  await typeRows(page, ["vary cg: fwd | aft", "x [ft] by cg = 1 | 2", "table flap, alpha [deg] | CL", "up, -4 | -0.1", "up, 0 | 0.3", "down, 0 | 0.8", "end"]);
+  await page.keyboard.press("Escape");
+  await settled(page);
+  await page.getByLabel("Across").selectOption("cg");
+  assert.deepEqual(await page.locator("table.own thead th").allTextContents(), ["flap", "alphadeg", "CL"]);
+  assert.deepEqual(await page.locator("table.own tbody tr").first().locator("th, td").allTextContents(), ["up", "\u22124", "\u22120.1"]);
+}));

@@ -41,6 +41,6 @@ export function setText(element: Element, text: string): void {
 /** A symbol as it is written by hand: what follows the first `_` stands low. The `_` stays in what is copied. */
 export function symbolText(symbol: string): Child[] {
   const at = symbol.indexOf("_");
-  if (at <= 0 || at === symbol.length - 1) return [symbol];
+  if (at <= 0 || at === symbol.length - 1) return symbol.split(/(?<=\.)/).flatMap((part, index) => (index > 0 ? [el("wbr"), part] : [part]));
   return [symbol.slice(0, at), el("span", { class: "underscore" }, "_"), el("sub", {}, symbol.slice(at + 1))];
 }

@@ -31,7 +31,9 @@ export class Engine {
   constructor(packed: string, events: EngineEvents) {
     this.#events = events;
     this.module = compile(packed);
-    this.module.then(() => this.#renew(), (error: unknown) => events.failure(String(error), 0));
+    // The thread starts while the engine is still being unpacked.
+    void this.#renew();
+    this.module.catch((error: unknown) => events.failure(String(error), 0));
   }
 
   /** Evaluates `text` as soon as the thread is free; a text that was still waiting is passed over. */
@@ -57,11 +59,13 @@ export class Engine {
     URL.revokeObjectURL(address);
     worker.onmessage = (event: MessageEvent<FromWorker>) => this.#hear(worker, event.data);
     worker.onerror = (event) => this.#crash(event.message);
-    worker.postMessage({ module: await this.module });
+    const module = await this.module.catch(() => null);
+    if (module) worker.postMessage({ module });
   }
 
   #hear(worker: Worker, message: FromWorker): void {
     if ("ready" in message) {
+      performance.mark("engine ready");
       this.#worker = worker;
       this.#next();
     } else if ("failure" in message) {
@@ -101,7 +105,9 @@ export class Engine {
 async function compile(packed: string): Promise<WebAssembly.Module> {
   const unpacked = new Blob([bytesOf(packed)]).stream().pipeThrough(new DecompressionStream("gzip"));
   const headers = { "content-type": "application/wasm" };
-  return WebAssembly.compileStreaming(new Response(unpacked, { headers }));
+  const module = await WebAssembly.compileStreaming(new Response(unpacked, { headers }));
+  performance.mark("engine compiled");
+  return module;
 }
 
 function bytesOf(base64: string): Uint8Array<ArrayBuffer> {

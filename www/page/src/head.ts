@@ -20,7 +20,7 @@ function headRows(shown: Shown): HTMLTableRowElement[] {
   const tall = (name: string, text: string) =>
     el("th", { scope: "col", role: "columnheader", class: name, rowspan: rows }, text);
   const values = across
-    ? el("th", { scope: "colgroup", role: "columnheader", class: "axis", colspan: across.labels.length }, across.name)
+    ? el("th", { scope: "colgroup", role: "columnheader", class: "axis", colspan: across.labels.length }, el("span", {}, across.name))
     : tall("axis", words.value);
   const first = el("tr", { role: "row" },
     tall("item", words.item), tall("symbol", words.symbol), tall("unit", words.unit), tall("how", words.how), values,

@@ -111,6 +111,7 @@ export class Page {
   }
 
   #received(report: Report, serial: number): void {
+    performance.mark("report");
     this.#notices.clear("engine");
     // A report of an older text would put rows at lines that have moved; the newer one is on its way.
     if (serial !== this.#serial) return;
@@ -244,20 +245,23 @@ export class Page {
   }
 
   #key(event: KeyboardEvent): void {
-    const control = event.ctrlKey || event.metaKey;
-    if (!control || event.defaultPrevented) return;
-    const key = event.key.toLowerCase();
-    const act = key === "s" ? () => void this.#save() : this.#typing(event.target) ? null : this.#stepFor(key, event.shiftKey);
+    if (event.defaultPrevented) return;
+    const act = this.#actionFor(event);
     if (!act) return;
     event.preventDefault();
     act();
   }
 
-  #stepFor(key: string, shift: boolean): (() => void) | null {
-    if (key === "z") return () => (shift ? this.#desk.redo() : this.#desk.undo());
-    if (key === "y") return () => this.#desk.redo();
-    if (key === "c" && shift) return () => this.#copyValues();
-    return null;
+  #actionFor(event: KeyboardEvent): (() => void) | null {
+    const control = event.ctrlKey || event.metaKey;
+    const key = event.key.toLowerCase();
+    if (control && key === "s") return () => void this.#save();
+    if (this.#typing(event.target)) return null;
+    // With Alt, some keyboards give another letter for the same key.
+    if (event.altKey && !control) return event.code === "KeyC" ? () => this.#copyValues() : null;
+    if (!control) return null;
+    if (key === "z") return () => (event.shiftKey ? this.#desk.redo() : this.#desk.undo());
+    return key === "y" ? () => this.#desk.redo() : null;
   }
 
   /** Fields and editors have their own undo and clipboard. */

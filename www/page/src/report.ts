@@ -72,6 +72,7 @@ export interface Requirement {
   not_met: number;
   without_value: number;
   worst: Worst | null;
+  met_at_worst: boolean | null;
 }
 
 export interface FreeBody {

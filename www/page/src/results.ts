@@ -81,6 +81,7 @@ export function verdict({ met }: Requirement): { className: string; word: string
 function requirementDetails(found: Requirement, shown: Shown): string[] {
   const details = found.worst ? worstDetails(found.worst, shown) : [];
   if (found.not_met > 0) details.push(words.notMetIn(count(found.not_met), count(found.conditions)));
+  if (found.met === true && found.met_at_worst === false) details.push(words.notMetAtWorst);
   if (found.without_value > 0) details.push(words.withoutValue(count(found.without_value)));
   return details;
 }

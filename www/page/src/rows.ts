@@ -79,18 +79,22 @@ export function quantitiesOf(row: FormRow, shown: Shown): Quantity[] {
 export function valueSpecs(cells: ValueCell[], shown: Shown): CellSpec[] {
   const wide = cells.length === 1 ? valueColumns(shown) : 1;
   return cells.map((each, index) => {
-    const className = `value${wide > 1 ? " wide" : ""}${each.missing ? " missing" : ""}`;
+    const className = `value${wide > 1 ? " wide" : each.text.length > LONG ? " long" : ""}${each.missing ? " missing" : ""}`;
     const caption = wide > 1 ? "" : (shown.across?.labels[index] ?? "");
     const key = `${each.text}\t${each.ring}\t${each.where}`;
-    return cell(className, key, () => valueContent(each), { columns: wide, caption });
+    return cell(className, key, () => valueContent(each, wide > 1), { columns: wide, caption });
   });
 }
 
-function valueContent({ text, ring, where }: ValueCell): Child[] {
+/** Texts longer than this are set smaller, so that they stay in their column. */
+const LONG = 9;
+
+function valueContent({ text, ring, where }: ValueCell, wide: boolean): Child[] {
   const figure = ring
     ? el("span", { class: `ring ${ring}` }, text, el("span", { class: "unseen" }, ` (${words[ring]})`))
     : text;
-  return [figure, where && where !== text && el("span", { class: "where" }, where)];
+  const content = [figure, where && where !== text && el("span", { class: "where" }, where)];
+  return wide ? [el("span", { class: "stays" }, content)] : content;
 }
 
 /** The item number, which opens the row. */

@@ -36,6 +36,7 @@ export const words = {
   margin: "margin",
   worstAt: "at",
   notMetIn: (some: string, all: string) => `not met in ${some} of ${all} conditions`,
+  notMetAtWorst: "not met with the tolerances at their worst",
   withoutValue: (some: string) => `${some} without a value`,
   closes: "closes",
   closesByConstruction: "closes by construction",
@@ -71,7 +72,7 @@ export const words = {
     ["Del", "delete"],
     ["Alt \u2191 \u2193", "move the row"],
     ["Ctrl Z", "undo"],
-    ["Ctrl Shift C", "copy the values"],
+    ["Alt C", "copy the values"],
   ],
   titleBlock: "Title block",
   boxes: {
