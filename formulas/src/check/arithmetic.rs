@@ -243,12 +243,7 @@ impl Checker<'_> {
     }
 
     /// `a ^ b`.
-    pub(crate) fn to_the_power(
-        &mut self,
-        base: Typed,
-        exponent: Typed,
-        span: Span,
-    ) -> Option<Typed> {
+    pub(crate) fn raised(&mut self, base: Typed, exponent: Typed, span: Span) -> Option<Typed> {
         let (base, exponent) = self.both_numbers(base, exponent, BinaryOp::Power)?;
         if !exponent.dimension().is_number() {
             let value = self.operand(&exponent);

@@ -101,7 +101,7 @@ impl Checker<'_> {
         match op {
             BinaryOp::Add | BinaryOp::Subtract => self.sum(op, op_span, left, right, span),
             BinaryOp::Multiply | BinaryOp::Divide => self.product(op, left, right, span),
-            BinaryOp::Power => self.to_the_power(left, right, span),
+            BinaryOp::Power => self.raised(left, right, span),
             BinaryOp::And | BinaryOp::Or => self.joined(op, left, right, span),
             _ => self.comparison(op, op_span, left, right, span),
         }

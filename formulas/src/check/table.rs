@@ -8,6 +8,9 @@ use crate::problem::Fault;
 use crate::program::{Kind, NumberKind, Op};
 use crate::syntax::{Parameter, Row, Table};
 
+/// The axes of a table's keys, and for each row the index along each; `None` for a row that could not be placed.
+type Places = (Vec<AxisId>, Vec<Option<Vec<usize>>>);
+
 impl Checker<'_> {
     pub(crate) fn check_table(&mut self, table: &Table) {
         for (at, key) in table.keys.iter().enumerate() {
@@ -26,7 +29,7 @@ impl Checker<'_> {
     }
 
     /// For each row the index along each key; rows that could not be placed are `None`.
-    fn row_places(&mut self, table: &Table) -> Option<(Vec<AxisId>, Vec<Option<Vec<usize>>>)> {
+    fn row_places(&mut self, table: &Table) -> Option<Places> {
         let axes: Option<Vec<AxisId>> = table
             .keys
             .iter()
@@ -131,7 +134,7 @@ impl Checker<'_> {
         table: &Table,
         at: usize,
         column: &Parameter,
-        places: Option<&(Vec<AxisId>, Vec<Option<Vec<usize>>>)>,
+        places: Option<&Places>,
     ) {
         let name = &column.name.text;
         let stands = self
@@ -182,7 +185,7 @@ impl Checker<'_> {
         table: &Table,
         at: usize,
         column: &Parameter,
-        places: Option<&(Vec<AxisId>, Vec<Option<Vec<usize>>>)>,
+        places: Option<&Places>,
     ) -> Option<(Typed, Vec<PointTolerance>)> {
         let bracket = self.bracket(column.unit.as_ref(), &column.name.text).ok()?;
         let input = self.column_is_input(table, at);

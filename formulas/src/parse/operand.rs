@@ -6,6 +6,9 @@ use crate::span::Span;
 use crate::syntax::{Argument, Expr, ExprKind, Name, PickWord, Selection};
 use crate::token::{Token, TokenKind, Word};
 
+/// A word behind the selections of a pick.
+type WordOfPick = Option<(PickWord, Span)>;
+
 impl Cursor<'_> {
     /// An operand with its fields and picks.
     ///
@@ -71,7 +74,7 @@ impl Cursor<'_> {
         })
     }
 
-    fn selections(&mut self) -> Read<(Vec<Selection>, Option<(PickWord, Span)>)> {
+    fn selections(&mut self) -> Read<(Vec<Selection>, WordOfPick)> {
         let mut selections = Vec::new();
         loop {
             let axis = self.name("the name of an axis")?;
@@ -89,7 +92,7 @@ impl Cursor<'_> {
         }
     }
 
-    fn opt_pick_word(&mut self) -> Option<(PickWord, Span)> {
+    fn opt_pick_word(&mut self) -> WordOfPick {
         let token = self.peek().filter(|token| token.kind == TokenKind::Name)?;
         let word = match self.word_of(token) {
             "smooth" => PickWord::Smooth,
