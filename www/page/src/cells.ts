@@ -26,9 +26,13 @@ export function valueColumns(shown: Shown): number {
   return shown.across?.labels.length ?? 1;
 }
 
+/** Names longer than this are set smaller, so that they stay whole in their column. */
+const LONG = 9;
+
 /** A symbol in the symbol column. */
 export function symbolCell(symbol: string): CellSpec {
-  return cell("symbol", symbol, () => symbolText(symbol));
+  const longest = Math.max(...symbol.split(/[._]/).map((part) => part.length));
+  return cell(longest > LONG ? "symbol long" : "symbol", symbol, () => symbolText(symbol));
 }
 
 /** A unit in the unit column. */
