@@ -1,69 +1,230 @@
 //! Rows made from the engine functions themselves: the types named in a row are those of the function, or it does not
 //! compile, and dimensions, airspeed kinds and temperature differences are read off them.
+//!
+//! A row is written as the engine function is declared, `air::mach_number(speed: TrueAirspeed, sound_speed: Velocity) ->
+//! f64`, a default in SI behind a `=`, a whole line of values as `[Length]`, a record as its fields in braces. A mark with
+//! an `@` before an argument or a result says what its type cannot: `@lift_slope slope: PerAngle`, `-> @percent f64`.
 
-use engine::quantity::Dimension;
+use super::row::{Entry, Field, Gives, Line, Parameter, Validity, Wants};
+use crate::values::is_excluded;
+use engine::quantity::{Dimension, Typed};
 
-/// Whether a dimension is that of a lift slope.
-pub(super) const fn is_slope(d: Dimension) -> bool {
-    d.angle.numerator() == -1
-        && d.length.is_zero()
-        && d.mass.is_zero()
-        && d.time.is_zero()
-        && d.temperature.is_zero()
+/// A type that an argument of an engine function can have: a quantity, or a slice of them.
+pub(super) trait Argument {
+    /// The argument without its name, required.
+    const PARAMETER: Parameter;
+    /// What holds the value or values for the call.
+    type Held;
+    /// What the engine function is given.
+    type Lent<'a>
+    where
+        Self: 'a;
+
+    /// The quantity or quantities of so many SI units.
+    fn hold(line: Line<'_>) -> Self::Held;
+    /// Lends them for the call.
+    fn lend(held: &Self::Held) -> Self::Lent<'_>;
+}
+
+impl<T: Typed> Argument for T {
+    const PARAMETER: Parameter = Parameter {
+        name: "",
+        wants: Wants::Dimension(T::DIMENSION),
+        speed: T::SPEED_KIND,
+        difference: T::DIFFERENCE,
+        line: false,
+        default: None,
+        default_text: None,
+        slope: false,
+        most: None,
+        words: &[],
+    };
+    type Held = T;
+    type Lent<'a>
+        = T
+    where
+        T: 'a;
+
+    fn hold(line: Line<'_>) -> T {
+        T::from_si(line.first().copied().unwrap_or(f64::NAN))
+    }
+
+    fn lend(held: &T) -> T {
+        *held
+    }
+}
+
+impl<T: Typed> Argument for [T] {
+    const PARAMETER: Parameter = Parameter {
+        line: true,
+        ..<T as Argument>::PARAMETER
+    };
+    type Held = Vec<T>;
+    type Lent<'a>
+        = &'a [T]
+    where
+        T: 'a;
+
+    fn hold(line: Line<'_>) -> Vec<T> {
+        line.iter().map(|value| T::from_si(*value)).collect()
+    }
+
+    fn lend(held: &Vec<T>) -> &[T] {
+        held
+    }
+}
+
+/// Marks an argument as a lift slope, for which a bare number below 1 is suspect.
+pub(super) const fn lift_slope(parameter: Parameter) -> Parameter {
+    Parameter {
+        slope: true,
+        ..parameter
+    }
+}
+
+/// Marks a weight that may be given as a mass, which the results then are made of.
+pub(super) const fn force_or_mass(parameter: Parameter) -> Parameter {
+    Parameter {
+        wants: Wants::ForceOrMass,
+        ..parameter
+    }
+}
+
+/// Marks a mass that may be given as a weight, and then is the mass that weighs so much.
+pub(super) const fn mass_or_weight(parameter: Parameter) -> Parameter {
+    Parameter {
+        wants: Wants::MassOrWeight,
+        ..parameter
+    }
+}
+
+/// Marks a part of a chord: a bare number well above 1 was meant as a percentage.
+pub(super) const fn part_of_chord(parameter: Parameter) -> Parameter {
+    Parameter {
+        most: Some(1.5),
+        ..parameter
+    }
+}
+
+/// Marks a result that is shown in per cent.
+pub(super) const fn percent(field: Field) -> Field {
+    Field {
+        shown: Some("%"),
+        ..field
+    }
+}
+
+/// Marks a result that has the dimension of the first argument.
+pub(super) const fn of_first(field: Field) -> Field {
+    Field {
+        gives: Gives::Argument(0, Dimension::NONE),
+        ..field
+    }
+}
+
+/// Marks a result that has the dimension of the first argument times a length.
+pub(super) const fn of_first_times_length(field: Field) -> Field {
+    Field {
+        gives: Gives::Argument(0, Dimension::LENGTH),
+        ..field
+    }
+}
+
+/// A result of a type: an angle is shown in degrees, a temperature that is no difference is absolute.
+pub(super) const fn field_of<T: Typed>(name: &'static str, what: &'static str) -> Field {
+    let d = T::DIMENSION;
+    let of_a_kind = d.length.is_zero() && d.mass.is_zero() && d.time.is_zero();
+    let angle = of_a_kind && d.temperature.is_zero() && d.angle.numerator() == 1;
+    let temperature = of_a_kind && d.angle.is_zero() && d.temperature.numerator() == 1;
+    Field {
+        name,
+        gives: Gives::Dimension(d),
+        speed: T::SPEED_KIND,
+        absolute: temperature && !T::DIFFERENCE,
+        shown: if angle { Some("deg") } else { None },
+        line: false,
+        what,
+    }
+}
+
+/// The row with the range where its method holds.
+pub(super) const fn within(holds: fn(&[f64]) -> bool, advice: &'static str, entry: Entry) -> Entry {
+    Entry {
+        validity: Some(Validity { holds, advice }),
+        ..entry
+    }
+}
+
+/// The argument of that index, a NaN where it is missing.
+pub(super) fn at(given: &[f64], index: usize) -> f64 {
+    given.get(index).copied().unwrap_or(f64::NAN)
+}
+
+/// Whether each of these arguments is above zero.
+pub(super) fn positive<const N: usize>(given: &[f64], indices: [usize; N]) -> bool {
+    indices.into_iter().all(|index| at(given, index) > 0.0)
+}
+
+/// Puts the fields of a result in their places.
+pub(super) fn put(out: &mut [f64], fields: &[f64]) {
+    out.iter_mut()
+        .zip(fields)
+        .for_each(|(out, value)| *out = *value);
+}
+
+/// Puts the fields of a result that does not vary along the axis in their places.
+pub(super) fn put_lines(out: &mut [Vec<f64>], fields: &[f64]) {
+    out.iter_mut()
+        .zip(fields)
+        .for_each(|(out, value)| *out = vec![*value]);
+}
+
+/// The lines without the points that are left out on purpose in any of them; what is no line stays.
+pub(super) fn left_in(given: &[Line<'_>], parameters: &[Parameter]) -> Vec<Vec<f64>> {
+    let lines = || given.iter().zip(parameters).filter(|(_, p)| p.line);
+    let out = |i: usize| lines().any(|(line, _)| line.get(i).is_some_and(|v| is_excluded(*v)));
+    let kept = |(line, parameter): (&Line<'_>, &Parameter)| {
+        let points = line
+            .iter()
+            .enumerate()
+            .filter(|(i, _)| !parameter.line || !out(*i));
+        points.map(|(_, value)| *value).collect()
+    };
+    given.iter().zip(parameters).map(kept).collect()
 }
 
 /// An argument of a type, required or with a default in SI.
 macro_rules! parameter {
-    ($name:ident, $type:ty) => {
-        Parameter {
+    ($(@$mark:ident)? $name:ident: $type:ty $(= $default:expr)?) => {{
+        let parameter = Parameter {
             name: stringify!($name),
-            wants: Wants::Dimension(<$type as Typed>::DIMENSION),
-            speed: <$type as Typed>::SPEED_KIND,
-            difference: <$type as Typed>::DIFFERENCE,
-            line: false,
-            default: None,
-            default_text: None,
-            slope: super::macros::is_slope(<$type as Typed>::DIMENSION),
-        }
-    };
-    ($name:ident, $type:ty, $default:expr) => {
-        Parameter {
-            default: Some($default),
-            ..parameter!($name, $type)
-        }
-    };
+            $(default: Some($default),)?
+            ..<$type as Argument>::PARAMETER
+        };
+        $(let parameter = super::macros::$mark(parameter);)?
+        parameter
+    }};
 }
 
-/// A field of a type.
+/// A result of a type.
 macro_rules! field {
-    ($name:expr, $type:ty, $shown:expr, $what:expr) => {
-        Field {
-            name: $name,
-            gives: Gives::Dimension(<$type as Typed>::DIMENSION),
-            speed: <$type as Typed>::SPEED_KIND,
-            absolute: false,
-            shown: $shown,
-            line: false,
-            what: $what,
-        }
-    };
+    ($(@$mark:ident)? $name:expr, $type:ty, $what:expr) => {{
+        let field = super::macros::field_of::<$type>($name, $what);
+        $(let field = super::macros::$mark(field);)?
+        field
+    }};
 }
 
-/// A function of one result, condition by condition.
-macro_rules! each {
-    ($group:expr, $module:ident::$name:ident($($arg:ident: $type:ty $(= $default:expr)?),* $(,)?) -> $result:ty
-        $(, shown $shown:expr)?; $what:expr, $method:expr, $holds:expr, $source:expr, $example:expr) => {
+/// The texts of a row, and what is not said otherwise.
+macro_rules! entry {
+    ($group:expr, $name:ident, $parameters:expr, $fields:expr, $compute:expr;
+        $what:expr, $method:expr, $holds:expr, $source:expr, $example:expr) => {
         Entry {
             name: stringify!($name),
             group: $group,
-            parameters: &[$(parameter!($arg, $type $(, $default)?)),*],
-            fields: &[field!("", $result, each!(@shown $($shown)?), "")],
-            compute: Compute::Each(|given, _, out| {
-                let mut given = given.iter().copied();
-                let mut next = || given.next().unwrap_or(f64::NAN);
-                let result: $result = engine::$module::$name($(<$type as Typed>::from_si(next())),*);
-                out.fill(result.si());
-            }),
+            parameters: const { $parameters },
+            fields: const { $fields },
+            compute: $compute,
             validity: None,
             what: $what,
             method: $method,
@@ -72,8 +233,87 @@ macro_rules! each {
             example: $example,
         }
     };
-    (@shown) => { None };
-    (@shown $shown:expr) => { Some($shown) };
 }
 
-pub(super) use {each, field, parameter};
+/// A function worked out condition by condition: of one result, or of a record.
+macro_rules! each {
+    ($group:expr, $module:ident::$name:ident(
+            $($(@$mark:ident)? $arg:ident: $type:ty $(= $default:expr)?),* $(,)?)
+        -> { $($(@$f_mark:ident)? $field:ident: $f_type:ty = $f_what:expr),* $(,)? }; $($texts:expr),* $(,)?) => {
+        super::macros::entry!($group, $name,
+            &[$(super::macros::parameter!($(@$mark)? $arg: $type $(= $default)?)),*],
+            &[$(super::macros::field!($(@$f_mark)? stringify!($field), $f_type, $f_what)),*],
+            Compute::Each(|given, _, out| {
+                let mut given = given.iter().copied();
+                let mut next = || given.next().unwrap_or(f64::NAN);
+                let result = engine::$module::$name($(<$type as Typed>::from_si(next())),*);
+                super::macros::put(out, &[$(<$f_type as Typed>::si(result.$field)),*]);
+            });
+            $($texts),*)
+    };
+    ($group:expr, $module:ident::$name:ident(
+            $($(@$mark:ident)? $arg:ident: $type:ty $(= $default:expr)?),* $(,)?)
+        -> $(@$f_mark:ident)? $result:ty; $($texts:expr),* $(,)?) => {
+        super::macros::entry!($group, $name,
+            &[$(super::macros::parameter!($(@$mark)? $arg: $type $(= $default)?)),*],
+            &[super::macros::field!($(@$f_mark)? "", $result, "")],
+            Compute::Each(|given, _, out| {
+                let mut given = given.iter().copied();
+                let mut next = || given.next().unwrap_or(f64::NAN);
+                let result = engine::$module::$name($(<$type as Typed>::from_si(next())),*);
+                super::macros::put(out, &[<$result as Typed>::si(result)]);
+            });
+            $($texts),*)
+    };
+}
+
+/// A function of points or items, given as whole lines; those that are left out on purpose do not reach it.
+macro_rules! points {
+    ($group:expr, $module:ident::$name:ident($($(@$mark:ident)? $arg:ident: $type:ty),* $(,)?)
+        -> { $($(@$f_mark:ident)? $field:ident: $f_type:ty = $f_what:expr),* $(,)? }; $($texts:expr),* $(,)?) => {
+        super::macros::entry!($group, $name,
+            &[$(super::macros::parameter!($(@$mark)? $arg: $type)),*],
+            &[$(super::macros::field!($(@$f_mark)? stringify!($field), $f_type, $f_what)),*],
+            Compute::Lines(|given, _, out| {
+                let given = super::macros::left_in(given, &[$(<$type as Argument>::PARAMETER),*]);
+                let mut given = given.iter().map(Vec::as_slice);
+                let mut next = || given.next().unwrap_or_default();
+                let result = engine::$module::$name(
+                    $(<$type as Argument>::lend(&<$type as Argument>::hold(next()))),*);
+                super::macros::put_lines(out, &[$(<$f_type as Typed>::si(result.$field)),*]);
+            });
+            $($texts),*)
+    };
+    ($group:expr, $module:ident::$name:ident($($(@$mark:ident)? $arg:ident: $type:ty),* $(,)?)
+        -> $(@$f_mark:ident)? $result:ty; $($texts:expr),* $(,)?) => {
+        super::macros::entry!($group, $name,
+            &[$(super::macros::parameter!($(@$mark)? $arg: $type)),*],
+            &[super::macros::field!($(@$f_mark)? "", $result, "")],
+            Compute::Lines(|given, _, out| {
+                let given = super::macros::left_in(given, &[$(<$type as Argument>::PARAMETER),*]);
+                let mut given = given.iter().map(Vec::as_slice);
+                let mut next = || given.next().unwrap_or_default();
+                let result = engine::$module::$name(
+                    $(<$type as Argument>::lend(&<$type as Argument>::hold(next()))),*);
+                super::macros::put_lines(out, &[<$result as Typed>::si(result)]);
+            });
+            $($texts),*)
+    };
+}
+
+/// A function that the language works out itself: it gives no fields, as its dimension follows from its arguments.
+macro_rules! language {
+    ($group:expr, $name:ident($($arg:ident: $wants:expr),*); $($texts:expr),* $(,)?) => {
+        super::macros::entry!($group, $name,
+            &[$(Parameter {
+                name: stringify!($arg),
+                wants: $wants,
+                ..<f64 as Argument>::PARAMETER
+            }),*],
+            &[],
+            Compute::Language;
+            $($texts),*)
+    };
+}
+
+pub(super) use {each, entry, field, language, parameter, points};

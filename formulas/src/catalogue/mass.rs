@@ -1,139 +1,80 @@
 //! Geometry and mass.
 
-use super::macros::{each, field, parameter};
-use super::row::{Compute, Entry, Field, Gives, Line, Parameter, Wants};
-use engine::quantity::{Area, Dimension, Force, Length, Mass, MomentOfInertia, Typed};
+use super::macros::{Argument, each, points, positive, within};
+use super::row::{Compute, Entry, Parameter};
+use engine::quantity::{Area, Force, Length, Mass, MomentOfInertia, Torque, Typed};
 
 const GROUP: &str = "Geometry and mass";
-const HANDBOOK: &str = "FAA-H-8083-1, Aircraft Weight and Balance Handbook (from memory)";
-
-/// Weight of an item: force or mass, one for each label.
-const WEIGHT: Parameter = Parameter {
-    wants: Wants::ForceOrMass,
-    line: true,
-    ..parameter!(weight, Force)
-};
+const HANDBOOK: &str = "FAA-H-8083-1, Weight and Balance Handbook (definition)";
+const CHORD: &str = "the method holds for a mean aerodynamic chord above 0 m";
+const LEFT_OUT: &str =
+    "An item with an excluded value is left out; the total weight is not to be 0.";
 
 pub(super) static ROWS: &[Entry] = &[
-    each!(GROUP, mass::tail_volume(tail_area: Area, arm: Length, wing_area: Area, mac: Length) -> f64;
-        "Tail volume coefficient.",
-        "tail_area arm/(wing_area mac), the arm from aerodynamic centre to aerodynamic centre.",
-        "everywhere",
-        "definition",
-        "V = tail_volume(24 ft^2, 11.2 ft, 142 ft^2, 4.6 ft)\n"),
-    each!(GROUP, mass::percent_mac(x: Length, x_le_mac: Length, mac: Length) -> f64, shown "%";
-        "A station as part of the mean aerodynamic chord.",
-        "(x - x_le_mac)/mac: a fraction, 0.25 is 25 %.",
-        "where mac is not 0",
+    within(
+        |given| positive(given, [2, 3]),
+        "the method holds for a wing area above 0 m^2 and a mean aerodynamic chord above 0 m",
+        each!(GROUP, mass::tail_volume(tail_area: Area, arm: Length, wing_area: Area, mac: Length) -> f64;
+            "Tail volume coefficient.",
+            "tail_area arm/(wing_area mac), the arm from the aerodynamic centre of the airplane less tail to that of the \
+             tail, positive aft. An arm from the centre of gravity gives another number of the same name, which moves \
+             with the loading.",
+            "Everywhere, as a definition.",
+            "definition, as in B. Etkin and L. D. Reid, Dynamics of Flight",
+            "S_t [ft^2] = 24 ; drawing of the tail\n\
+             l_t [ft] = 11.2 ; aerodynamic centre to aerodynamic centre\n\
+             V_h = tail_volume(S_t, l_t, 142 ft^2, 4.6 ft)\n"),
+    ),
+    within(
+        |given| positive(given, [2]),
+        CHORD,
+        each!(GROUP, mass::percent_mac(x: Length, x_le_mac: Length, mac: Length) -> @percent f64;
+            "A station as part of the mean aerodynamic chord.",
+            "(x - x_le_mac)/mac, positive aft of the leading edge of the mean chord. A fraction: 0.25 is 25 %.",
+            "Where mac is not 0.",
+            HANDBOOK,
+            "x_cg [ft] = 6.20 ; weighing report\n\
+             x_le [ft] = 4.95 ; drawing of the wing\n\
+             h = percent_mac(x_cg, x_le, 4.6 ft)\n"),
+    ),
+    within(
+        |given| positive(given, [2]),
+        CHORD,
+        each!(GROUP, mass::station_at_percent(@part_of_chord percent: f64, x_le_mac: Length, mac: Length) -> Length;
+            "The station at a part of the mean aerodynamic chord.",
+            "x_le_mac + percent mac. The part is a fraction or stands in %: 0.25 or 25 %, and a bare 25 is refused.",
+            "Everywhere, as a definition.",
+            HANDBOOK,
+            "x_le [ft] = 4.95 ; drawing of the wing\n\
+             x_ac [ft] = station_at_percent(25 %, x_le, 4.6 ft)\n"),
+    ),
+    points!(GROUP, mass::center_of_gravity(@force_or_mass weight: [Force], x: [Length], z: [Length]) -> {
+            @of_first weight: Force = "sum of the weights, forces or masses as given",
+            x: Length = "station of the centre of gravity",
+            z: Length = "height of the centre of gravity",
+            @of_first_times_length moment: Torque = "sum of weight times station, positive aft of the datum",
+        };
+        "Total weight and centre of gravity of items.",
+        "Sums of moments over the sum of weights; weight, x and z are whole lines, one value for each item, and weights \
+         may be forces or masses. One removed is negative. The moment is a loading sheet's, not nose up.",
+        LEFT_OUT,
         HANDBOOK,
-        "p = percent_mac(6.2 ft, 4.95 ft, 4.6 ft)\n"),
-    each!(GROUP, mass::station_at_percent(percent: f64, x_le_mac: Length, mac: Length) -> Length;
-        "The station at a part of the mean aerodynamic chord.",
-        "x_le_mac + percent mac.",
-        "everywhere",
-        HANDBOOK,
-        "x = station_at_percent(25 %, 4.95 ft, 4.6 ft)\n"),
-    Entry {
-        name: "center_of_gravity",
-        group: GROUP,
-        parameters: &[
-            WEIGHT,
-            Parameter {
-                line: true,
-                ..parameter!(x, Length)
-            },
-            Parameter {
-                line: true,
-                ..parameter!(z, Length)
-            },
-        ],
-        fields: &[
-            Field {
-                gives: Gives::Argument(0, Dimension::NONE),
-                ..field!("weight", Force, None, "total")
-            },
-            field!("x", Length, None, "station of the centre of gravity"),
-            field!("z", Length, None, "its height"),
-            Field {
-                gives: Gives::Argument(0, Dimension::LENGTH),
-                ..field!("moment", Force, None, "about the datum")
-            },
-        ],
-        compute: Compute::Lines(|given, _, out| {
-            let center = engine::mass::center_of_gravity(
-                &typed::<Force>(given, 0),
-                &typed(given, 1),
-                &typed(given, 2),
-            );
-            let fields = [
-                center.weight.si(),
-                center.x.si(),
-                center.z.si(),
-                center.moment.si(),
-            ];
-            out.iter_mut()
-                .zip(fields)
-                .for_each(|(out, value)| *out = vec![value]);
-        }),
-        validity: None,
-        what: "Total weight and centre of gravity of items.",
-        method: "Sums of weights and of weights times stations; weight may be force or mass.",
-        holds: "where the total is not 0",
-        source: HANDBOOK,
-        example: "table item | w [lb] | x [ft] | z [ft] ; weighing\nairframe | 320 | 6.4 | 2.9\npilot | 190 | 5.6 | \
-                  2.6\nend\ncg = center_of_gravity(w, x, z over item)\n",
-    },
-    Entry {
-        name: "pitch_inertia",
-        group: GROUP,
-        parameters: &[
-            Parameter {
-                wants: Wants::MassOrWeight,
-                ..WEIGHT
-            },
-            Parameter {
-                line: true,
-                ..parameter!(x, Length)
-            },
-            Parameter {
-                line: true,
-                ..parameter!(z, Length)
-            },
-            Parameter {
-                line: true,
-                ..parameter!(own, MomentOfInertia)
-            },
-        ],
-        fields: &[field!("", MomentOfInertia, None, "")],
-        compute: Compute::Lines(inertia),
-        validity: None,
-        what: "Mass moment of inertia in pitch about the centre of gravity of the items.",
-        method: "Sum of mass times squared distance, and of each item's own.",
-        holds: "where the total is not 0",
-        source: "parallel axes",
-        example: "table item | m [kg] | x [m] | z [m] | I [kg.m^2] ; weighing\nairframe | 150 | 1.9 | 0.9 | 180\npilot | \
-                  86 | 1.7 | 0.8 | 4\nend\nIyy = pitch_inertia(m, x, z, I over item)\n",
-    },
+        "table item | w [lb] | x [ft] | z [ft] ; weighing report\n\
+         airframe | 320 | 6.4 | 2.9\n\
+         pilot | 190 | 5.6 | 2.6\n\
+         end\n\
+         cg = center_of_gravity(w, x, z over item)\n\
+         x_cg [ft] = cg.x\n"),
+    points!(GROUP, mass::pitch_inertia(@mass_or_weight weight: [Mass], x: [Length], z: [Length],
+            own: [MomentOfInertia]) -> MomentOfInertia;
+        "Mass moment of inertia in pitch about the centre of gravity of the items.",
+        "Sum of own + m ((x - x_cg)^2 + (z - z_cg)^2); all are whole lines, one value for each item. A weight is taken \
+         as the mass of weight/g0; own is an item's moment of inertia about its own centre of gravity, 0 of a point mass.",
+        LEFT_OUT,
+        "parallel-axis theorem",
+        "table item | m [kg] | x [m] | z [m] | own [kg.m^2] ; weighing report\n\
+         airframe | 150 | 1.9 | 0.9 | 180\n\
+         pilot | 86 | 1.7 | 0.8 | 4\n\
+         end\n\
+         I_y [kg.m^2] = pitch_inertia(m, x, z, own over item)\n"),
 ];
-
-/// A line of values as typed quantities.
-fn typed<T: Typed>(given: &[Line<'_>], at: usize) -> Vec<T> {
-    given
-        .get(at)
-        .copied()
-        .unwrap_or_default()
-        .iter()
-        .map(|v| T::from_si(*v))
-        .collect()
-}
-
-/// Weights arrive as the masses that weigh so much.
-fn inertia(given: &[Line<'_>], _: &[&str], out: &mut [Vec<f64>]) {
-    let inertia = engine::mass::pitch_inertia(
-        &typed::<Mass>(given, 0),
-        &typed(given, 1),
-        &typed(given, 2),
-        &typed(given, 3),
-    );
-    out.iter_mut().for_each(|out| *out = vec![inertia.si()]);
-}

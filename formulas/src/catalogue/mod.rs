@@ -2,6 +2,7 @@
 //! dimensions come from the engine functions' own types, so the two cannot disagree.
 
 mod air;
+mod axes;
 mod balance;
 mod general;
 mod macros;
@@ -22,9 +23,10 @@ static GROUPS: &[&[Entry]] = &[
     air::ROWS,
     mass::ROWS,
     moment::ROWS,
-    balance::ROWS,
     tail::ROWS,
+    balance::ROWS,
     general::ROWS,
+    axes::ROWS,
 ];
 
 /// All functions, in reading order.
@@ -43,33 +45,4 @@ pub fn entry(name: &str) -> Option<&'static Entry> {
 }
 
 #[cfg(test)]
-mod tests {
-    use super::{Compute, entries, entry};
-
-    #[test]
-    fn every_row_says_what_it_does_and_where_from() {
-        for row in entries() {
-            let texts = [row.what, row.method, row.holds, row.source, row.example];
-            assert!(texts.iter().all(|t| !t.is_empty()), "{}", row.name);
-            assert!(row.example.contains(row.name), "{}", row.name);
-            assert_eq!(entry(row.name).map(|e| e.name), Some(row.name));
-            assert_eq!(
-                entries().filter(|e| e.name == row.name).count(),
-                1,
-                "{}",
-                row.name
-            );
-        }
-    }
-
-    #[test]
-    fn dimensions_come_from_the_engine() {
-        let row = entry("pitching_moment").expect("a row");
-        let Compute::Each(compute) = row.compute else {
-            panic!("condition by condition")
-        };
-        let mut out = [0.0];
-        compute(&[-0.05, 1531.25, 16.0, 1.5], &[""; 4], &mut out);
-        assert_eq!(out[0], -1837.5);
-    }
-}
+mod tests;

@@ -73,6 +73,10 @@ pub struct Parameter {
     pub default_text: Option<&'static str>,
     /// Whether it is a lift slope per radian, for which a bare number below 1 looks like one per degree.
     pub slope: bool,
+    /// The largest bare number that it can be; above it a percentage was meant.
+    pub most: Option<f64>,
+    /// The words that a text can be; any where there are none here.
+    pub words: &'static [&'static str],
 }
 
 /// What an argument may be.
@@ -86,6 +90,10 @@ pub enum Wants {
     MassOrWeight,
     /// Text.
     Text,
+    /// A number of any dimension.
+    Any,
+    /// A condition.
+    Condition,
 }
 
 /// A result of a catalogue function; a function that gives a single value has one field without a name.
@@ -134,8 +142,9 @@ pub enum Compute {
 /// Where a method holds.
 #[derive(Clone, Copy)]
 pub struct Validity {
-    /// Whether the arguments (in SI) lie where the method holds.
+    /// Whether the arguments (in SI, defaults filled in) lie where the method holds. An optional argument that is not
+    /// given is a NaN; required ones that are missing are not asked about.
     pub holds: fn(&[f64]) -> bool,
-    /// The advice where they do not.
+    /// The advice where they do not: a sentence without its full stop that names the range with units.
     pub advice: &'static str,
 }

@@ -1,61 +1,84 @@
 //! Tail and stability.
 
-use super::macros::{each, field, parameter};
-use super::row::{Compute, Entry, Field, Gives, Parameter, Wants};
+use super::macros::{Argument, at, each, entry, field, parameter, positive, within};
+use super::row::{Compute, Entry, Parameter, Wants};
 use engine::quantity::{Angle, Area, Length, PerAngle, TrueAirspeed, Typed};
 use engine::tail::Maneuver;
 
 const GROUP: &str = "Tail and control";
 
+/// The word of the manoeuvre.
+const MANEUVER: Parameter = Parameter {
+    name: "maneuver",
+    wants: Wants::Text,
+    default_text: Some(Maneuver::PullUp.word()),
+    words: &[Maneuver::PullUp.word(), Maneuver::Turn.word()],
+    ..<f64 as Argument>::PARAMETER
+};
+
 pub(super) static ROWS: &[Entry] = &[
-    each!(GROUP, tail::downwash_angle(CL: f64, aspect_ratio: f64) -> Angle, shown "deg";
-        "Downwash far behind a wing.",
-        "2 CL/(pi A), the far wake of an elliptic wing.",
-        "behind a wing of its own; not for canards, flaps or ground effect",
-        "L. Prandtl, lifting-line theory",
-        "epsilon = downwash_angle(0.5, 6.2)\n"),
-    Entry {
-        name: "pitch_rate_angle",
-        group: GROUP,
-        parameters: &[
-            parameter!(n, f64),
-            parameter!(speed, TrueAirspeed),
-            parameter!(arm, Length),
-            Parameter {
-                wants: Wants::Text,
-                default_text: Some("pull-up"),
-                ..parameter!(maneuver, f64)
-            },
-        ],
-        fields: &[field!("", Angle, Some("deg"), "")],
-        compute: Compute::Each(|given, texts, out| {
-            let at = |i: usize| given.get(i).copied().unwrap_or(f64::NAN);
-            let maneuver = texts.get(3).and_then(|word| Maneuver::of_word(word));
-            let angle = maneuver.map(|maneuver| {
-                let speed = TrueAirspeed::from_si(at(1));
-                engine::tail::pitch_rate_angle(at(0), speed, Length::from_si(at(2)), maneuver).si()
+    within(
+        |given| positive(given, [1]),
+        "the method holds for aspect ratios above 0",
+        each!(GROUP, tail::downwash_angle(CL: f64, aspect_ratio: f64) -> Angle;
+            "Downwash angle far behind a wing, positive downward.",
+            "2 CL/(pi A): twice the induced angle at an elliptically loaded wing.",
+            "A tail in the far wake of a plane, unswept wing without flaps, out of ground effect. Not for a canard, which \
+             flies ahead of the wing.",
+            "L. Prandtl, lifting-line theory",
+            "CL = 0.5 ; of the wing in this condition\n\
+             epsilon = downwash_angle(CL, 6.2)\n"),
+    ),
+    within(
+        |given| positive(given, [1]),
+        "the method holds for speeds above 0 m/s",
+        entry!(GROUP, pitch_rate_angle,
+            &[parameter!(n: f64), parameter!(speed: TrueAirspeed), parameter!(arm: Length), MANEUVER],
+            &[field!("", Angle, "")],
+            Compute::Each(|given, texts, out| {
+                let maneuver = texts.get(3).and_then(|word| Maneuver::of_word(word));
+                let angle: Option<Angle> = maneuver.map(|maneuver| {
+                    let speed = TrueAirspeed::from_si(at(given, 1));
+                    engine::tail::pitch_rate_angle(at(given, 0), speed, Length::from_si(at(given, 2)), maneuver)
+                });
+                out.fill(angle.map_or(f64::NAN, Angle::si));
             });
-            out.fill(angle.unwrap_or(f64::NAN));
-        }),
-        validity: None,
-        what: "Angle of attack that pitching adds at the tail.",
-        method: "(n - 1) g0 arm/speed^2 in a \"pull-up\", (n - 1/n) g0 arm/speed^2 in a \"turn\".",
-        holds: "steady manoeuvres",
-        source: "kinematics of the steady pull-up and the level turn",
-        example: "V [KTAS] = 90\ne = pitch_rate_angle(3.8, V, 11.2 ft)\n",
-    },
-    each!(GROUP, tail::neutral_point(x_ac: Length, slope: PerAngle, S: Area, mac: Length, x_tail: Length,
-        tail_slope: PerAngle, tail_area: Area, downwash_slope: f64, q_ratio: f64 = 1.0,
-        body_slope: PerAngle = 0.0) -> Length;
-        "Stick-fixed neutral point.",
-        "Station about which the moment of wing, body and tail does not change with angle of attack.",
-        "small angles, linear lift",
-        "statics of two lifting surfaces; B. Etkin and L. D. Reid, Dynamics of Flight (from memory)",
-        "x_np [ft] = neutral_point(6.1 ft, 4.7 /rad, 142 ft^2, 4.6 ft, 17.3 ft, 3.6 /rad, 24 ft^2, 0.4)\n"),
-    each!(GROUP, tail::static_margin(x_cg: Length, x_np: Length, mac: Length) -> f64, shown "%";
-        "Static margin, positive when stable.",
-        "(x_np - x_cg)/mac.",
-        "where mac is not 0",
-        "definition",
-        "m = static_margin(6.2 ft, 6.9 ft, 4.6 ft)\n"),
+            "Change of the angle of attack at the tail by the pitch rate of a steady manoeuvre, positive where it adds.",
+            "(n - 1) g0 arm/speed^2 in a \"pull-up\", (n - 1/n) g0 arm/speed^2 in a \"turn\"; the arm from the centre of \
+             gravity to the tail, positive aft.",
+            "Small angles. A level turn has a load factor of 1 or more, or -1 or less: no value between.",
+            "kinematics of the steady manoeuvre: pitch rate times arm over speed",
+            "V [KTAS] = 90 ; of the condition\n\
+             d_alpha = pitch_rate_angle(3.8, V, 11.2 ft)\n\
+             d_turn = pitch_rate_angle(3.8, V, 11.2 ft, \"turn\")\n"),
+    ),
+    within(
+        |given| positive(given, [1, 2, 3, 8]) && at(given, 6) >= 0.0,
+        "the method holds for a lift slope above 0 /rad, a wing area above 0 m^2, a mean aerodynamic chord above 0 m, a \
+         tail area not below 0 m^2 and a ratio of dynamic pressures above 0",
+        each!(GROUP, tail::neutral_point(x_ac: Length, @lift_slope slope: PerAngle, S: Area, mac: Length,
+                x_tail: Length, @lift_slope tail_slope: PerAngle, tail_area: Area, downwash_slope: f64,
+                q_ratio: f64 = 1.0, body_slope: PerAngle = 0.0) -> Length;
+            "Stick-fixed neutral point: station of the aerodynamic centre of the whole airplane.",
+            "x_ac + (t (x_tail - x_ac) - body_slope mac)/(slope + t) with t = q_ratio (tail_area/S) tail_slope \
+             (1 - downwash_slope). slope is that of the airplane less tail on S, body_slope the destabilising one of the \
+             body where x_ac does not hold it. The downwash slope of a canard in upwash is negative.",
+            "Linear lift, no thrust, rigid structure.",
+            "B. Etkin and L. D. Reid, Dynamics of Flight",
+            "a_w [/rad] = 4.7 ; lift slope of the wing\n\
+             a_t [/rad] = 3.6 ; lift slope of the tail\n\
+             x_np [ft] = neutral_point(6.1 ft, a_w, 142 ft^2, 4.6 ft, 17.3 ft, a_t, 24 ft^2, 0.4, q_ratio: 0.9)\n"),
+    ),
+    within(
+        |given| positive(given, [2]),
+        "the method holds for a mean aerodynamic chord above 0 m",
+        each!(GROUP, tail::static_margin(x_cg: Length, x_np: Length, mac: Length) -> @percent f64;
+            "Static margin, positive where the airplane is stable.",
+            "(x_np - x_cg)/mac. A fraction: 0.05 is 5 %.",
+            "Where mac is not 0.",
+            "definition",
+            "x_np [ft] = 6.9 ; neutral point\n\
+             x_cg [ft] = 6.45 ; weighing report\n\
+             margin = static_margin(x_cg, x_np, 4.6 ft)\n"),
+    ),
 ];

@@ -215,6 +215,7 @@ impl Checker<'_> {
                     ..weight
                 });
             }
+            Wants::Any | Wants::Condition => return Some(typed),
             Wants::ForceOrMass => Dimension::FORCE,
             Wants::Dimension(dimension) => dimension,
         };
@@ -249,7 +250,25 @@ impl Checker<'_> {
                 self.report(expr.span, fault);
             }
         }
+        if let Some(most) = parameter.most
+            && typed.marks.bare
+            && self.constant_of(typed.node).is_some_and(|v| v > most)
+        {
+            let text = format!("at most {most}, such as 0.25 or 25 %");
+            self.report_range(entry, parameter, expr.span, text);
+            return None;
+        }
         Some(typed)
+    }
+
+    /// Tells that an argument lies outside what it can be at all.
+    fn report_range(&mut self, entry: &Entry, parameter: &Parameter, span: Span, text: String) {
+        let fault = Fault::ArgumentRange {
+            function: entry.name.to_string(),
+            argument: parameter.name.to_string(),
+            text,
+        };
+        self.report(span, fault);
     }
 
     /// A number of the right dimension; a lone `0` and `none` fit any.
@@ -292,6 +311,14 @@ impl Checker<'_> {
         expr: &Expr,
         typed: Typed,
     ) -> Option<Typed> {
+        if let ExprKind::Text(word) = &expr.kind
+            && !parameter.words.is_empty()
+            && !parameter.words.contains(&word.as_str())
+        {
+            let words: Vec<String> = parameter.words.iter().map(|w| format!("\"{w}\"")).collect();
+            self.report_range(entry, parameter, expr.span, words.join(" or "));
+            return None;
+        }
         if typed.kind == Kind::Text || typed.number_kind().any {
             return Some(typed);
         }

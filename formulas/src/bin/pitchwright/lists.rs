@@ -95,6 +95,8 @@ fn wanted(wants: Wants) -> String {
         Wants::Dimension(dimension) => dimension_text(dimension),
         Wants::ForceOrMass | Wants::MassOrWeight => "force or mass".to_owned(),
         Wants::Text => "text".to_owned(),
+        Wants::Any => "any dimension".to_owned(),
+        Wants::Condition => "condition".to_owned(),
     }
 }
 
