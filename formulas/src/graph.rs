@@ -82,6 +82,10 @@ fn edges_of(
         }
     };
     statement_uses(statement, &mut report);
+    // The symbols that an `unknown` solves for stand in its own equations.
+    if matches!(statement.kind, StatementKind::Unknown(_)) {
+        edges.retain(|target| *target != index);
+    }
     edges.sort_unstable();
     edges.dedup();
     edges

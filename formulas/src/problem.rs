@@ -425,6 +425,10 @@ pub enum Fault {
     AxisNumbers {
         axis: String,
     },
+    /// Steps that do not lead from one end of the axis to the other; the span is the step or the count.
+    AxisSteps {
+        axis: String,
+    },
     AxisPointTwice {
         axis: String,
         value: String,

@@ -1,1 +1,4 @@
 //! Promises across crates: what the tests share.
+
+pub mod golden;
+pub mod random;

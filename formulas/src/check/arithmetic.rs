@@ -10,7 +10,7 @@ use engine::quantity::{Dimension, Exponent, SpeedKind};
 impl Checker<'_> {
     /// `-x`.
     pub(crate) fn opposite(&mut self, inner: Typed, span: Span) -> Option<Typed> {
-        let inner = self.wants_number(inner, "the sign -")?;
+        let inner = self.wants_number(inner, "what stands behind -")?;
         let inner = self.not_on_a_scale(inner)?;
         let node = self.negate(inner.node);
         let marks = Marks {
@@ -49,7 +49,7 @@ impl Checker<'_> {
         right: Typed,
         sign: BinaryOp,
     ) -> Option<(Typed, Typed)> {
-        let place = format!("the sign {}", sign.sign());
+        let place = format!("what stands beside {}", sign.sign());
         let left = self
             .wants_number(left, &place)
             .and_then(|t| self.not_on_a_scale(t));
@@ -82,7 +82,7 @@ impl Checker<'_> {
             literal: left.marks.literal && right.marks.literal,
             bare: left.marks.bare && right.marks.bare,
             difference,
-            ..Marks::default()
+            ..Marks::systems_of(&[&left, &right])
         };
         Some(Typed {
             node,
@@ -220,7 +220,7 @@ impl Checker<'_> {
             airspeed: a.airspeed.or(b.airspeed),
             density: a.density.or(b.density),
             any_density: a.any_density || b.any_density,
-            ..Marks::default()
+            ..Marks::systems_of(&[left, right])
         };
         // Told where the two meet, not again at every further factor.
         let told = a.airspeed.is_some() && a.any_density || b.airspeed.is_some() && b.any_density;
@@ -250,7 +250,7 @@ impl Checker<'_> {
             self.report(
                 exponent.span,
                 Fault::NotANumber {
-                    place: "an exponent".to_string(),
+                    place: "the exponent".to_string(),
                     value,
                 },
             );
@@ -264,7 +264,7 @@ impl Checker<'_> {
             literal: base.marks.literal && exponent.marks.literal,
             bare: base.marks.bare && exponent.marks.bare,
             airspeed: factors(&base).airspeed,
-            ..Marks::default()
+            ..Marks::systems_of(&[&base])
         };
         let Some(value) = fixed else {
             if kind.dimension != Dimension::NONE && !kind.dimension.is_number() {

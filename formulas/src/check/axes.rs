@@ -115,7 +115,7 @@ impl Checker<'_> {
                 let (a, b) = (unit.unit.from_si(a?), unit.unit.from_si(b?));
                 let whole = n == n.floor() && n >= 1.0;
                 if !whole || (n > 1.0 && a == b) {
-                    self.report(count.span, Fault::AxisNumbers { axis: name.clone() });
+                    self.report(count.span, Fault::AxisSteps { axis: name.clone() });
                     return None;
                 }
                 self.within_labels(name, count.span, n)?;
@@ -155,7 +155,7 @@ impl Checker<'_> {
         if !steps.is_finite() || steps < 0.0 {
             self.report(
                 span,
-                Fault::AxisNumbers {
+                Fault::AxisSteps {
                     axis: name.to_string(),
                 },
             );

@@ -499,7 +499,7 @@ impl Checker<'_> {
             kind: Kind::Number(kind),
             unit,
             span,
-            marks: Marks::default(),
+            marks: Marks::systems_of(&refs),
         })
     }
 }

@@ -24,7 +24,7 @@ impl Checker<'_> {
                 return self.text_mismatch(op, left, right);
             }
         } else {
-            let place = format!("the sign {}", op.sign());
+            let place = format!("what stands beside {}", op.sign());
             let l = self.wants_number(left.clone(), &place);
             let r = self.wants_number(right.clone(), &place);
             let (l, r) = (l?, r?);
@@ -48,7 +48,7 @@ impl Checker<'_> {
         } else {
             left
         };
-        let place = format!("the sign {}", op.sign());
+        let place = format!("what stands beside {}", op.sign());
         let wanted = if other.kind == Kind::Text {
             "a number"
         } else {
@@ -65,8 +65,8 @@ impl Checker<'_> {
         right: Typed,
         span: Span,
     ) -> Option<Typed> {
-        let left = self.wants_condition(left, op.sign());
-        let right = self.wants_condition(right, op.sign());
+        let left = self.wants_condition(left, &format!("what stands before {}", op.sign()));
+        let right = self.wants_condition(right, &format!("what stands behind {}", op.sign()));
         let (left, right) = (left?, right?);
         let axes = self.axes_of_all(&[left.node, right.node]);
         let node = self.node(Op::Binary(op, left.node, right.node), axes);
@@ -87,7 +87,7 @@ impl Checker<'_> {
         otherwise: Typed,
         span: Span,
     ) -> Option<Typed> {
-        let condition = self.wants_condition(condition, "if")?;
+        let condition = self.wants_condition(condition, "what stands behind if")?;
         let any = |t: &Typed| matches!(t.kind, Kind::Number(n) if n.any);
         let kind = match (then.kind, otherwise.kind) {
             (Kind::Number(_), Kind::Number(_)) => {
@@ -96,21 +96,22 @@ impl Checker<'_> {
             (a, b) if a == b && !matches!(a, Kind::Record(_)) => a,
             (a @ (Kind::Text | Kind::Condition), _) if any(&otherwise) => a,
             (_, b @ (Kind::Text | Kind::Condition)) if any(&then) => b,
-            (Kind::Record(_), _) => return self.wants_number(then, "if"),
-            (_, Kind::Record(_)) => return self.wants_number(otherwise, "if"),
+            (Kind::Record(_), _) => return self.wants_number(then, "what stands behind then"),
+            (_, Kind::Record(_)) => return self.wants_number(otherwise, "what stands behind else"),
             (a, b) => {
                 let wanted = super::operand::kind_name(a);
-                return self.wrong_kind(otherwise.span, "else", wanted, b);
+                return self.wrong_kind(otherwise.span, "what stands behind else", wanted, b);
             }
         };
         let unit = self.unit_of_operands(&[&then, &otherwise]);
         let node = self.select(condition.node, then.node, otherwise.node);
+        let marks = Marks::systems_of(&[&then, &otherwise]);
         Some(Typed {
             node,
             kind,
             unit,
             span,
-            marks: Marks::default(),
+            marks,
         })
     }
 

@@ -499,7 +499,7 @@ impl Checker<'_> {
         }
         result.map(|typed| Typed {
             span,
-            marks: Marks::default(),
+            marks: Marks::systems_of(&[&typed]),
             ..typed
         })
     }

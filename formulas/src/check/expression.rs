@@ -28,7 +28,7 @@ impl Checker<'_> {
             }
             ExprKind::Not(inner) => {
                 let inner = self.expression(inner)?;
-                let inner = self.wants_condition(inner, "not")?;
+                let inner = self.wants_condition(inner, "what stands behind not")?;
                 let axes = self.axes_of(inner.node);
                 let node = self.node(Op::Not(inner.node), axes);
                 Some(Typed {
@@ -150,10 +150,13 @@ impl Checker<'_> {
             });
         };
         let shown = self.resolve_unit(unit)?;
-        let mut si = shown.unit.to_si(value);
+        let mut value = value;
         for (part, unit) in more {
-            si += self.resolve_unit(unit)?.unit.to_si(*part);
+            // Counted in the first unit, so that 1 ft 6 in is 1.5 ft to the last digit.
+            let smaller = self.resolve_unit(unit)?.unit;
+            value += smaller.factor.over(shown.unit.factor).scale(*part);
         }
+        let si = shown.unit.to_si(value);
         let dimension = shown.unit.dimension;
         marks.scale = shown.unit.absolute;
         marks.sea_level = dimension == Dimension::DENSITY && (si - constants::RHO0).abs() <= 1e-12;
@@ -163,6 +166,7 @@ impl Checker<'_> {
             ..NumberKind::of(dimension)
         };
         let node = self.number(si);
+        marks = marks.in_system_of(Some(&shown));
         // `[1]` is a unit of pure numbers: nothing is shown behind the value.
         let unit = (!shown.text.is_empty()).then_some(shown);
         Some(Typed {
@@ -280,6 +284,7 @@ impl Checker<'_> {
             (quantity.kind, quantity.axes)
         };
         let node = self.node(Op::Quantity(quantity), axes);
+        let marks = marks.in_system_of(unit.as_ref());
         Some(Typed {
             node,
             kind,

@@ -179,6 +179,7 @@ impl Checker<'_> {
         };
         let any = operands.iter().all(|t| t.number_kind().any);
         let literal = operands.iter().all(|t| t.marks.literal);
+        let systems = Marks::systems_of(&operands.iter().collect::<Vec<_>>());
         let node = self.function(function, operands.iter().map(|t| t.node).collect());
         let kind = Kind::Number(NumberKind { any, ..kind });
         Some(Typed {
@@ -186,10 +187,7 @@ impl Checker<'_> {
             kind,
             unit,
             span,
-            marks: Marks {
-                literal,
-                ..Marks::default()
-            },
+            marks: Marks { literal, ..systems },
         })
     }
 

@@ -26,7 +26,7 @@ use crate::problem::{Fault, Located};
 use crate::program::{Kind, NodeId, NumberKind, Program, QuantityId, ShownUnit, TextId};
 use crate::span::Span;
 use crate::syntax::{StatementKind, Tree};
-use engine::quantity::{Dimension, SpeedKind, constants};
+use engine::quantity::{Dimension, SpeedKind, System, constants};
 use std::collections::HashMap;
 use std::rc::Rc;
 
@@ -71,6 +71,31 @@ pub(crate) struct Marks {
     pub(crate) density: Option<Span>,
     /// A factor of the product is any density at all.
     pub(crate) any_density: bool,
+    /// Something typed or named in it has a US unit.
+    pub(crate) us: bool,
+    /// Something typed or named in it has a metric unit.
+    pub(crate) metric: bool,
+}
+
+impl Marks {
+    /// The unit systems of a value with a unit.
+    pub(crate) fn in_system_of(self, unit: Option<&ShownUnit>) -> Self {
+        let system = unit.map(|u| u.unit.system);
+        Marks {
+            us: system == Some(System::Us),
+            metric: system == Some(System::Metric),
+            ..self
+        }
+    }
+
+    /// The unit systems of operands, and nothing else of them.
+    pub(crate) fn systems_of(operands: &[&Typed]) -> Self {
+        Marks {
+            us: operands.iter().any(|t| t.marks.us),
+            metric: operands.iter().any(|t| t.marks.metric),
+            ..Marks::default()
+        }
+    }
 }
 
 /// What a symbol means once its line is checked.

@@ -45,7 +45,7 @@ impl Checker<'_> {
         let mut gone = AxisSet::NONE;
         for ((axis, _, mode), selection) in picked.iter().zip(selections) {
             if !has.has(*axis) {
-                let function = format!("{} at", self.words(value.span));
+                let function = "at".to_string();
                 let fault = Fault::AxisNotVaried {
                     function,
                     axis: selection.axis.text.clone(),
@@ -75,7 +75,7 @@ impl Checker<'_> {
         Some(Typed {
             node,
             span,
-            marks: Marks::default(),
+            marks: Marks::systems_of(&[&value]),
             ..value
         })
     }

@@ -145,7 +145,7 @@ impl Checker<'_> {
             kind,
             unit,
             span,
-            marks: Marks::default(),
+            marks: Marks::systems_of(&[&value]),
         })
     }
 
@@ -183,7 +183,7 @@ impl Checker<'_> {
             kind,
             unit,
             span,
-            marks: Marks::default(),
+            marks: Marks::systems_of(&[&value]),
         })
     }
 

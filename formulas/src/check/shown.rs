@@ -193,14 +193,10 @@ impl Checker<'_> {
 
     /// Whether an operand has a US unit and none a metric one; where none has either, whether the sheet prefers US.
     fn is_us(&self, operands: &[&Typed]) -> bool {
-        let system = |system: System| {
-            operands
-                .iter()
-                .any(|t| t.unit.as_ref().is_some_and(|u| u.unit.system == system))
-        };
-        if system(System::Metric) {
+        if operands.iter().any(|t| t.marks.metric) {
             return false;
         }
-        system(System::Us) || self.prefer.iter().any(|u| u.unit.system == System::Us)
+        operands.iter().any(|t| t.marks.us)
+            || self.prefer.iter().any(|u| u.unit.system == System::Us)
     }
 }

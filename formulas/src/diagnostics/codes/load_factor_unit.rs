@@ -6,7 +6,7 @@ use crate::diagnostics::wording::short;
 
 pub(super) const ROW: Code = Code {
     code: "load-factor-unit",
-    severity: Severity::Error,
+    severity: Severity::Advice,
     what: "A load factor is a bare number.",
     why: "Typed so, 3.8 g is a mass of 3.8 grams, and lift would come out as mass times weight.",
     example: Some("n = 3.8 g\nL [lb] = n*560 lb\n"),

@@ -13,6 +13,7 @@ mod axis_not_varied;
 mod axis_numbers;
 mod axis_order;
 mod axis_point_twice;
+mod axis_steps;
 mod below_the_line;
 mod bracket_after_number;
 mod bracket_dimension;
@@ -183,6 +184,7 @@ pub const CODES: &[&Code] = &[
     &two_axes::ROW,
     &axis_order::ROW,
     &axis_numbers::ROW,
+    &axis_steps::ROW,
     &axis_point_twice::ROW,
     &axis_empty::ROW,
     &axis_limit::ROW,
@@ -306,6 +308,7 @@ told_by! {
     TwoAxes { axes } => two_axes::draft(site, axes),
     AxisOrder { axis } => axis_order::draft(axis),
     AxisNumbers { axis } => axis_numbers::draft(site, axis),
+    AxisSteps { axis } => axis_steps::draft(site, axis),
     AxisPointTwice { axis, value } => axis_point_twice::draft(axis, value),
     AxisEmpty { axis } => axis_empty::draft(axis),
     AxisLimit { limit } => axis_limit::draft(*limit),
