@@ -194,15 +194,115 @@ fn line_starts(text: &str) -> Vec<usize> {
     if !bytes.is_empty() {
         starts.push(0);
     }
-    for (at, byte) in bytes.iter().enumerate() {
+    let mut pieces = bytes.chunks_exact(8);
+    let mut from = 0;
+    for piece in pieces.by_ref() {
+        if piece.try_into().is_ok_and(may_end_line) {
+            starts_in(bytes, from, piece, &mut starts);
+        }
+        from += piece.len();
+    }
+    starts_in(bytes, from, pieces.remainder(), &mut starts);
+    starts
+}
+
+/// Whether one of eight bytes is a line feed or a carriage return, or, rarely, another that is looked at in vain.
+fn may_end_line(piece: [u8; 8]) -> bool {
+    // A byte below 14 borrows into its highest bit; one from 128 on has it set from the start and is left out.
+    const LOW: u64 = 0x0e0e_0e0e_0e0e_0e0e;
+    const HIGHEST: u64 = 0x8080_8080_8080_8080;
+    let word = u64::from_le_bytes(piece);
+    word.wrapping_sub(LOW) & !word & HIGHEST != 0
+}
+
+/// The line starts behind the line ends of a piece that begins at byte `from`.
+fn starts_in(bytes: &[u8], from: usize, piece: &[u8], starts: &mut Vec<usize>) {
+    for (at, byte) in piece.iter().enumerate() {
+        let next = from + at + 1;
         let ends = match byte {
             b'\n' => true,
-            b'\r' => bytes.get(at + 1) != Some(&b'\n'),
+            b'\r' => bytes.get(next) != Some(&b'\n'),
             _ => false,
         };
-        if ends && at + 1 < bytes.len() {
-            starts.push(at + 1);
+        if ends && next < bytes.len() {
+            starts.push(next);
         }
     }
-    starts
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn lines_end_in_three_ways() {
+        let source = Source::new("a\r\nb\rc\n\nd");
+        let lines: Vec<&str> = (0..source.line_count())
+            .map(|at| &source.text()[source.line(at)])
+            .collect();
+        assert_eq!(lines, ["a\r\n", "b\r", "c\n", "\n", "d"]);
+        assert_eq!(Source::new("a\n").line_count(), 1);
+        assert_eq!(Source::new("").line_count(), 0);
+    }
+
+    #[test]
+    fn places_count_characters_and_utf_16_units() {
+        let text = "\u{feff}aé\n\u{1d6fc}b\n";
+        let source = Source::new(text);
+        for (byte, line, column, column16) in [
+            (0, 1, 1, 1),
+            (3, 1, 1, 1),
+            (4, 1, 2, 2),
+            (6, 1, 3, 3),
+            (7, 2, 1, 1),
+            (11, 2, 2, 3),
+            (12, 2, 3, 4),
+        ] {
+            assert_eq!(
+                source.place(byte),
+                Place {
+                    line,
+                    column,
+                    column16
+                },
+                "{byte}"
+            );
+            if byte > 0 {
+                assert_eq!(source.byte(line, column), byte);
+                assert_eq!(source.byte16(line, column16), byte);
+            }
+        }
+        assert_eq!(source.byte(2, 99), 12);
+        assert_eq!(source.byte(9, 1), text.len());
+    }
+
+    #[test]
+    fn what_is_beyond_the_limits_is_not_read() {
+        let limits = Limits {
+            bytes: 10,
+            lines: 2,
+            ..Limits::USUAL
+        };
+        let read = |text| {
+            let source = Source::within(text, &limits);
+            (
+                source.text(),
+                source
+                    .problems()
+                    .iter()
+                    .map(|one| one.fault.clone())
+                    .collect::<Vec<_>>(),
+            )
+        };
+        assert_eq!(read("1234\n6789\n"), ("1234\n6789\n", vec![]));
+        let size = |bytes| Fault::SizeLimit { bytes, limit: 10 };
+        assert_eq!(read("1234\n6789\n1"), ("1234\n6789\n", vec![size(11)]));
+        assert_eq!(read("1234\n67890123"), ("1234\n", vec![size(13)]));
+        assert_eq!(read("12345678\n\r\n"), ("12345678\n", vec![size(11)]));
+        assert_eq!(read("12345678901"), ("", vec![size(11)]));
+        assert_eq!(
+            read("1\n2\n3\n4"),
+            ("1\n2\n", vec![Fault::LineLimit { lines: 4, limit: 2 }])
+        );
+    }
 }

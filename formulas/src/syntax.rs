@@ -253,8 +253,8 @@ pub struct UnitText {
     /// Where the text stands (without its brackets).
     pub span: Span,
     pub factors: Vec<UnitFactor>,
-    /// `EAS`, `CAS` or `TAS` behind a unit in a bracket.
-    pub kind: Option<Name>,
+    /// `EAS`, `CAS` or `TAS` behind a unit in a bracket. Boxed, as it is rare and a tree holds many units.
+    pub kind: Option<Box<Name>>,
 }
 
 /// One unit name and its power.
@@ -268,12 +268,47 @@ pub struct UnitFactor {
 }
 
 /// An expression.
-#[derive(Clone, PartialEq, Debug)]
+#[derive(PartialEq, Debug)]
 pub struct Expr {
     /// Where it stands, outer brackets left off.
     pub span: Span,
     /// What it says.
     pub kind: ExprKind,
+}
+
+impl Clone for Expr {
+    /// Walks down a chain of signs step by step: a sum of 2,000 terms is as deep as it is long, and a call for each
+    /// would need more stack than a browser gives.
+    fn clone(&self) -> Self {
+        let mut chain = Vec::new();
+        let mut first = self;
+        while let ExprKind::Binary {
+            op,
+            op_span,
+            left,
+            right,
+        } = &first.kind
+        {
+            chain.push((first.span, *op, *op_span, right));
+            first = left;
+        }
+        let leaf = Expr {
+            span: first.span,
+            kind: first.kind.clone(),
+        };
+        chain
+            .into_iter()
+            .rev()
+            .fold(leaf, |left, (span, op, op_span, right)| Expr {
+                span,
+                kind: ExprKind::Binary {
+                    op,
+                    op_span,
+                    left: Box::new(left),
+                    right: right.clone(),
+                },
+            })
+    }
 }
 
 /// What an expression says.

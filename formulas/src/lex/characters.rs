@@ -52,6 +52,21 @@ pub(crate) fn is_dash(character: char) -> bool {
     matches!(character, '-' | '\u{2212}' | '\u{2010}'..='\u{2015}')
 }
 
+/// For each byte whether it is a character that a name may go on with by itself.
+static PLAIN_PART: [bool; 256] = {
+    let mut table = [false; 256];
+    let mut byte = 0u8;
+    while byte < 128 {
+        table[byte as usize] = byte.is_ascii_alphanumeric() || matches!(byte, b'_' | b'\'');
+        byte += 1;
+    }
+    table
+};
+
+fn is_plain_part(byte: u8) -> bool {
+    PLAIN_PART[byte as usize]
+}
+
 /// How many bytes of `text` a name at its start takes; 0 if none starts there.
 #[must_use]
 pub(crate) fn name_length(text: &str) -> usize {
@@ -62,7 +77,7 @@ pub(crate) fn name_length(text: &str) -> usize {
     }
     let plain = bytes
         .iter()
-        .position(|byte| !(byte.is_ascii_alphanumeric() || matches!(byte, b'_' | b'\'')))
+        .position(|byte| !is_plain_part(*byte))
         .unwrap_or(bytes.len());
     if bytes.get(plain).is_none_or(u8::is_ascii) {
         return plain;

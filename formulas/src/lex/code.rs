@@ -9,12 +9,19 @@ use crate::token::TokenKind;
 
 /// Tokens of `text` from byte `from` up to byte `to`, which lie in one line, its end left off.
 pub(crate) fn code(text: &str, from: usize, to: usize, out: &mut Tokens) {
+    let bytes = text.as_bytes();
     let mut at = from;
-    while let Some(rest) = text.get(at..to).filter(|rest| !rest.is_empty()) {
-        let (kind, length) = token(
-            rest,
-            at.checked_sub(1).and_then(|at| text.as_bytes().get(at)),
-        );
+    while at < to {
+        if bytes.get(at) == Some(&b' ') && bytes.get(at + 1).is_some_and(u8::is_ascii_graphic) {
+            out.push(TokenKind::Blank, at, at + 1);
+            at += 1;
+            continue;
+        }
+        let Some(rest) = text.get(at..to) else {
+            return;
+        };
+        let before = at.checked_sub(1).and_then(|at| bytes.get(at));
+        let (kind, length) = token(rest, before);
         out.push(kind, at, at + length);
         at += length;
         if matches!(kind, TokenKind::Number | TokenKind::BrokenNumber) {

@@ -5,6 +5,8 @@ pub(crate) mod code;
 pub(crate) mod labels;
 pub(crate) mod number;
 pub(crate) mod signs;
+#[cfg(test)]
+mod tests;
 pub mod words;
 
 use crate::span::Span;

@@ -1,6 +1,6 @@
 //! `vary`, `unknown`: statements that give a name a range.
 
-use super::cursor::{Cursor, Read, Unread, error, foreign};
+use super::cursor::{Cursor, Inside, Read, Unread, error, foreign};
 use super::operand::unquoted;
 use crate::problem::Fault;
 use crate::syntax::{
@@ -98,17 +98,17 @@ impl Cursor<'_> {
     }
 
     fn point_range(&mut self) -> Read<VaryPoints> {
-        let from = self.arithmetic()?;
+        let from = *self.arithmetic()?;
         if !self.eat_word("to") {
             return Ok(VaryPoints::List(vec![from]));
         }
-        let to = self.arithmetic()?;
+        let to = *self.arithmetic()?;
         if self.eat_word("step") {
-            let step = self.arithmetic()?;
+            let step = *self.arithmetic()?;
             return Ok(VaryPoints::Step { from, to, step });
         }
         if self.eat_word("count") {
-            let count = self.arithmetic()?;
+            let count = *self.arithmetic()?;
             return Ok(VaryPoints::Count { from, to, count });
         }
         self.expected("`step` or `count`")
@@ -167,18 +167,18 @@ impl Cursor<'_> {
 
     fn bounds(&mut self) -> Read<(Expr, Expr)> {
         self.stops = &["such"];
-        let low = self.arithmetic()?;
+        let low = *self.arithmetic()?;
         if !self.eat(TokenKind::Word(Word::And)) {
             return self.expected("`and`");
         }
-        let high = self.arithmetic()?;
+        let high = *self.arithmetic()?;
         self.stops = &[];
         Ok((low, high))
     }
 
     /// Passes what belongs to a broken entry. Always false: the statement has a problem.
     fn pass_to_next_unknown(&mut self) -> bool {
-        (self.stops, self.open, self.nesting, self.commas) = (&[], 0, 0, false);
+        (self.stops, self.open, self.nesting, self.inside) = (&[], 0, 0, Inside::Expression);
         while self.peek().is_some() && !self.at_word("such") {
             let next = self.kind() == Some(TokenKind::Comma)
                 && self.kind_ahead(1) == Some(TokenKind::Name);
@@ -200,10 +200,10 @@ impl Cursor<'_> {
         }
         let mut equations = Vec::new();
         loop {
-            let left = self.arithmetic()?;
+            let left = *self.arithmetic()?;
             let sign = self.peek();
             let fine = self.equals()?;
-            let mut right = self.arithmetic()?;
+            let mut right = *self.arithmetic()?;
             if !fine {
                 right.kind = ExprKind::Error;
             }

@@ -16,6 +16,17 @@ pub(super) struct Unread;
 /// What a rule of the grammar yields.
 pub(super) type Read<T> = Result<T, Unread>;
 
+/// What a pair of brackets holds.
+#[derive(Clone, Copy, PartialEq, Eq, Debug)]
+pub(super) enum Inside {
+    /// An expression; also outside all brackets.
+    Expression,
+    /// Arguments, between which commas stand.
+    Arguments,
+    /// The selections of a pick.
+    Selections,
+}
+
 /// The place reached in the tokens of a statement, blanks and remarks left out.
 pub(super) struct Cursor<'a> {
     /// The statement's text, and what follows it.
@@ -32,8 +43,8 @@ pub(super) struct Cursor<'a> {
     pub(super) operators: u32,
     /// Brackets open at the place.
     pub(super) open: u32,
-    /// Whether a comma separates arguments here.
-    pub(super) commas: bool,
+    /// What the innermost brackets around the place hold.
+    pub(super) inside: Inside,
     /// Words that end an expression outside brackets.
     pub(super) stops: &'static [&'static str],
 }
@@ -50,7 +61,7 @@ impl<'a> Cursor<'a> {
             nesting: 0,
             operators: 0,
             open: 0,
-            commas: false,
+            inside: Inside::Expression,
             stops: &[],
         }
     }
@@ -253,6 +264,18 @@ impl<'a> Cursor<'a> {
         }
         Ok(())
     }
+}
+
+/// An expression on its way to its place in the tree. Rules hand on boxes, so that a deep text needs little stack.
+pub(super) type Node = Box<Expr>;
+
+pub(super) fn node(span: Span, kind: ExprKind) -> Node {
+    Box::new(Expr { span, kind })
+}
+
+/// A node that could not be read.
+pub(super) fn unread(span: Span) -> Node {
+    Box::new(error(span))
 }
 
 /// An expression that could not be read.

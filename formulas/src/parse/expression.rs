@@ -1,6 +1,6 @@
 //! Expressions from the loosest sign to the tightest, and `if`.
 
-use super::cursor::{Cursor, Read, Unread, error, foreign};
+use super::cursor::{Cursor, Inside, Node, Read, Unread, error, foreign, node, unread};
 use super::number::is_absolute;
 use crate::lex::number::power_value;
 use crate::lex::signs::mend_of;
@@ -32,13 +32,17 @@ struct Infix {
 
 impl Cursor<'_> {
     /// All tokens up to index `end` as one expression; what cannot be read becomes an error.
-    pub(super) fn slot(&mut self, end: usize, rule: impl FnOnce(&mut Self) -> Read<Expr>) -> Expr {
+    #[inline(never)]
+    pub(super) fn slot(&mut self, end: usize, rule: impl FnOnce(&mut Self) -> Read<Node>) -> Expr {
         let (first, outer, nesting) = (self.at, self.end, self.nesting);
         self.end = end;
         let read = rule(self).and_then(|expr| self.slot_end().map(|()| expr));
-        let expr = read.unwrap_or_else(|Unread| error(self.stretch(first, end)));
+        let expr = match read {
+            Ok(node) => *node,
+            Err(Unread) => error(self.stretch(first, end)),
+        };
         (self.at, self.end, self.nesting) = (end, outer, nesting);
-        (self.open, self.commas) = (0, false);
+        (self.open, self.inside) = (0, Inside::Expression);
         expr
     }
 
@@ -80,7 +84,7 @@ impl Cursor<'_> {
     }
 
     /// An expression where `if` may stand.
-    pub(super) fn whole(&mut self) -> Read<Expr> {
+    pub(super) fn whole(&mut self) -> Read<Node> {
         if self.kind() == Some(TokenKind::Word(Word::If)) {
             return self.conditional();
         }
@@ -88,17 +92,17 @@ impl Cursor<'_> {
     }
 
     /// An expression where `if` may not stand.
-    pub(super) fn condition(&mut self) -> Read<Expr> {
+    pub(super) fn condition(&mut self) -> Read<Node> {
         self.binary(OR)
     }
 
     /// An expression that ends before comparisons, `and` and `or`.
-    pub(super) fn arithmetic(&mut self) -> Read<Expr> {
+    pub(super) fn arithmetic(&mut self) -> Read<Node> {
         self.binary(ADD)
     }
 
     /// `if c then a else b`.
-    pub(super) fn conditional(&mut self) -> Read<Expr> {
+    pub(super) fn conditional(&mut self) -> Read<Node> {
         let first = self.at;
         let word = self.here();
         self.bump();
@@ -118,18 +122,15 @@ impl Cursor<'_> {
         let otherwise = self.whole()?;
         self.leave();
         let kind = ExprKind::If {
-            condition: Box::new(condition),
-            then: Box::new(then),
-            otherwise: Box::new(otherwise),
+            condition,
+            then,
+            otherwise,
         };
-        Ok(Expr {
-            span: self.since(first),
-            kind,
-        })
+        Ok(node(self.since(first), kind))
     }
 
     /// Operands joined by signs that bind at least as tightly as `least`.
-    fn binary(&mut self, least: u8) -> Read<Expr> {
+    fn binary(&mut self, least: u8) -> Read<Node> {
         let first = self.at;
         let mut left = self.prefix(least)?;
         loop {
@@ -192,7 +193,7 @@ impl Cursor<'_> {
     }
 
     /// The sign that stands next, and what is right of it. `first` is the token at which `left` begins.
-    fn operation(&mut self, first: usize, left: Expr, infix: Infix) -> Read<Expr> {
+    fn operation(&mut self, first: usize, left: Node, infix: Infix) -> Read<Node> {
         self.count_operator()?;
         let sign = self.at;
         let raised = self.peek().filter(|token| token.kind == TokenKind::Raised);
@@ -216,33 +217,26 @@ impl Cursor<'_> {
         }
         let span = self.since(first);
         if infix.foreign {
-            return Ok(error(span));
+            return Ok(unread(span));
         }
         let kind = ExprKind::Binary {
             op: infix.op,
             op_span,
-            left: Box::new(left),
-            right: Box::new(right),
+            left,
+            right,
         };
-        Ok(Expr { span, kind })
+        Ok(node(span, kind))
     }
 
     /// A power in raised digits, and a further power of it.
-    fn raised_exponent(&mut self, token: Token) -> Read<Expr> {
+    fn raised_exponent(&mut self, token: Token) -> Read<Node> {
         let value = f64::from(power_value(self.word_of(token)));
-        let number = |value: f64| Expr {
-            span: token.span,
-            kind: ExprKind::Number {
-                value,
-                unit: None,
-                more: Vec::new(),
-            },
+        let number = |value: f64| {
+            let (unit, more) = (None, Vec::new());
+            node(token.span, ExprKind::Number { value, unit, more })
         };
         let exponent = if value < 0.0 {
-            Expr {
-                span: token.span,
-                kind: ExprKind::Negate(Box::new(number(-value))),
-            }
+            node(token.span, ExprKind::Negate(number(-value)))
         } else {
             number(value)
         };
@@ -258,7 +252,7 @@ impl Cursor<'_> {
     }
 
     /// `a < b < c`: the comparison from token `first` on, its first sign at token `sign`, met a second sign.
-    fn chained(&mut self, first: usize, sign: usize) -> Read<Expr> {
+    fn chained(&mut self, first: usize, sign: usize) -> Read<Node> {
         let mut mend = self.since(first).of(self.text).to_owned();
         let mut operand = self.stretch(sign + 1, self.at);
         while let Some(infix) = self.infix().filter(|next| next.op.compares()) {
@@ -281,11 +275,11 @@ impl Cursor<'_> {
         const LONGEST: usize = 500;
         let mend = (mend.len() <= LONGEST).then_some(Mend { span, text: mend });
         self.note(span, Fault::ChainedComparison { mend });
-        Ok(error(span))
+        Ok(unread(span))
     }
 
     /// A sign before an operand, or the operand.
-    fn prefix(&mut self, least: u8) -> Read<Expr> {
+    fn prefix(&mut self, least: u8) -> Read<Node> {
         let (first, Some(token)) = (self.at, self.peek()) else {
             return self.expected("a value");
         };
@@ -298,22 +292,19 @@ impl Cursor<'_> {
             TokenKind::Word(Word::Not) if least <= NOT => {
                 self.bump();
                 let operand = self.nested(NOT)?;
-                Ok(Expr {
-                    span: self.since(first),
-                    kind: ExprKind::Not(Box::new(operand)),
-                })
+                Ok(node(self.since(first), ExprKind::Not(operand)))
             }
             TokenKind::Foreign if is_foreign_prefix(self.word_of(token)) => {
                 self.note(token.span, foreign(self.word_of(token)));
                 self.bump();
                 self.nested(least.max(NOT))?;
-                Ok(error(self.since(first)))
+                Ok(unread(self.since(first)))
             }
             _ => self.postfix(),
         }
     }
 
-    fn nested(&mut self, least: u8) -> Read<Expr> {
+    fn nested(&mut self, least: u8) -> Read<Node> {
         self.enter()?;
         let operand = self.binary(least)?;
         self.leave();
@@ -321,7 +312,7 @@ impl Cursor<'_> {
     }
 
     /// `-x`. A sign directly before a temperature in degC or degF, or before a compound number, belongs to the number.
-    fn negation(&mut self, first: usize, sign: Token) -> Read<Expr> {
+    fn negation(&mut self, first: usize, sign: Token) -> Read<Node> {
         self.bump();
         let next = self.peek();
         let mut operand = self.nested(UNARY)?;
@@ -337,18 +328,13 @@ impl Cursor<'_> {
             operand.span = span;
             return Ok(operand);
         }
-        Ok(Expr {
-            span,
-            kind: ExprKind::Negate(Box::new(operand)),
-        })
+        Ok(node(span, ExprKind::Negate(operand)))
     }
 
     /// Whether an operand begins here, where a sign is due.
     fn begins_operand(&self) -> bool {
         match self.peek() {
-            Some(token) if token.kind == TokenKind::Name => {
-                self.open > 0 || !self.stops.contains(&self.word_of(token))
-            }
+            Some(token) if token.kind == TokenKind::Name => !self.ends_operand(token),
             Some(token) => matches!(
                 token.kind,
                 TokenKind::Number | TokenKind::BrokenNumber | TokenKind::Open | TokenKind::Bracket
@@ -357,8 +343,19 @@ impl Cursor<'_> {
         }
     }
 
+    /// Whether a name is a word in its place that ends what stands before it.
+    fn ends_operand(&self, token: Token) -> bool {
+        let word = self.word_of(token);
+        if self.open == 0 {
+            return self.stops.contains(&word);
+        }
+        self.inside == Inside::Selections
+            && self.kind_ahead(1) == Some(TokenKind::Close)
+            && matches!(word, "smooth" | "nearest" | "held")
+    }
+
     /// Two operands side by side: `2 (x)`, `S c`, `(a)(b)`.
-    fn implied_product(&mut self, first: usize) -> Read<Expr> {
+    fn implied_product(&mut self, first: usize) -> Read<Node> {
         self.count_operator()?;
         let span = self.here();
         let mend = self.product_mend();
@@ -366,11 +363,11 @@ impl Cursor<'_> {
         let call = mend.as_ref().is_some_and(|mend| mend.span.end < span.start);
         self.note(span, Fault::ImpliedProduct { mend });
         if call {
-            self.in_brackets(true, Cursor::arguments)?;
+            self.in_brackets(Inside::Arguments, Cursor::arguments)?;
         } else {
             self.postfix()?;
         }
-        Ok(error(self.since(first)))
+        Ok(unread(self.since(first)))
     }
 
     fn product_mend(&self) -> Option<Mend> {

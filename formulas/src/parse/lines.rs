@@ -175,8 +175,7 @@ impl<'t> Reader<'_, 't> {
         let mut end = first.to;
         let mut brackets = Brackets::default();
         while self.line < self.source.line_count() {
-            brackets.pass(&self.tokens);
-            if !goes_on(&self.tokens, course, first.text, brackets.open > 0) {
+            if !goes_on(&self.tokens, course, first.text, &mut brackets) {
                 break;
             }
             let next = self.line_at(self.line, start);
@@ -357,7 +356,8 @@ struct Brackets {
 }
 
 impl Brackets {
-    fn pass(&mut self, tokens: &Tokens) {
+    /// Whether no bracket is open behind all tokens.
+    fn closed_behind(&mut self, tokens: &Tokens) -> bool {
         for token in tokens.list.iter().skip(self.passed) {
             match token.kind {
                 TokenKind::Open => self.open += 1,
@@ -367,11 +367,12 @@ impl Brackets {
             }
         }
         self.passed = tokens.list.len();
+        self.open == 0
     }
 }
 
-/// Whether what is read so far asks for a further line; `inside` says whether it ends inside brackets.
-fn goes_on(tokens: &Tokens, course: Course, text: &str, inside: bool) -> bool {
+/// Whether what is read so far asks for a further line; `brackets` are those of the lines before.
+fn goes_on(tokens: &Tokens, course: Course, text: &str, brackets: &mut Brackets) -> bool {
     let Some(last) = tokens.list.last() else {
         return false;
     };
@@ -379,7 +380,7 @@ fn goes_on(tokens: &Tokens, course: Course, text: &str, inside: bool) -> bool {
         Course::Labels => last.kind == TokenKind::Bar,
         Course::Header => matches!(last.kind, TokenKind::Bar | TokenKind::Comma),
         Course::Code | Course::Unknown => match last.kind {
-            TokenKind::Sign(Sign::Minus) => !is_left_out(tokens, inside),
+            TokenKind::Sign(Sign::Minus) => !is_left_out(tokens, brackets),
             TokenKind::Sign(_)
             | TokenKind::At
             | TokenKind::Comma
@@ -395,7 +396,7 @@ fn goes_on(tokens: &Tokens, course: Course, text: &str, inside: bool) -> bool {
 }
 
 /// Whether the `-` at the end is a value left out: directly behind `=`, `|` or the `:` of a label.
-fn is_left_out(tokens: &Tokens, inside: bool) -> bool {
+fn is_left_out(tokens: &Tokens, brackets: &mut Brackets) -> bool {
     let before = tokens
         .list
         .len()
@@ -403,7 +404,7 @@ fn is_left_out(tokens: &Tokens, inside: bool) -> bool {
         .and_then(|at| tokens.list.get(at));
     match before.map(|token| token.kind) {
         Some(TokenKind::Equals | TokenKind::Bar) => true,
-        Some(TokenKind::Colon) => !inside,
+        Some(TokenKind::Colon) => brackets.closed_behind(tokens),
         _ => false,
     }
 }

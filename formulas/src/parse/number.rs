@@ -1,10 +1,10 @@
 //! Numbers with their units, compound numbers, and the forms of numbers that are refused.
 
-use super::cursor::{Cursor, Read, clipped, error};
+use super::cursor::{Cursor, Inside, Node, Read, clipped, node, unread};
 use super::unit::read_unit;
 use crate::problem::Fault;
 use crate::span::Span;
-use crate::syntax::{Expr, ExprKind, UnitText};
+use crate::syntax::{ExprKind, UnitText};
 use crate::token::{Token, TokenKind};
 use engine::quantity::Unit;
 
@@ -14,17 +14,18 @@ impl Cursor<'_> {
     /// ```text
     /// 4.6 ft   0.105 /deg   12 ft 6 in      5.   1 000   1_000   12,5   65 [kt]
     /// ```
-    pub(super) fn number(&mut self, token: Token) -> Read<Expr> {
+    #[inline(never)]
+    pub(super) fn number(&mut self, token: Token) -> Read<Node> {
         let first = self.at;
         self.bump();
         if self.refused(token) {
             self.eat(TokenKind::Unit);
-            return Ok(error(self.since(first)));
+            return Ok(unread(self.since(first)));
         }
         let mut fine = true;
         let unit = self.opt_unit(&mut fine);
         if unit.is_none() && self.bracket_behind() {
-            return Ok(error(self.since(first)));
+            return Ok(unread(self.since(first)));
         }
         let mut more = Vec::new();
         while let Some((value, unit)) = self.opt_further(unit.as_ref(), &more) {
@@ -45,7 +46,7 @@ impl Cursor<'_> {
         } else {
             ExprKind::Error
         };
-        Ok(Expr { span, kind })
+        Ok(node(span, kind))
     }
 
     fn opt_unit(&mut self, fine: &mut bool) -> Option<UnitText> {
@@ -89,7 +90,7 @@ impl Cursor<'_> {
     /// `12,5`: a comma hard between digits where commas do not separate.
     fn decimal_comma(&mut self, first: usize) -> Option<Fault> {
         let mut commas = 0;
-        while !self.commas && self.hard_comma() {
+        while self.inside != Inside::Arguments && self.hard_comma() {
             self.at += 2;
             commas += 1;
         }

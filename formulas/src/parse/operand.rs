@@ -1,13 +1,13 @@
 //! Operands: numbers, names, calls, brackets, and what binds tightest behind them.
 
-use super::cursor::{Cursor, Read, error};
+use super::cursor::{Cursor, Inside, Node, Read, node, unread};
 use crate::problem::Fault;
 use crate::span::Span;
-use crate::syntax::{Argument, Expr, ExprKind, Name, PickWord, Selection};
+use crate::syntax::{Argument, ExprKind, Name, PickWord, Selection};
 use crate::token::{Token, TokenKind, Word};
 
-/// A word behind the selections of a pick.
-type WordOfPick = Option<(PickWord, Span)>;
+/// The selections of a pick, and the word among them.
+type Selections = (Vec<Selection>, Option<(PickWord, Span)>);
 
 impl Cursor<'_> {
     /// An operand with its fields and picks.
@@ -15,7 +15,7 @@ impl Cursor<'_> {
     /// ```text
     /// air.density   P_t at (point: "D")   f(x) at (alpha: 2 deg) smooth
     /// ```
-    pub(super) fn postfix(&mut self) -> Read<Expr> {
+    pub(super) fn postfix(&mut self) -> Read<Node> {
         let first = self.at;
         let mut base = self.operand()?;
         let mut links = 0;
@@ -33,7 +33,8 @@ impl Cursor<'_> {
         Ok(base)
     }
 
-    fn field(&mut self, first: usize, base: Expr) -> Read<Expr> {
+    #[inline(never)]
+    fn field(&mut self, first: usize, base: Node) -> Read<Node> {
         let dot = self.here();
         let hard = self
             .previous()
@@ -44,11 +45,7 @@ impl Cursor<'_> {
             Some(token) => {
                 self.bump();
                 let field = self.name_of(token);
-                let base = Box::new(base);
-                Ok(Expr {
-                    span: self.since(first),
-                    kind: ExprKind::Field { base, field },
-                })
+                Ok(node(self.since(first), ExprKind::Field { base, field }))
             }
             None if next.is_some() => {
                 let (text, mend) = (".".to_owned(), "*".to_owned());
@@ -59,22 +56,20 @@ impl Cursor<'_> {
     }
 
     /// `at (axis: position, …, held)`; the word may also stand behind the bracket.
-    fn pick(&mut self, first: usize, base: Expr) -> Read<Expr> {
+    #[inline(never)]
+    fn pick(&mut self, first: usize, base: Node) -> Read<Node> {
         self.bump();
-        let (selections, inside) = self.in_brackets(false, Cursor::selections)?;
+        let (selections, inside) = self.in_brackets(Inside::Selections, Cursor::selections)?;
         let word = inside.or_else(|| self.opt_pick_word());
         let kind = ExprKind::Pick {
-            base: Box::new(base),
+            base,
             selections,
             word,
         };
-        Ok(Expr {
-            span: self.since(first),
-            kind,
-        })
+        Ok(node(self.since(first), kind))
     }
 
-    fn selections(&mut self) -> Read<(Vec<Selection>, WordOfPick)> {
+    fn selections(&mut self) -> Read<Selections> {
         let mut selections = Vec::new();
         loop {
             let axis = self.name("the name of an axis")?;
@@ -82,7 +77,10 @@ impl Cursor<'_> {
                 return self.expected("`:` behind the axis");
             }
             let position = self.whole()?;
-            selections.push(Selection { axis, position });
+            selections.push(Selection {
+                axis,
+                position: *position,
+            });
             let comma = self.eat(TokenKind::Comma);
             let last = self.kind_ahead(1) == Some(TokenKind::Close);
             let word = last.then(|| self.opt_pick_word()).flatten();
@@ -92,7 +90,7 @@ impl Cursor<'_> {
         }
     }
 
-    fn opt_pick_word(&mut self) -> WordOfPick {
+    fn opt_pick_word(&mut self) -> Option<(PickWord, Span)> {
         let token = self.peek().filter(|token| token.kind == TokenKind::Name)?;
         let word = match self.word_of(token) {
             "smooth" => PickWord::Smooth,
@@ -104,7 +102,7 @@ impl Cursor<'_> {
         Some((word, token.span))
     }
 
-    fn operand(&mut self) -> Read<Expr> {
+    fn operand(&mut self) -> Read<Node> {
         let Some(token) = self.peek() else {
             return self.expected("a value");
         };
@@ -115,7 +113,7 @@ impl Cursor<'_> {
                 Ok(self.leaf(token, ExprKind::Name(name)))
             }
             TokenKind::Number | TokenKind::BrokenNumber => self.number(token),
-            TokenKind::Open => self.in_brackets(false, Cursor::whole),
+            TokenKind::Open => self.in_brackets(Inside::Expression, Cursor::whole),
             TokenKind::Text => {
                 let text = unquoted(self.word_of(token));
                 Ok(self.leaf(token, ExprKind::Text(text)))
@@ -126,16 +124,14 @@ impl Cursor<'_> {
         }
     }
 
-    fn leaf(&mut self, token: Token, kind: ExprKind) -> Expr {
+    fn leaf(&mut self, token: Token, kind: ExprKind) -> Node {
         self.bump();
-        Expr {
-            span: token.span,
-            kind,
-        }
+        node(token.span, kind)
     }
 
     /// `[kt]`: one of that unit.
-    fn unit_one(&mut self, token: Token) -> Expr {
+    #[inline(never)]
+    fn unit_one(&mut self, token: Token) -> Node {
         self.bump();
         let (unit, fine) = self.unit_of(token);
         let kind = if fine {
@@ -143,21 +139,19 @@ impl Cursor<'_> {
         } else {
             ExprKind::Error
         };
-        Expr {
-            span: token.span,
-            kind,
-        }
+        node(token.span, kind)
     }
 
     /// A word of the language where a value is due.
-    fn word_operand(&mut self, token: Token, word: Word) -> Read<Expr> {
+    #[inline(never)]
+    fn word_operand(&mut self, token: Token, word: Word) -> Read<Node> {
         match word {
             Word::None => Ok(self.leaf(token, ExprKind::None)),
             Word::Excluded => Ok(self.leaf(token, ExprKind::Excluded)),
             Word::If => {
                 self.note(token.span, Fault::IfPlace);
                 let span = self.conditional()?.span;
-                Ok(error(span))
+                Ok(unread(span))
             }
             Word::Then | Word::Else | Word::And | Word::Or | Word::Not | Word::At => {
                 self.expected("a value")
@@ -170,10 +164,10 @@ impl Cursor<'_> {
         }
     }
 
-    /// `( … )`, one level deeper; `commas` says whether commas separate arguments inside.
+    /// `( … )`, one level deeper.
     pub(super) fn in_brackets<T>(
         &mut self,
-        commas: bool,
+        inside: Inside,
         rule: impl FnOnce(&mut Self) -> Read<T>,
     ) -> Read<T> {
         let bracket = self.here();
@@ -182,7 +176,7 @@ impl Cursor<'_> {
         }
         self.enter()?;
         self.open += 1;
-        let outer = std::mem::replace(&mut self.commas, commas);
+        let outer = std::mem::replace(&mut self.inside, inside);
         let inner = rule(self);
         // Where the line ends inside, the bracket that nothing closes is the problem, unless one is known.
         if self.peek().is_none() && (inner.is_ok() || self.dangles_at(bracket)) {
@@ -196,7 +190,7 @@ impl Cursor<'_> {
             return self.expected("an operator or `)`");
         }
         self.open -= 1;
-        self.commas = outer;
+        self.inside = outer;
         self.leave();
         Ok(inner)
     }
@@ -207,20 +201,18 @@ impl Cursor<'_> {
     }
 
     /// `name(a, b, c: d over axis)`.
-    fn call(&mut self, token: Token) -> Read<Expr> {
+    #[inline(never)]
+    fn call(&mut self, token: Token) -> Read<Node> {
         let first = self.at;
         let function = self.name_of(token);
         self.bump();
-        let (arguments, over) = self.in_brackets(true, Cursor::arguments)?;
+        let (arguments, over) = self.in_brackets(Inside::Arguments, Cursor::arguments)?;
         let kind = ExprKind::Call {
             function,
             arguments,
             over,
         };
-        Ok(Expr {
-            span: self.since(first),
-            kind,
-        })
+        Ok(node(self.since(first), kind))
     }
 
     pub(super) fn arguments(&mut self) -> Read<(Vec<Argument>, Option<Vec<Name>>)> {
@@ -251,7 +243,7 @@ impl Cursor<'_> {
         if named {
             self.bump();
         }
-        let value = self.whole()?;
+        let value = *self.whole()?;
         Ok(Argument { name, value })
     }
 }

@@ -58,7 +58,7 @@ impl Cursor<'_> {
 
     /// A symbol or a field.
     fn quantity(&mut self) -> Read<Expr> {
-        let expr = self.postfix()?;
+        let expr = *self.postfix()?;
         match expr.kind {
             ExprKind::Name(_) | ExprKind::Field { .. } | ExprKind::Error => Ok(expr),
             _ => {
@@ -205,7 +205,7 @@ impl Cursor<'_> {
             return self.expected("`against`");
         }
         self.stops = &["each", "closed"];
-        let against = self.arithmetic()?;
+        let against = *self.arithmetic()?;
         self.stops = &[];
         let each: Vec<Name> = if self.eat_word("each") {
             self.names("the name of an axis")?
@@ -227,7 +227,7 @@ impl Cursor<'_> {
         self.stops = &["against"];
         let mut curves = Vec::new();
         loop {
-            curves.push(self.arithmetic()?);
+            curves.push(*self.arithmetic()?);
             if !self.eat(TokenKind::Comma) {
                 self.stops = &[];
                 return Ok(curves);

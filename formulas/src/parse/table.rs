@@ -1,6 +1,6 @@
 //! Tables: header and rows. Which lines are rows is decided in `lines`.
 
-use super::cursor::{Cursor, Read, Unread, error};
+use super::cursor::{Cursor, Read, error};
 use crate::problem::Fault;
 use crate::syntax::{Expr, ExprKind, Name, Parameter, Row, Table, Toleranced, Words};
 use crate::token::TokenKind;
@@ -106,6 +106,10 @@ impl Cursor<'_> {
         let expected = header.columns.len() + 1;
         if found != expected {
             self.note(row.span, Fault::RowLength { expected, found });
+            // Which cell is missing, or one too many, is not known.
+            for cell in &mut row.cells {
+                cell.value.kind = ExprKind::Error;
+            }
             row.cells
                 .resize_with(expected - 1, || unread(error(row.span.behind())));
         }
@@ -151,9 +155,7 @@ impl Cursor<'_> {
         {
             Some(token) => (self.label_of(token), None),
             None => {
-                let outer = std::mem::replace(&mut self.end, end);
-                let _: Result<(), Unread> = self.expected("a label") as Read<()>;
-                self.end = outer;
+                let _: Read<()> = self.expected("a label");
                 (
                     Words {
                         text: String::new(),

@@ -188,10 +188,10 @@ impl Reader<'_> {
             self.brackets && matches!(rest, "EAS" | "CAS" | "TAS") && !self.unit.factors.is_empty();
         if found {
             let at = self.start + self.at;
-            self.unit.kind = Some(Name {
+            self.unit.kind = Some(Box::new(Name {
                 text: rest.to_owned(),
                 span: Span::new(at, at + rest.len()),
-            });
+            }));
             self.at = self.text.len();
         }
         found

@@ -2,7 +2,7 @@
 
 mod expression;
 #[cfg(test)]
-mod tests;
+pub(crate) mod tests;
 
 use crate::lex::characters::trimmed;
 use crate::lex::words::{STATEMENT_WORDS, TITLE_WORDS, title_text};
