@@ -63,7 +63,8 @@ static PLAIN_PART: [bool; 256] = {
     table
 };
 
-fn is_plain_part(byte: u8) -> bool {
+/// Whether a byte is a whole character that a name may go on with.
+pub(crate) fn is_plain_part(byte: u8) -> bool {
     PLAIN_PART[byte as usize]
 }
 

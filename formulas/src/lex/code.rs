@@ -1,33 +1,79 @@
 //! Code: names, numbers with their units, brackets, text and signs of one line.
 
 use super::Tokens;
-use super::characters::{blank_length, is_blank, is_name_part, name_length};
+use super::characters::{blank_length, is_blank, is_name_part, is_plain_part, name_length};
 use super::number::{number, raised_power, unit};
-use super::signs::sign;
+use super::signs::{alone, sign};
 use super::words::word;
 use crate::token::TokenKind;
 
 /// Tokens of `text` from byte `from` up to byte `to`, which lie in one line, its end left off.
 pub(crate) fn code(text: &str, from: usize, to: usize, out: &mut Tokens) {
-    let bytes = text.as_bytes();
-    let mut at = from;
-    while at < to {
-        if bytes.get(at) == Some(&b' ') && bytes.get(at + 1).is_some_and(u8::is_ascii_graphic) {
-            out.push(TokenKind::Blank, at, at + 1);
-            at += 1;
-            continue;
-        }
-        let Some(rest) = text.get(at..to) else {
+    let line = text.get(from..to).unwrap_or("");
+    let mut at = 0;
+    while at < line.len() {
+        let plain = plain_token(line.as_bytes(), at);
+        let Some((kind, length)) = plain.or_else(|| rare_token(line, at)) else {
             return;
         };
-        let before = at.checked_sub(1).and_then(|at| bytes.get(at));
-        let (kind, length) = token(rest, before);
-        out.push(kind, at, at + length);
-        at += length;
-        if matches!(kind, TokenKind::Number | TokenKind::BrokenNumber) {
-            at = unit_behind(text, at, to, out);
+        let end = at + length;
+        let kind = match kind {
+            TokenKind::Name => line.get(at..end).map_or(kind, name_or_word),
+            kind => kind,
+        };
+        out.push(kind, from + at, from + end);
+        at = match kind {
+            TokenKind::Number | TokenKind::BrokenNumber => unit_behind(line, from, end, out),
+            _ => end,
+        };
+    }
+}
+
+fn name_or_word(text: &str) -> TokenKind {
+    word(text).map_or(TokenKind::Name, TokenKind::Word)
+}
+
+/// The token at byte `at`, where it is one of those that most lines are made of: blanks, a name, digits or a sign of
+/// one byte. Everything here can also be told by [`token`]; this is the short way.
+fn plain_token(bytes: &[u8], at: usize) -> Option<(TokenKind, usize)> {
+    let rest = bytes.get(at..)?;
+    let first = *rest.first()?;
+    let run = |belongs: fn(u8) -> bool| {
+        let length = rest
+            .iter()
+            .position(|byte| !belongs(*byte))
+            .unwrap_or(rest.len());
+        (length, rest.get(length).copied().unwrap_or(b' '))
+    };
+    match first {
+        b' ' => {
+            let (length, next) = run(|byte| byte == b' ');
+            (next.is_ascii_graphic() || next == b' ').then_some((TokenKind::Blank, length))
+        }
+        b'a'..=b'z' | b'A'..=b'Z' => {
+            let (length, next) = run(is_plain_part);
+            next.is_ascii().then_some((TokenKind::Name, length))
+        }
+        b'0'..=b'9' => {
+            let (length, next) = run(|byte| byte.is_ascii_digit());
+            let ends = next.is_ascii() && !matches!(next, b'.' | b'e' | b'E' | b'_' | b'\'');
+            ends.then_some((TokenKind::Number, length))
+        }
+        _ => {
+            let second = rest.get(1).copied().unwrap_or(b' ');
+            let number = first == b'.' && second.is_ascii_digit();
+            if number {
+                None
+            } else {
+                alone(first, second).map(|kind| (kind, 1))
+            }
         }
     }
+}
+
+fn rare_token(line: &str, at: usize) -> Option<(TokenKind, usize)> {
+    let before = at.checked_sub(1).and_then(|at| line.as_bytes().get(at));
+    line.get(at..).map(|rest| token(rest, before))
 }
 
 /// The first token of `rest`, behind the byte `before`.
@@ -35,7 +81,7 @@ fn token(rest: &str, before: Option<&u8>) -> (TokenKind, usize) {
     let first = rest.as_bytes().first().copied().unwrap_or(b' ');
     match first {
         b' ' => (TokenKind::Blank, blank_length(rest)),
-        b'a'..=b'z' | b'A'..=b'Z' => name(rest),
+        b'a'..=b'z' | b'A'..=b'Z' => (TokenKind::Name, name_length(rest)),
         b'0'..=b'9' => numeral(rest),
         b'.' if rest.as_bytes().get(1).is_some_and(u8::is_ascii_digit) => numeral(rest),
         b';' => (TokenKind::Remark, rest.len()),
@@ -48,12 +94,6 @@ fn token(rest: &str, before: Option<&u8>) -> (TokenKind, usize) {
         },
         _ => sign(rest).unwrap_or_else(|| rare(rest)),
     }
-}
-
-fn name(rest: &str) -> (TokenKind, usize) {
-    let length = name_length(rest);
-    let kind = rest.get(..length).and_then(word);
-    (kind.map_or(TokenKind::Name, TokenKind::Word), length)
 }
 
 fn numeral(rest: &str) -> (TokenKind, usize) {
@@ -144,9 +184,10 @@ fn bracket(rest: &str) -> (TokenKind, usize) {
     )
 }
 
-/// Takes the unit behind a number that ends at `at`, and the blanks before it. Gives where it ends.
-fn unit_behind(text: &str, at: usize, to: usize, out: &mut Tokens) -> usize {
-    let rest = text.get(at..to).unwrap_or("");
+/// Takes the unit behind a number that ends at byte `at` of the line, and the blanks before it; the line stands at byte
+/// `from`. Gives where the unit ends.
+fn unit_behind(line: &str, from: usize, at: usize, out: &mut Tokens) -> usize {
+    let rest = line.get(at..).unwrap_or("");
     let blanks = blank_length(rest);
     let behind = rest.get(blanks..).unwrap_or("");
     let may_begin =
@@ -158,9 +199,8 @@ fn unit_behind(text: &str, at: usize, to: usize, out: &mut Tokens) -> usize {
         return at;
     };
     let start = at + blanks;
-    if blanks > 0 {
-        out.push(TokenKind::Blank, at, start);
-    }
-    out.push(TokenKind::Unit, start, start + unit.len());
-    start + unit.len()
+    let end = start + unit.len();
+    out.push(TokenKind::Blank, from + at, from + start);
+    out.push(TokenKind::Unit, from + start, from + end);
+    end
 }

@@ -87,7 +87,7 @@ pub(super) fn sign(text: &str) -> Option<(TokenKind, usize)> {
 }
 
 /// A sign of one byte that begins no longer one, seen from the byte behind it.
-fn alone(first: u8, second: u8) -> Option<TokenKind> {
+pub(super) fn alone(first: u8, second: u8) -> Option<TokenKind> {
     Some(match (first, second) {
         (b'(', _) => TokenKind::Open,
         (b')', _) => TokenKind::Close,

@@ -4,8 +4,7 @@ use super::cursor::{Cursor, Inside, Node, Read, Unread, error, foreign, node, un
 use super::number::is_absolute;
 use crate::lex::number::power_value;
 use crate::lex::signs::mend_of;
-use crate::problem::{Fault, Mend};
-use crate::span::Span;
+use crate::problem::Fault;
 use crate::syntax::{BinaryOp, Expr, ExprKind, Toleranced};
 use crate::token::{Sign, Token, TokenKind, Word};
 
@@ -14,18 +13,18 @@ const OR: u8 = 1;
 const AND: u8 = 2;
 const NOT: u8 = 3;
 const COMPARE: u8 = 4;
-const ADD: u8 = 5;
+pub(super) const ADD: u8 = 5;
 const MULTIPLY: u8 = 6;
 const UNARY: u8 = 7;
 const POWER: u8 = 8;
 
 /// A sign between two operands.
 #[derive(Clone, Copy)]
-struct Infix {
-    op: BinaryOp,
+pub(super) struct Infix {
+    pub(super) op: BinaryOp,
     binds: u8,
     /// How many tokens it takes.
-    tokens: usize,
+    pub(super) tokens: usize,
     /// Whether it is one of another notation.
     foreign: bool,
 }
@@ -130,7 +129,7 @@ impl Cursor<'_> {
     }
 
     /// Operands joined by signs that bind at least as tightly as `least`.
-    fn binary(&mut self, least: u8) -> Read<Node> {
+    pub(super) fn binary(&mut self, least: u8) -> Read<Node> {
         let first = self.at;
         let mut left = self.prefix(least)?;
         loop {
@@ -144,7 +143,7 @@ impl Cursor<'_> {
     }
 
     /// The sign that stands next.
-    fn infix(&self) -> Option<Infix> {
+    pub(super) fn infix(&self) -> Option<Infix> {
         use BinaryOp::{
             Add, And, Divide, Equal, Greater, GreaterOrEqual, Less, LessOrEqual, Multiply,
             NotEqual, Or, Power, Subtract,
@@ -251,33 +250,6 @@ impl Cursor<'_> {
         }
     }
 
-    /// `a < b < c`: the comparison from token `first` on, its first sign at token `sign`, met a second sign.
-    fn chained(&mut self, first: usize, sign: usize) -> Read<Node> {
-        let mut mend = self.since(first).of(self.text).to_owned();
-        let mut operand = self.stretch(sign + 1, self.at);
-        while let Some(infix) = self.infix().filter(|next| next.op.compares()) {
-            self.count_operator()?;
-            let before = self.at;
-            self.at += infix.tokens;
-            let typed = self.since(before).of(self.text);
-            let after = self.at;
-            self.binary(ADD)?;
-            let right = self.since(after);
-            mend.push_str(&format!(
-                " and {} {typed} {}",
-                operand.of(self.text),
-                right.of(self.text)
-            ));
-            operand = right;
-        }
-        let span = self.since(first);
-        // The operands of a long chain would make its mend grow beyond all use.
-        const LONGEST: usize = 500;
-        let mend = (mend.len() <= LONGEST).then_some(Mend { span, text: mend });
-        self.note(span, Fault::ChainedComparison { mend });
-        Ok(unread(span))
-    }
-
     /// A sign before an operand, or the operand.
     fn prefix(&mut self, least: u8) -> Read<Node> {
         let (first, Some(token)) = (self.at, self.peek()) else {
@@ -352,70 +324,6 @@ impl Cursor<'_> {
         self.inside == Inside::Selections
             && self.kind_ahead(1) == Some(TokenKind::Close)
             && matches!(word, "smooth" | "nearest" | "held")
-    }
-
-    /// Two operands side by side: `2 (x)`, `S c`, `(a)(b)`.
-    fn implied_product(&mut self, first: usize) -> Read<Node> {
-        self.count_operator()?;
-        let span = self.here();
-        let mend = self.product_mend();
-        // `2 min(a, b)`: what looks like a unit was to be a function.
-        let call = mend.as_ref().is_some_and(|mend| mend.span.end < span.start);
-        self.note(span, Fault::ImpliedProduct { mend });
-        if call {
-            self.in_brackets(Inside::Arguments, Cursor::arguments)?;
-        } else {
-            self.postfix()?;
-        }
-        Ok(unread(self.since(first)))
-    }
-
-    fn product_mend(&self) -> Option<Mend> {
-        let (last, next) = (self.previous()?, self.peek()?);
-        let number = |kind| {
-            matches!(
-                kind,
-                TokenKind::Number | TokenKind::BrokenNumber | TokenKind::Unit
-            )
-        };
-        if number(last.kind) && number(next.kind) {
-            return None;
-        }
-        let gap = |left: Token, right: Token| Span {
-            start: left.span.end,
-            end: right.span.start,
-        };
-        if last.kind == TokenKind::Unit {
-            let unit = self.word_of(last);
-            let before = self
-                .at
-                .checked_sub(2)
-                .and_then(|at| self.tokens.get(at))
-                .copied()?;
-            let hard = last.span.end == next.span.start;
-            if next.kind == TokenKind::Open
-                && hard
-                && crate::lex::characters::name_length(unit) == unit.len()
-            {
-                return Some(Mend {
-                    span: gap(before, last),
-                    text: "*".to_owned(),
-                });
-            }
-            // `5 ft lb`: the second unit joins the first.
-            if next.kind == TokenKind::Name
-                && engine::quantity::Unit::named(self.word_of(next)).is_some()
-            {
-                return Some(Mend {
-                    span: gap(last, next),
-                    text: ".".to_owned(),
-                });
-            }
-        }
-        Some(Mend {
-            span: gap(last, next),
-            text: "*".to_owned(),
-        })
     }
 }
 

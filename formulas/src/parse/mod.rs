@@ -8,6 +8,7 @@ mod form;
 mod lines;
 mod number;
 mod operand;
+mod slips;
 mod statement;
 mod table;
 #[cfg(test)]

@@ -82,7 +82,16 @@ impl Cursor<'_> {
         } else {
             return false;
         };
+        // A form that is longer than any number is not worth a mend.
+        const LONGEST: usize = 60;
         let span = self.since(first);
+        let text = span.of(self.text);
+        let fault = if text.len() > LONGEST {
+            let (what, found) = ("a number", clipped(text));
+            Fault::Expected { what, found }
+        } else {
+            fault
+        };
         self.note(span, fault);
         true
     }

@@ -129,6 +129,8 @@ fn expressions() {
     for (text, at, fault) in [
         ("a = 2 (x)", "(", "ImpliedProduct a = 2*(x)"),
         ("a = S c", "c", "ImpliedProduct a = S*c"),
+        ("a = (b + 2) ft", "ft", "ImpliedProduct a = (b + 2)*[ft]"),
+        ("a = (b + 2) W", "W", "ImpliedProduct a = (b + 2)*W"),
         ("a = (b)(c)", "(", "ImpliedProduct a = (b)*(c)"),
         ("a = x 5", "5", "ImpliedProduct a = x*5"),
         (
