@@ -475,7 +475,7 @@ fn impossible_arguments_are_refused() {
         ("x = station_at_percent(25, 2 m, 1.4 m)\n", "argument-range"),
         (
             "a = pitch_rate_angle(2, 50 m/s, 4 m, \"loop\")\n",
-            "argument-range",
+            "unknown-word",
         ),
         ("a = pitch_rate_angle(2, 50 m/s, 4 m, 3)\n", "wrong-kind"),
     ] {

@@ -285,23 +285,7 @@ impl Checker<'_> {
                 marks,
             });
         };
-        let dimension = if kind.dimension == Dimension::NONE {
-            Dimension::NONE
-        } else if let Some(power) = Exponent::from_f64(value) {
-            match kind.dimension.power(power) {
-                Some(dimension) => dimension,
-                None => {
-                    self.report(span, Fault::DimensionLimit);
-                    return None;
-                }
-            }
-        } else if kind.dimension.is_number() {
-            Dimension::NONE
-        } else {
-            let base = self.operand(&base);
-            self.report(exponent.span, Fault::ExponentNotFixed { base });
-            return None;
-        };
+        let dimension = self.dimension_of_power(&base, value, exponent.span, span)?;
         let unit = self.unit_of_power(&base, dimension, value);
         let node = self.power(base.node, value);
         let kind = NumberKind {
@@ -317,6 +301,34 @@ impl Checker<'_> {
             span,
             marks,
         })
+    }
+
+    fn dimension_of_power(
+        &mut self,
+        base: &Typed,
+        exponent: f64,
+        exponent_span: Span,
+        span: Span,
+    ) -> Option<Dimension> {
+        let dimension = base.dimension();
+        if dimension == Dimension::NONE {
+            return Some(Dimension::NONE);
+        }
+        match Exponent::from_f64(exponent) {
+            Some(power) => {
+                let raised = dimension.power(power);
+                if raised.is_none() {
+                    self.report(span, Fault::DimensionLimit);
+                }
+                raised
+            }
+            None if dimension.is_number() => Some(Dimension::NONE),
+            None => {
+                let base = self.operand(base);
+                self.report(exponent_span, Fault::ExponentNotFixed { base });
+                None
+            }
+        }
     }
 
     fn unit_of_power(

@@ -238,18 +238,7 @@ impl Checker<'_> {
         if dimension.is_angle() && !kind.dimension.is_angle() && !kind.any && !typed.marks.zero {
             self.warn_angle(expr, parameter.name);
         }
-        if parameter.slope && typed.marks.bare && kind.dimension == Dimension::NONE {
-            let value = self.constant_of(typed.node).unwrap_or(1.0);
-            if value > 0.0 && value < 1.0 {
-                let number = matches!(expr.kind, ExprKind::Number { .. }).then_some(expr.span);
-                let fault = Fault::SlopePerDegree {
-                    argument: parameter.name.to_string(),
-                    value,
-                    number,
-                };
-                self.report(expr.span, fault);
-            }
-        }
+        self.advise_slope(parameter, expr, &typed);
         if let Some(most) = parameter.most
             && typed.marks.bare
             && self.constant_of(typed.node).is_some_and(|v| v > most)
@@ -259,6 +248,27 @@ impl Checker<'_> {
             return None;
         }
         Some(typed)
+    }
+
+    /// A bare lift slope below 1 looks like one per degree.
+    fn advise_slope(&mut self, parameter: &Parameter, expr: &Expr, typed: &Typed) {
+        let dimension = typed.number_kind().dimension;
+        if !parameter.slope || !typed.marks.bare || dimension != Dimension::NONE {
+            return;
+        }
+        let value = self.constant_of(typed.node).unwrap_or(1.0);
+        if value > 0.0 && value < 1.0 {
+            let number = matches!(expr.kind, ExprKind::Number { .. }).then_some(expr.span);
+            let argument = parameter.name.to_string();
+            self.report(
+                expr.span,
+                Fault::SlopePerDegree {
+                    argument,
+                    value,
+                    number,
+                },
+            );
+        }
     }
 
     /// Tells that an argument lies outside what it can be at all.
@@ -315,8 +325,14 @@ impl Checker<'_> {
             && !parameter.words.is_empty()
             && !parameter.words.contains(&word.as_str())
         {
-            let words: Vec<String> = parameter.words.iter().map(|w| format!("\"{w}\"")).collect();
-            self.report_range(entry, parameter, expr.span, words.join(" or "));
+            let fault = Fault::UnknownWord {
+                function: entry.name.to_string(),
+                argument: parameter.name.to_string(),
+                found: word.clone(),
+                words: parameter.words.iter().map(|w| (*w).to_string()).collect(),
+                nearest: crate::nearest::nearest(word, parameter.words.iter().copied()),
+            };
+            self.report(expr.span, fault);
             return None;
         }
         if typed.kind == Kind::Text || typed.number_kind().any {

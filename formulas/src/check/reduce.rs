@@ -79,30 +79,7 @@ impl Checker<'_> {
     ) -> Option<Typed> {
         let value = values.into_iter().next()?;
         let place = format!("the argument of {name}");
-        let condition = value.kind == Kind::Condition;
-        let how = match name {
-            "all" | "any" => {
-                let how = if name == "all" {
-                    Reduction::All
-                } else {
-                    Reduction::Any
-                };
-                self.wants_condition(value.clone(), &place)?;
-                how
-            }
-            "count" if condition => Reduction::CountTrue,
-            "count" => Reduction::Count,
-            _ => {
-                self.wants_number(value.clone(), &place)?;
-                match name {
-                    "max" => Reduction::Max,
-                    "min" => Reduction::Min,
-                    "sum" => Reduction::Sum,
-                    "mean" => Reduction::Mean,
-                    _ => Reduction::Rms,
-                }
-            }
-        };
+        let how = self.how_to_reduce(name, &value, &place)?;
         if let Kind::Record(_) = value.kind {
             return self.wants_number(value, &place);
         }
@@ -147,6 +124,32 @@ impl Checker<'_> {
             span,
             marks: Marks::systems_of(&[&value]),
         })
+    }
+
+    /// The reduction that a name means for a value of this kind.
+    fn how_to_reduce(&mut self, name: &str, value: &Typed, place: &str) -> Option<Reduction> {
+        match name {
+            "all" | "any" => {
+                self.wants_condition(value.clone(), place)?;
+                Some(if name == "all" {
+                    Reduction::All
+                } else {
+                    Reduction::Any
+                })
+            }
+            "count" if value.kind == Kind::Condition => Some(Reduction::CountTrue),
+            "count" => Some(Reduction::Count),
+            _ => {
+                self.wants_number(value.clone(), place)?;
+                Some(match name {
+                    "max" => Reduction::Max,
+                    "min" => Reduction::Min,
+                    "sum" => Reduction::Sum,
+                    "mean" => Reduction::Mean,
+                    _ => Reduction::Rms,
+                })
+            }
+        }
     }
 
     /// `where_max(P over cg)` gives the label, on an axis of numbers the value along it.

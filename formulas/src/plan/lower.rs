@@ -130,6 +130,18 @@ impl Lowering<'_> {
                 .flatten(),
             Op::List { axis, items } => self.list(*axis, items, axes),
             Op::Grid { axes: keys, items } => self.grid(keys, items, axes),
+            Op::Reduce { .. } | Op::Pick { .. } | Op::Along { .. } => {
+                self.over_axes(&node.op, axes)
+            }
+            Op::Field(call, at) => self.field(*call, *at, id),
+            Op::Call { .. } => None,
+            _ => self.kernel(id, axes),
+        }
+    }
+
+    /// Steps that take their reads along axes.
+    fn over_axes(&mut self, op: &Op, axes: AxisSet) -> Option<SlotId> {
+        match op {
             Op::Reduce { how, value, over } => {
                 let read = self.slot(*value)?;
                 Some(self.step(
@@ -172,9 +184,7 @@ impl Lowering<'_> {
                     },
                 ))
             }
-            Op::Field(call, at) => self.field(*call, *at, id),
-            Op::Call { .. } => None,
-            _ => self.kernel(id, axes),
+            _ => None,
         }
     }
 

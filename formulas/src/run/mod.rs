@@ -262,102 +262,77 @@ impl Machine<'_> {
             .collect();
         let reads = reads?;
         let shapes: Vec<Shape> = step.reads.iter().map(|s| self.shape(*s)).collect();
-        let feeds = |outer: &Shape| -> Vec<Feed<'_>> {
-            reads
-                .iter()
-                .zip(&shapes)
-                .map(|(values, inner)| Feed::new(values, inner, outer))
-                .collect()
+        let read = Reads {
+            columns: &reads,
+            shapes: &shapes,
         };
-        let axes = &self.program.axes;
-        Some(match &step.work {
-            Work::Values(values) => vec![values.clone()],
+        match &step.work {
+            Work::Values(values) => Some(vec![values.clone()]),
             Work::Kernel(code) => {
                 let mut column = self.room(step, shape.conditions())?;
-                kernel::run(code, &feeds(&shape), &self.program.texts, &mut column);
-                vec![column]
+                kernel::run(code, &read.along(&shape), &self.program.texts, &mut column);
+                Some(vec![column])
             }
-            Work::List { axis } => vec![list(
-                &feeds(&shape),
-                &shape,
-                &[*axis],
-                None,
-                &self.plan.lengths,
-            )],
+            Work::Call {
+                entry,
+                arguments,
+                over,
+            } => {
+                let texts = &self.program.texts;
+                Some(match over {
+                    None => {
+                        let feeds = read.along(&shape);
+                        lines::each(entry, arguments, &feeds, shape.conditions(), texts)
+                    }
+                    Some(axis) => {
+                        let full = self.widened(&step.reads, *axis);
+                        lines::along(entry, arguments, &read.along(&full), *axis, &full, texts)
+                    }
+                })
+            }
+            work => self
+                .across(work, step, &read, &shape)
+                .map(|column| vec![column]),
+        }
+    }
+
+    /// The column of a step that takes its reads along axes.
+    fn across(
+        &self,
+        work: &Work,
+        step: &Step,
+        read: &Reads<'_>,
+        shape: &Shape,
+    ) -> Option<Vec<f64>> {
+        let axes = &self.program.axes;
+        let lengths = &self.plan.lengths;
+        let (base, base_shape) = (read.columns.first(), read.shapes.first());
+        Some(match work {
+            Work::List { axis } => list(&read.along(shape), shape, &[*axis], None, lengths),
             Work::Grid { axes: keys, items } => {
-                vec![list(
-                    &feeds(&shape),
-                    &shape,
-                    keys,
-                    Some(items),
-                    &self.plan.lengths,
-                )]
+                list(&read.along(shape), shape, keys, Some(items), lengths)
             }
-            Work::Reduce { how, over } => {
-                vec![reduce::run(
-                    *how,
-                    reads.first()?,
-                    shapes.first()?,
-                    *over,
-                    &shape,
-                    axes,
-                )]
-            }
+            Work::Reduce { how, over } => reduce::run(*how, base?, base_shape?, *over, shape, axes),
             Work::Pick { selections } => {
-                let positions = feeds(&shape).into_iter().skip(1).collect();
-                vec![pick::run(
-                    reads.first()?,
-                    shapes.first()?,
-                    selections,
-                    positions,
-                    &shape,
-                    axes,
-                )]
+                let positions = read.along(shape).into_iter().skip(1).collect();
+                pick::run(base?, base_shape?, selections, positions, shape, axes)
             }
             Work::Along { how, axis, has_x } => {
-                let full = self.widened(&step.reads, Some(*axis));
-                let feeds = feeds(&full);
+                let full = self.widened(&step.reads, *axis);
+                let feeds = read.along(&full);
                 let x = if *has_x { feeds.get(1) } else { None };
-                vec![along::run(*how, feeds.first()?, x, *axis, &full)]
+                along::run(*how, feeds.first()?, x, *axis, &full)
             }
-            Work::Call {
-                entry,
-                arguments,
-                over: None,
-            } => lines::each(
-                entry,
-                arguments,
-                &feeds(&shape),
-                shape.conditions(),
-                &self.program.texts,
-            ),
-            Work::Call {
-                entry,
-                arguments,
-                over: Some(axis),
-            } => {
-                let full = self.widened(&step.reads, Some(*axis));
-                lines::along(
-                    entry,
-                    arguments,
-                    &feeds(&full),
-                    *axis,
-                    &full,
-                    &self.program.texts,
-                )
-            }
+            _ => return None,
         })
     }
 
     /// The shape of all reads together, with an axis that is consumed.
-    fn widened(&self, reads: &[SlotId], axis: Option<crate::axes::AxisId>) -> Shape {
+    fn widened(&self, reads: &[SlotId], axis: crate::axes::AxisId) -> Shape {
         let all = reads.iter().fold(AxisSet::NONE, |set, s| {
             set.with(self.plan.slots[s.0 as usize])
         });
-        Shape::of(
-            axis.map_or(all, |a| all.with(AxisSet::of(a))),
-            &self.plan.lengths,
-        )
+        Shape::of(all.with(AxisSet::of(axis)), &self.plan.lengths)
     }
 
     /// Counts the operations of a step, and stops the run where there are too many.
@@ -408,6 +383,21 @@ impl Machine<'_> {
             .and_then(|q| self.program.quantities.get(q.0 as usize));
         let (statement, span) = quantity.map_or((0, Span::default()), |q| (q.statement, q.span));
         self.problems.push(at_quantity(statement, span, fault));
+    }
+}
+
+/// What a step reads.
+struct Reads<'a> {
+    columns: &'a [Rc<Vec<f64>>],
+    shapes: &'a [Shape],
+}
+
+impl Reads<'_> {
+    /// The reads along the conditions of a shape.
+    fn along(&self, outer: &Shape) -> Vec<Feed<'_>> {
+        let each = self.columns.iter().zip(self.shapes);
+        each.map(|(values, inner)| Feed::new(values, inner, outer))
+            .collect()
     }
 }
 

@@ -8,8 +8,8 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Error,
     what: "An axis has at least one label or point.",
     why: "Over an axis without points there is nothing to work out.",
-    example: Some("vary y [m]: 0 to 10 step -1\n"),
-    fixed: Some("vary y [m]: 0 to 10 step 1\n"),
+    example: Some("table point | V\nend\n"),
+    fixed: Some("table point | V\nA | 2\nend\n"),
 };
 
 pub(super) fn draft(axis: &str) -> Draft {

@@ -9,8 +9,8 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Error,
     what: "The entries of a free body are forces at stations, axial forces at heights, and couples.",
     why: "Sums of forces and moments can be formed from nothing else.",
-    example: Some("S [ft^2] = 142\nx [ft] = 6\nfreebody \"Balance\": S @ x\n"),
-    fixed: Some("L [lb] = 142\nx [ft] = 6\nfreebody \"Balance\": L @ x, -L @ x\n"),
+    example: None,
+    fixed: None,
 };
 
 pub(super) fn draft(name: &str) -> Draft {

@@ -9,8 +9,12 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Warning,
     what: "A lift slope without a unit is per radian, where a wing has about 4 to 6.",
     why: "A slope of 0.1 is nearly always per degree, and taken per radian it is wrong by a factor of 57.",
-    example: Some("CL = lift_slope(6, 0.1)\n"),
-    fixed: Some("CL = lift_slope(6, 0.1 /deg)\n"),
+    example: Some(
+        "x = neutral_point(6.1 ft, 0.08, 142 ft^2, 4.6 ft, 17.3 ft, 3.6 /rad, 24 ft^2, 0.4)\n",
+    ),
+    fixed: Some(
+        "x = neutral_point(6.1 ft, 0.08 /deg, 142 ft^2, 4.6 ft, 17.3 ft, 3.6 /rad, 24 ft^2, 0.4)\n",
+    ),
 };
 
 pub(super) fn draft(site: &Site<'_>, argument: &str, value: f64, number: Option<Span>) -> Draft {

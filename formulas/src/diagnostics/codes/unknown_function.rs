@@ -9,8 +9,8 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Error,
     what: "A name before a bracket is a function of the catalogue or of the sheet.",
     why: "A function spelt wrong computes nothing.",
-    example: Some("s = thin_secton(\"2412\")\n"),
-    fixed: Some("s = thin_section(\"2412\")\n"),
+    example: Some("s = sqrtt(4)\n"),
+    fixed: Some("s = sqrt(4)\n"),
 };
 
 pub(super) fn draft(site: &Site<'_>, name: &str, nearest: &Option<String>) -> Draft {

@@ -9,8 +9,8 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Error,
     what: "An argument that chooses a rule, a category or a manner is given one of its words.",
     why: "A set of rules that is not coded gives no number, rather than a guess.",
-    example: Some("f = factor_of_safety(\"CS 99\")\n"),
-    fixed: Some("f = factor_of_safety(\"CS-VLA\")\n"),
+    example: Some("f = pitch_rate_angle(3.8, 90 KTAS, 11 ft, \"loop\")\n"),
+    fixed: Some("f = pitch_rate_angle(3.8, 90 KTAS, 11 ft, \"turn\")\n"),
 };
 
 pub(super) fn draft(

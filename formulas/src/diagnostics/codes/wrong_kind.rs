@@ -10,8 +10,8 @@ pub(super) const ROW: Code = Code {
     severity: Severity::Error,
     what: "Numbers, texts and conditions each stand where they are due.",
     why: "A designation such as 2412 is a name made of digits and no number to calculate with.",
-    example: Some("s = thin_section(2412)\n"),
-    fixed: Some("s = thin_section(\"2412\")\n"),
+    example: Some("f = pitch_rate_angle(3.8, 90 KTAS, 11 ft, 3)\n"),
+    fixed: Some("f = pitch_rate_angle(3.8, 90 KTAS, 11 ft, \"turn\")\n"),
 };
 
 pub(super) fn draft(
