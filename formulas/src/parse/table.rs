@@ -106,11 +106,9 @@ impl Cursor<'_> {
         let expected = header.columns.len() + 1;
         if found != expected {
             self.note(row.span, Fault::RowLength { expected, found });
-            // Which cell is one too many is not known; one that is missing is most often the last.
-            if found > expected {
-                for cell in &mut row.cells {
-                    cell.value.kind = ExprKind::Error;
-                }
+            // Which cell is missing, or one too many, is not known.
+            for cell in &mut row.cells {
+                cell.value.kind = ExprKind::Error;
             }
             row.cells
                 .resize_with(expected - 1, || unread(error(row.span.behind())));
