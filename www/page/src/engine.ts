@@ -3,7 +3,7 @@ import workerSource from "../generated/worker.txt";
 import type { Report } from "./report.js";
 
 export type FromWorker =
-  | { ready: true }
+  | { ready: true; module: WebAssembly.Module }
   | { serial: number; report: Report }
   | { serial: number; failure: string };
 
@@ -20,8 +20,12 @@ export interface EngineEvents {
 const BUSY_AFTER_MS = 200;
 
 export class Engine {
+  /** The compiled engine, for what the page itself asks of it. */
   readonly module: Promise<WebAssembly.Module>;
+  #compiled: (module: WebAssembly.Module) => void = () => {};
   #events: EngineEvents;
+  #packed: string;
+  #module: WebAssembly.Module | null = null;
   #worker: Worker | null = null;
   #running: number | null = null;
   #waiting: { serial: number; text: string } | null = null;
@@ -30,10 +34,9 @@ export class Engine {
   /** Starts the engine from the packed bytes in the page. */
   constructor(packed: string, events: EngineEvents) {
     this.#events = events;
-    this.module = compile(packed);
-    // The thread starts while the engine is still being unpacked.
-    void this.#renew();
-    this.module.catch((error: unknown) => events.failure(String(error), 0));
+    this.#packed = packed;
+    this.module = new Promise((resolve) => (this.#compiled = resolve));
+    this.#renew();
   }
 
   /** Evaluates `text` as soon as the thread is free; a text that was still waiting is passed over. */
@@ -48,29 +51,31 @@ export class Engine {
     this.#worker?.terminate();
     this.#worker = null;
     this.#settle();
-    void this.#renew();
+    this.#renew();
     if (serial !== null) this.#events.failure("Stopped. The values are those from before.", serial);
   }
 
-  async #renew(): Promise<void> {
+  /** A thread of its own; until its engine is ready it keeps the text that it is given. */
+  #renew(): void {
     const source = new Blob([workerSource], { type: "text/javascript" });
     const address = URL.createObjectURL(source);
     const worker = new Worker(address);
     URL.revokeObjectURL(address);
     worker.onmessage = (event: MessageEvent<FromWorker>) => this.#hear(worker, event.data);
     worker.onerror = (event) => this.#crash(event.message);
-    const module = await this.module.catch(() => null);
-    if (module) worker.postMessage({ module });
+    worker.postMessage(this.#module ? { module: this.#module } : { packed: this.#packed });
+    this.#worker = worker;
+    this.#next();
   }
 
   #hear(worker: Worker, message: FromWorker): void {
     if ("ready" in message) {
       performance.mark("engine ready");
-      this.#worker = worker;
-      this.#next();
+      this.#module = message.module;
+      this.#compiled(message.module);
     } else if ("failure" in message) {
       worker.terminate();
-      this.#crash(message.failure);
+      this.#crash(message.failure, message.serial);
     } else {
       this.#settle();
       // The next text is on its way before this report is drawn.
@@ -79,20 +84,22 @@ export class Engine {
     }
   }
 
-  #crash(message: string): void {
-    const serial = this.#running ?? 0;
+  #crash(message: string, of?: number): void {
+    const serial = of ?? this.#running ?? 0;
     this.#worker = null;
     this.#settle();
-    void this.#renew();
+    // An engine that could not be unpacked will not be at the next try either.
+    if (serial !== 0 || this.#module) this.#renew();
     this.#events.failure(message, serial);
   }
 
   #next(): void {
     if (!this.#worker || this.#running !== null || !this.#waiting) return;
-    this.#running = this.#waiting.serial;
-    this.#worker.postMessage(this.#waiting);
+    const next = this.#waiting;
     this.#waiting = null;
+    this.#running = next.serial;
     this.#timer = window.setTimeout(() => this.#events.busy(true), BUSY_AFTER_MS);
+    this.#worker.postMessage(next);
   }
 
   #settle(): void {
@@ -100,17 +107,4 @@ export class Engine {
     this.#running = null;
     this.#events.busy(false);
   }
-}
-
-async function compile(packed: string): Promise<WebAssembly.Module> {
-  const unpacked = new Blob([bytesOf(packed)]).stream().pipeThrough(new DecompressionStream("gzip"));
-  const headers = { "content-type": "application/wasm" };
-  const module = await WebAssembly.compileStreaming(new Response(unpacked, { headers }));
-  performance.mark("engine compiled");
-  return module;
-}
-
-function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
-  const modern = Uint8Array as unknown as { fromBase64?: (text: string) => Uint8Array<ArrayBuffer> };
-  return modern.fromBase64?.(base64) ?? Uint8Array.from(atob(base64), (byte) => byte.charCodeAt(0));
 }

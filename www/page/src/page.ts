@@ -56,7 +56,9 @@ export class Page {
       failure: (message, serial) => this.#failed(message, serial),
       busy: (busy) => this.#busy(busy),
     });
-    this.#engine.module.then(loadHighlighter, () => {});
+    // The first text is worked out while the page is laid out.
+    this.#changed();
+    void this.#engine.module.then(loadHighlighter);
     this.#titleBlock = new TitleBlock(this.#sheet);
     this.#selectors = new Selectors(this.#choice, (choice) => this.#choose(choice));
     this.#form = new Form({ open: (row, place) => this.#desk.open(row, place), key: (event) => this.#desk.key(event) });
@@ -68,7 +70,6 @@ export class Page {
     this.#findings = new Findings({ fix: (fix) => this.#fix(fix), goTo: (line) => this.#goTo(line) });
     this.#controls = this.#layOut();
     this.#listen();
-    this.#changed();
   }
 
   #layOut(): Controls {
