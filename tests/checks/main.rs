@@ -1,126 +1,118 @@
-//! Against the outside: published values, each run through a sheet as a designer would type it, with its source beside
-//! it. `cargo test -p tests --test checks -- --nocapture` prints the table.
+//! Against the outside: published and independently computed values, each worked out by a sheet as a designer would type
+//! it, with its source beside it. `cargo test -p tests --test checks -- --nocapture` prints the table.
 
 mod example;
+mod rows;
 
 use formulas::Sheet;
-use formulas::report::Report;
+use formulas::diagnostics::Severity;
+use formulas::report::{Report, ValueList};
+use rows::Row;
+use std::collections::{BTreeMap, BTreeSet};
 
-/// The rows, in blocks.
-const PUBLISHED: &str = include_str!("published.cases");
-/// The rows that do not apply.
-const LEFT_OUT: &str = include_str!("left-out.txt");
-
-/// One check.
-struct Check {
-    id: String,
-    quantity: String,
-    kind: String,
-    source: String,
-    symbol: String,
-    expected: f64,
-    unit: String,
-    relative: bool,
-    within: f64,
-    sheet: String,
-}
-
-fn checks() -> Vec<Check> {
-    PUBLISHED.split("\n--- ").skip(1).map(block).collect()
-}
-
-fn block(text: &str) -> Check {
-    let mut lines = text.lines();
-    let id = lines
-        .next()
-        .unwrap_or("")
-        .trim_end_matches(" ---")
-        .to_owned();
-    let mut word = |word: &str| {
-        let line = lines.next().unwrap_or("");
-        line.strip_prefix(word)
-            .unwrap_or_else(|| panic!("{id}: {word} is due, not {line}"))
-            .trim()
-            .to_owned()
+/// The text of a sheet beside this file, with its name.
+macro_rules! sheet {
+    ($name:literal) => {
+        (
+            $name,
+            include_str!(concat!("sheets/", $name, ".pitchwright")),
+        )
     };
-    let (quantity, kind, source, expect) = (
-        word("quantity"),
-        word("kind"),
-        word("source"),
-        word("expect"),
-    );
-    let (symbol, rest) = expect.split_once(" = ").expect("symbol = value");
-    let (value, rest) = rest.split_once(" [").expect("[unit]");
-    let (unit, rest) = rest.split_once("] within ").expect("within");
-    let (grade, within) = rest.split_once(' ').expect("abs or rel");
-    Check {
-        quantity,
-        kind,
-        source,
-        symbol: symbol.to_owned(),
-        expected: value.parse().expect("a number"),
-        unit: unit.to_owned(),
-        relative: grade == "rel",
-        within: within.parse().expect("a number"),
-        sheet: lines.map(|l| format!("{l}\n")).collect(),
-        id,
-    }
 }
 
-/// The one value of a quantity, in its unit.
-fn value(report: &Report, symbol: &str, unit: &str) -> Option<f64> {
-    let quantity = report.quantity(symbol)?;
-    let value = serde_json::to_value(&quantity.values)
-        .ok()?
-        .as_array()?
-        .first()?
-        .as_f64()?;
-    assert_eq!(
-        quantity.unit.as_deref().unwrap_or("1"),
-        unit,
-        "the unit of {symbol}"
-    );
-    Some(value)
+/// The sheets, by the name of their file.
+const SHEETS: [(&str, &str); 11] = [
+    sheet!("airspeeds"),
+    sheet!("atmosphere"),
+    sheet!("balancing-loads"),
+    sheet!("general-aviation-airplane"),
+    sheet!("mass-and-planform"),
+    sheet!("model-and-elevator"),
+    sheet!("moment-transfer"),
+    sheet!("symmetric-manoeuvre"),
+    sheet!("trim-problems"),
+    sheet!("units"),
+    sheet!("wind-tunnel-model"),
+];
+
+/// The reports of all sheets.
+fn reports() -> BTreeMap<&'static str, Report> {
+    SHEETS
+        .iter()
+        .map(|(name, text)| (*name, Sheet::open(text).report(&[])))
+        .collect()
+}
+
+/// What a row gives in its report, in the unit of the row; a sentence where it gives nothing.
+fn obtained(row: &Row, reports: &BTreeMap<&'static str, Report>) -> Result<f64, String> {
+    let place = row.place.as_ref().ok_or("left out")?;
+    let report = reports
+        .get(place.sheet.as_str())
+        .ok_or(format!("there is no sheet {}", place.sheet))?;
+    let quantity = report
+        .quantity(&place.symbol)
+        .ok_or(format!("there is no symbol {}", place.symbol))?;
+    let unit = quantity.unit.as_deref().unwrap_or("1");
+    if unit != row.unit {
+        return Err(format!(
+            "{} is in {unit}, not in {}",
+            place.symbol, row.unit
+        ));
+    }
+    let at = condition(report, &quantity.axes, &place.condition)?;
+    match &quantity.values {
+        Some(ValueList::Numbers(list)) => list.get(at).copied().flatten(),
+        _ => None,
+    }
+    .ok_or(format!("{} has no value there", place.symbol))
+}
+
+/// Number of a condition, row-major over the axes, by the labels of all of them.
+fn condition(
+    report: &Report,
+    axes: &[String],
+    labels: &[(String, String)],
+) -> Result<usize, String> {
+    if axes.len() != labels.len() {
+        return Err(format!("{} axes, {} labels", axes.len(), labels.len()));
+    }
+    axes.iter().try_fold(0, |at, name| {
+        let axis = report.axes.iter().find(|a| a.name == *name);
+        let axis = axis.ok_or(format!("there is no axis {name}"))?;
+        let label = labels.iter().find(|(axis, _)| axis == name);
+        let (_, label) = label.ok_or(format!("no label of {name}"))?;
+        let position = axis.labels.iter().position(|l| l == label);
+        let position = position.ok_or(format!("{name} has no label {label}"))?;
+        Ok(at * axis.labels.len() + position)
+    })
 }
 
 #[test]
 fn published_values_come_out_of_sheets() {
-    let all = checks();
-    assert!(all.len() > 130, "only {} checks", all.len());
+    let reports = reports();
     let mut wrong = Vec::new();
-    for check in &all {
-        assert!(
-            !check.source.is_empty() && !check.kind.is_empty(),
-            "{} has no source",
-            check.id
-        );
-        let report = Sheet::open(&check.sheet).report(&[]);
-        let Some(obtained) = value(&report, &check.symbol, &check.unit) else {
-            let messages: Vec<&str> = report.findings.iter().map(|f| f.message.as_str()).collect();
-            wrong.push(format!("{}: no value: {}", check.id, messages.join(" ")));
-            continue;
+    println!(
+        "{:18} {:44} {:>16} {:>16} {:>10} {:>10}  unit, source (kind)",
+        "row", "quantity", "expected", "obtained", "difference", "tolerance"
+    );
+    for row in rows::all().iter().filter(|row| row.place.is_some()) {
+        let value = match obtained(row, &reports) {
+            Ok(value) => value,
+            Err(why) => {
+                wrong.push(format!("{}: {why}", row.id));
+                continue;
+            }
         };
-        let difference = obtained - check.expected;
-        let allowed = if check.relative {
-            check.within * check.expected.abs()
-        } else {
-            check.within
-        };
+        let difference = value - row.expected;
+        let allowed = row.tolerance.of(row.expected);
         println!(
-            "{:16} {:40.40} {:14.6e} {:14.6e} {:10.1e} {:8.0e} {} ({})",
-            check.id,
-            check.quantity,
-            check.expected,
-            obtained,
-            difference,
-            allowed,
-            check.source,
-            check.kind
+            "{:18} {:44.44} {:16.9e} {value:16.9e} {difference:10.1e} {allowed:10.1e}  {}, {} ({})",
+            row.id, row.quantity, row.expected, row.unit, row.source, row.kind
         );
         if difference.is_nan() || difference.abs() > allowed {
             wrong.push(format!(
-                "{}: expected {}, obtained {obtained}",
-                check.id, check.expected
+                "{}: expected {} {}, obtained {value}, tolerance {allowed:e}",
+                row.id, row.expected, row.unit
             ));
         }
     }
@@ -128,17 +120,72 @@ fn published_values_come_out_of_sheets() {
 }
 
 #[test]
-fn what_is_left_out_has_its_reason() {
-    let ids: Vec<String> = checks().into_iter().map(|c| c.id).collect();
-    for line in LEFT_OUT.lines().skip(2) {
-        let (id, reason) = line.split_once(": ").expect("id: reason");
+fn every_row_is_worked_out_or_left_out_for_a_reason() {
+    let all = rows::all();
+    let ids: BTreeSet<&str> = all.iter().map(|row| row.id.as_str()).collect();
+    assert_eq!(ids.len(), all.len(), "an id stands twice");
+    for row in &all {
+        match &row.place {
+            Some(place) => assert!(
+                !place.symbol.is_empty() && SHEETS.iter().any(|(name, _)| *name == place.sheet),
+                "{} stands in no sheet",
+                row.id
+            ),
+            None => {
+                assert!(row.note.len() > 20, "{} is left out without reason", row.id);
+                println!("left out: {} ({}): {}", row.id, row.quantity, row.note);
+            }
+        }
+        // A tolerance as large as the value would let nought pass.
+        let allowed = row.tolerance.of(row.expected);
         assert!(
-            !reason.is_empty() && !ids.iter().any(|i| i == id),
-            "{id} is checked and left out"
+            row.expected == 0.0 || allowed < 0.5 * row.expected.abs(),
+            "{} would pass whatever the program gives",
+            row.id
         );
     }
-    let mut sorted = ids.clone();
-    sorted.sort();
-    sorted.dedup();
-    assert_eq!(sorted.len(), ids.len(), "an id stands twice");
+    for (name, _) in SHEETS {
+        assert!(
+            all.iter()
+                .any(|row| row.place.as_ref().is_some_and(|p| p.sheet == name)),
+            "no row looks at {name}"
+        );
+    }
+}
+
+/// How many values of each subject there are, so that a lost line of a table shows.
+#[test]
+fn the_tables_are_whole() {
+    let counts = [
+        ("moment", 17),
+        ("balance", 55),
+        ("trim", 51),
+        ("mass", 36),
+        ("atmosphere", 304),
+        ("units", 32),
+    ];
+    for (name, count) in counts {
+        assert_eq!(rows::table(name).len(), count, "{name}");
+    }
+}
+
+#[test]
+fn the_sheets_are_sound() {
+    for (name, report) in reports() {
+        for finding in &report.findings {
+            assert_eq!(
+                finding.severity,
+                Severity::Advice,
+                "{name}:{}: {}",
+                finding.line,
+                finding.message
+            );
+        }
+        for requirement in &report.requirements {
+            assert_eq!(requirement.met, Some(true), "{name}: {}", requirement.text);
+        }
+        for body in &report.freebodies {
+            assert_eq!(body.closes, Some(true), "{name}: {}", body.name);
+        }
+    }
 }
