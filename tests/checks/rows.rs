@@ -24,7 +24,7 @@ const KINDS: [&str; 5] = [
 
 /// How far off a value may be.
 #[derive(Clone, Copy, Debug)]
-pub enum Tolerance {
+pub(crate) enum Tolerance {
     /// By so much, in the unit of the row.
     Absolute(f64),
     /// By that part of the value expected.
@@ -33,7 +33,7 @@ pub enum Tolerance {
 
 impl Tolerance {
     /// How far off a value may be, in the unit of the row.
-    pub fn of(self, expected: f64) -> f64 {
+    pub(crate) fn of(self, expected: f64) -> f64 {
         match self {
             Tolerance::Absolute(by) => by,
             Tolerance::Relative(part) => part * expected.abs(),
@@ -43,31 +43,31 @@ impl Tolerance {
 
 /// Where a value comes out: a sheet, a symbol of it and the labels of one condition, `axis=label; axis=label`.
 #[derive(Clone, Debug)]
-pub struct Place {
-    pub sheet: String,
-    pub symbol: String,
-    pub condition: Vec<(String, String)>,
+pub(crate) struct Place {
+    pub(crate) sheet: String,
+    pub(crate) symbol: String,
+    pub(crate) condition: Vec<(String, String)>,
 }
 
 /// One value from outside.
 #[derive(Clone, Debug)]
-pub struct Row {
-    pub id: String,
-    pub quantity: String,
-    pub expected: f64,
+pub(crate) struct Row {
+    pub(crate) id: String,
+    pub(crate) quantity: String,
+    pub(crate) expected: f64,
     /// In the language's own spelling; `1` for a pure number.
-    pub unit: String,
-    pub tolerance: Tolerance,
-    pub source: String,
-    pub kind: String,
+    pub(crate) unit: String,
+    pub(crate) tolerance: Tolerance,
+    pub(crate) source: String,
+    pub(crate) kind: String,
     /// Where it is worked out; `None` for a row left out.
-    pub place: Option<Place>,
+    pub(crate) place: Option<Place>,
     /// A remark; of a row left out the reason.
-    pub note: String,
+    pub(crate) note: String,
 }
 
 /// All rows of a table.
-pub fn table(name: &str) -> Vec<Row> {
+pub(crate) fn table(name: &str) -> Vec<Row> {
     let (_, text) = TABLES
         .iter()
         .find(|(n, _)| *n == name)
@@ -78,7 +78,7 @@ pub fn table(name: &str) -> Vec<Row> {
 }
 
 /// All rows of all tables.
-pub fn all() -> Vec<Row> {
+pub(crate) fn all() -> Vec<Row> {
     TABLES.iter().flat_map(|(name, _)| table(name)).collect()
 }
 
