@@ -5,10 +5,9 @@ use super::{Checker, Marks, Meaning};
 use crate::axes::{AXES_MOST, AxisId, AxisSet};
 use crate::names::Role;
 use crate::problem::Fault;
-use crate::program::{Axis, Kind, NumberKind, Op, ShownUnit};
+use crate::program::{Axis, Kind, Op, ShownUnit};
 use crate::span::Span;
 use crate::syntax::{Expr, StatementKind, Table, Vary, VaryPoints, Words};
-use engine::quantity::Dimension;
 use std::collections::HashSet;
 
 /// Most labels to an axis.
@@ -306,21 +305,10 @@ impl Checker<'_> {
         let Some(axis) = self.axis_of_symbol.get(name).copied() else {
             return self.add_failed(name.to_string(), span);
         };
-        let (kind, op, unit) = match &self.program.axes[axis.0 as usize] {
-            Axis {
-                values: Some(_),
-                unit,
-                ..
-            } => {
-                let known = unit.as_ref().map(|u| u.unit);
-                let kind = NumberKind {
-                    speed: known.and_then(|u| u.speed_kind),
-                    absolute: known.is_some_and(|u| u.absolute),
-                    ..NumberKind::of(known.map_or(Dimension::NONE, |u| u.dimension))
-                };
-                (Kind::Number(kind), Op::Points(axis), unit.clone())
-            }
-            _ => (Kind::Text, Op::Labels(axis), None),
+        let (kind, unit) = self.axis_kind(axis);
+        let op = match kind {
+            Kind::Text => Op::Labels(axis),
+            _ => Op::Points(axis),
         };
         let node = self.node(op, AxisSet::of(axis));
         let quantity = self.add_quantity(

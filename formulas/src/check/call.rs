@@ -18,15 +18,7 @@ impl Checker<'_> {
         span: Span,
     ) -> Option<Typed> {
         if let Some(statement) = self.names.function(&function.text) {
-            if over.is_some() {
-                self.report(
-                    function.span,
-                    Fault::OverNotTaken {
-                        function: function.text.clone(),
-                    },
-                );
-                return None;
-            }
+            self.takes_no_over(function, over)?;
             return self.own_call(statement, arguments, span);
         }
         // An unknown function was reported with the names.
@@ -35,6 +27,16 @@ impl Checker<'_> {
             Compute::Language => self.language_call(entry, function, arguments, over, span),
             _ => self.catalogue_call(entry, function, arguments, over, span),
         }
+    }
+
+    /// Refuses an `over` at a function that consumes no axis.
+    pub(crate) fn takes_no_over(&mut self, function: &Name, over: Option<&[Name]>) -> Option<()> {
+        if over.is_none() {
+            return Some(());
+        }
+        let name = function.text.clone();
+        self.report(function.span, Fault::OverNotTaken { function: name });
+        None
     }
 
     /// Puts arguments in their places: by position, then by name. The flag of a parameter says that it is required.
@@ -410,15 +412,7 @@ impl Checker<'_> {
         span: Span,
     ) -> Option<Option<AxisId>> {
         if !entry.takes_lines() {
-            if over.is_some() {
-                self.report(
-                    function.span,
-                    Fault::OverNotTaken {
-                        function: function.text.clone(),
-                    },
-                );
-                return None;
-            }
+            self.takes_no_over(function, over)?;
             return Some(None);
         }
         let lines = entry

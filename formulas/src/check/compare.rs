@@ -33,13 +33,7 @@ impl Checker<'_> {
         // Texts are compared by their numbers, which are whole: the tolerance of numbers does not reach them.
         let axes = self.axes_of_all(&[left.node, right.node]);
         let node = self.node(Op::Binary(op, left.node, right.node), axes);
-        Some(Typed {
-            node,
-            kind: Kind::Condition,
-            unit: None,
-            span,
-            marks: Marks::default(),
-        })
+        Some(Typed::condition(node, span))
     }
 
     fn text_mismatch(&mut self, op: BinaryOp, left: Typed, right: Typed) -> Option<Typed> {
@@ -70,13 +64,7 @@ impl Checker<'_> {
         let (left, right) = (left?, right?);
         let axes = self.axes_of_all(&[left.node, right.node]);
         let node = self.node(Op::Binary(op, left.node, right.node), axes);
-        Some(Typed {
-            node,
-            kind: Kind::Condition,
-            unit: None,
-            span,
-            marks: Marks::default(),
-        })
+        Some(Typed::condition(node, span))
     }
 
     /// `if c then a else b`.

@@ -62,20 +62,25 @@ impl Checker<'_> {
             return false;
         };
         let mut input = true;
-        statement_uses(statement, &mut |used| match used {
-            Use::Symbol(name, _) => input &= self.names.symbol(name).is_none(),
-            Use::Function(name, _) => {
-                let general = crate::catalogue::entry(name)
-                    .is_some_and(|e| e.group == crate::catalogue::GENERAL);
-                input &= general && self.names.function(name).is_none();
-            }
-            Use::Axis(..) => {}
-        });
+        statement_uses(statement, &mut |used| input &= self.leaves_input(used));
         input
     }
 
+    /// Whether a right side that uses this is an input still.
+    pub(crate) fn leaves_input(&self, used: Use<'_>) -> bool {
+        match used {
+            Use::Symbol(name, _) => self.names.symbol(name).is_none(),
+            Use::Function(name, _) => {
+                let row = crate::catalogue::entry(name);
+                let general = row.is_some_and(|e| e.group == crate::catalogue::GENERAL);
+                general && self.names.function(name).is_none()
+            }
+            Use::Axis(..) => true,
+        }
+    }
+
     /// Lists the value of a symbol, or each field of a record.
-    fn define(
+    pub(crate) fn define(
         &mut self,
         name: &str,
         span: Span,

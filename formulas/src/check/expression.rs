@@ -31,13 +31,7 @@ impl Checker<'_> {
                 let inner = self.wants_condition(inner, "what stands behind not")?;
                 let axes = self.axes_of(inner.node);
                 let node = self.node(Op::Not(inner.node), axes);
-                Some(Typed {
-                    node,
-                    kind: Kind::Condition,
-                    unit: None,
-                    span: expr.span,
-                    marks: Marks::default(),
-                })
+                Some(Typed::condition(node, expr.span))
             }
             ExprKind::Binary { .. } => self.chain(expr),
             ExprKind::If {

@@ -74,15 +74,7 @@ impl Checker<'_> {
         else {
             return self.axis_function(entry, function, arguments, over, span);
         };
-        if over.is_some() {
-            self.report(
-                function.span,
-                Fault::OverNotTaken {
-                    function: name.to_string(),
-                },
-            );
-            return None;
-        }
+        self.takes_no_over(function, over)?;
         let operands = self.general_arguments(entry, arguments, span)?;
         self.apply(name, general, rule, operands, span)
     }
@@ -221,15 +213,7 @@ impl Checker<'_> {
         function: &Name,
         span: Span,
     ) -> Option<Typed> {
-        if over.is_some() {
-            self.report(
-                function.span,
-                Fault::OverNotTaken {
-                    function: function.text.clone(),
-                },
-            );
-            return None;
-        }
+        self.takes_no_over(function, over)?;
         let placed = self.place_arguments("has_value", &[("x", true)], arguments, span)?;
         let typed = self.expression(&placed.first().copied().flatten()?.value)?;
         if let Kind::Record(_) = typed.kind {
@@ -237,12 +221,6 @@ impl Checker<'_> {
         }
         let axes = self.axes_of(typed.node);
         let node = self.node(Op::HasValue(typed.node), axes);
-        Some(Typed {
-            node,
-            kind: Kind::Condition,
-            unit: None,
-            span,
-            marks: Marks::default(),
-        })
+        Some(Typed::condition(node, span))
     }
 }

@@ -1,8 +1,8 @@
 //! What findings say of operands, and small questions about kinds.
 
-use super::{Checker, Typed};
+use super::{Checker, Marks, Typed};
 use crate::problem::{Fault, Operand};
-use crate::program::{Kind, NumberKind};
+use crate::program::{Kind, NodeId, NumberKind};
 use crate::span::Span;
 use engine::quantity::Dimension;
 
@@ -17,6 +17,17 @@ pub(crate) fn kind_name(kind: Kind) -> &'static str {
 }
 
 impl Typed {
+    /// A condition of that node.
+    pub(crate) fn condition(node: NodeId, span: Span) -> Self {
+        Typed {
+            node,
+            kind: Kind::Condition,
+            unit: None,
+            span,
+            marks: Marks::default(),
+        }
+    }
+
     /// The dimension, of a number.
     pub(crate) fn dimension(&self) -> Dimension {
         match self.kind {

@@ -1,11 +1,11 @@
 //! Tables: rows found by their keys, one quantity a column.
 
 use super::definition::{Judged, PointTolerance};
-use super::{Checker, Marks, Meaning, Typed};
+use super::{Checker, Marks, Typed};
 use crate::axes::{AxisId, AxisSet};
 use crate::names::Role;
 use crate::problem::Fault;
-use crate::program::{Kind, NumberKind, Op};
+use crate::program::Op;
 use crate::syntax::{Parameter, Row, Table};
 
 /// The axes of a table's keys, and for each row the index along each; `None` for a row that could not be placed.
@@ -141,42 +141,10 @@ impl Checker<'_> {
             .names
             .symbol(name)
             .is_some_and(|s| s.statement == self.statement && s.role == Role::Column(at));
-        let value = self.column_value(table, at, column, places);
-        if !stands {
-            return;
-        }
-        let index = self.names.index(name);
-        let Some((typed, tolerances)) = value else {
-            return self.add_failed(name.clone(), column.name.span);
-        };
-        let kind = match typed.kind {
-            Kind::Number(n) => Kind::Number(NumberKind { any: false, ..n }),
-            kind => kind,
-        };
         let input = self.column_is_input(table, at);
-        let quantity = self.add_quantity(
-            name.clone(),
-            column.name.span,
-            kind,
-            typed.unit.clone(),
-            Some(typed.node),
-            input,
-        );
-        self.add_tolerances(quantity, tolerances);
-        if let Some(index) = index {
-            self.meanings[index] = Meaning::Value {
-                quantity,
-                unit: typed.unit,
-                marks: Marks::default(),
-            };
-        }
-        if let Some(hidden) = super::constant(name) {
-            self.report(
-                column.name.span,
-                Fault::HidesConstant {
-                    name: hidden.name.to_string(),
-                },
-            );
+        let value = self.column_value(table, at, column, places, input);
+        if stands {
+            self.define(name, column.name.span, value, input);
         }
     }
 
@@ -186,9 +154,9 @@ impl Checker<'_> {
         at: usize,
         column: &Parameter,
         places: Option<&Places>,
+        input: bool,
     ) -> Option<(Typed, Vec<PointTolerance>)> {
         let bracket = self.bracket(column.unit.as_ref(), &column.name.text).ok()?;
-        let input = self.column_is_input(table, at);
         let mut cells: Vec<Option<Judged>> = Vec::with_capacity(table.rows.len());
         let mut failed = false;
         for row in &table.rows {
@@ -271,15 +239,7 @@ impl Checker<'_> {
     fn column_is_input(&self, table: &Table, at: usize) -> bool {
         let mut input = true;
         for cell in table.rows.iter().filter_map(|row| row.cells.get(at)) {
-            crate::names::uses(&cell.value, &mut |used| match used {
-                crate::names::Use::Symbol(name, _) => input &= self.names.symbol(name).is_none(),
-                crate::names::Use::Function(name, _) => {
-                    let general = crate::catalogue::entry(name)
-                        .is_some_and(|e| e.group == crate::catalogue::GENERAL);
-                    input &= general && self.names.function(name).is_none();
-                }
-                crate::names::Use::Axis(..) => {}
-            });
+            crate::names::uses(&cell.value, &mut |used| input &= self.leaves_input(used));
         }
         input
     }

@@ -1,10 +1,11 @@
 //! The rows of the computation form: each statement as the page and the text report set it out.
 
+use crate::lex::words::title_text;
 use crate::program::{EntryKind, Program};
 use crate::span::Span;
 use crate::syntax::{
-    Definition, DefinitionValue, Name, Parameter, Row, Statement, StatementKind, Table, TitleWord,
-    Tree, UnitText,
+    Definition, DefinitionValue, Name, Parameter, Row, Statement, StatementKind, Table, Tree,
+    UnitText,
 };
 use serde::Serialize;
 
@@ -222,7 +223,7 @@ fn fill(row: &mut FormRow, source: &Source, statement: &Statement) {
     match &statement.kind {
         StatementKind::Blank => {}
         StatementKind::Prose => row.how = row.remark.take().unwrap_or_default(),
-        StatementKind::Title { word, text } => worded(row, title_word(*word), &text.text),
+        StatementKind::Title { word, text } => worded(row, title_text(*word), &text.text),
         StatementKind::Part(text) => worded(row, "part", &text.text),
         StatementKind::Sub(text) => worded(row, "sub", &text.text),
         StatementKind::Note(text) => worded(row, "note", &text.text),
@@ -335,20 +336,6 @@ fn table_row(source: &Source, first_line: u32, row: &Row) -> FormTableRow {
         line: first_line.saturating_add(row.line),
         cells: keys.chain(cells.map(str::to_owned)).collect(),
         remark: row.remark.as_ref().map(|r| r.text.clone()),
-    }
-}
-
-fn title_word(word: TitleWord) -> &'static str {
-    match word {
-        TitleWord::Title => "title",
-        TitleWord::Revision => "revision",
-        TitleWord::Date => "date",
-        TitleWord::Prepared => "prepared",
-        TitleWord::Checked => "checked",
-        TitleWord::Basis => "basis",
-        TitleWord::Digits => "digits",
-        TitleWord::Units => "units",
-        TitleWord::Sources => "sources",
     }
 }
 

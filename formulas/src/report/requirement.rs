@@ -4,11 +4,10 @@ use super::convert::{Scale, condition};
 use super::{Condition, Freebody, FreebodyCouple, FreebodyForce, Requirement, WorstCondition};
 use crate::axes::Shape;
 use crate::program::{Comparison, EntryKind, FreebodyEntry, Program};
+use crate::run::scalar;
 use crate::syntax::{BinaryOp, Tree};
 use crate::values::{FreebodyValues, RequirementValues, Values};
 
-/// Two numbers closer than this part of the larger are equal.
-const EQUAL_WITHIN: f64 = 1e-12;
 /// A requirement `=` is met within this part of the larger side.
 const REQUIRED_EQUAL_WITHIN: f64 = 1e-9;
 
@@ -70,7 +69,7 @@ fn worst(
 pub(super) fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
     let apart = (left - right).abs();
     let larger = left.abs().max(right.abs());
-    let equal = apart <= EQUAL_WITHIN * larger;
+    let equal = scalar::equal(left, right);
     match op {
         BinaryOp::NotEqual if equal => 0.0,
         BinaryOp::NotEqual => apart,

@@ -12,8 +12,9 @@ pub(crate) mod scalar;
 mod spread;
 
 use crate::axes::{AxisSet, Shape};
+use crate::names::located;
 use crate::plan::{Plan, SlotId, Step, Work};
-use crate::problem::{Cause, Conditions, Fault, Located, Problem};
+use crate::problem::{Cause, Conditions, Fault, Located};
 use crate::program::Program;
 use crate::span::Span;
 use crate::values::{Column, NONE, QuantityValues, Summary, Values, is_excluded};
@@ -169,9 +170,6 @@ impl Machine<'_> {
                 .into_iter()
                 .chain(sides)
                 .for_each(|n| need(self.plan.nodes.get(&n)));
-            for node in requirement.parts.iter().flat_map(|p| [p.left, p.right]) {
-                need(self.slot_of(node).as_ref());
-            }
         }
         for entry in self.program.freebodies.iter().flat_map(|b| &b.items) {
             need(self.slot_of(entry.value).as_ref());
@@ -219,7 +217,7 @@ impl Machine<'_> {
                     conditions,
                 };
                 self.problems
-                    .push(at_quantity(quantity.statement, quantity.span, fault));
+                    .push(located(quantity.statement, quantity.span, fault));
             }
         }
         let Some(column) = self.columns.get(slot.0 as usize).and_then(Option::as_ref) else {
@@ -382,7 +380,7 @@ impl Machine<'_> {
             .quantity
             .and_then(|q| self.program.quantities.get(q.0 as usize));
         let (statement, span) = quantity.map_or((0, Span::default()), |q| (q.statement, q.span));
-        self.problems.push(at_quantity(statement, span, fault));
+        self.problems.push(located(statement, span, fault));
     }
 }
 
@@ -416,13 +414,6 @@ fn quantities_by_step(plan: &Plan) -> Vec<Vec<usize>> {
         }
     }
     by_step
-}
-
-pub(crate) fn at_quantity(statement: usize, span: Span, fault: Fault) -> Located {
-    Located {
-        statement: Some(statement),
-        problem: Problem { span, fault },
-    }
 }
 
 /// Each condition takes the value of the read that its labels choose.

@@ -1,12 +1,13 @@
 //! Governing conditions, requirements, free bodies.
 
 use super::feed::Feed;
-use super::{Machine, at_quantity, conditions, scalar, summary_of};
+use super::{Machine, conditions, scalar, summary_of};
 use crate::axes::Shape;
+use crate::names::located;
 use crate::plan::SlotId;
 use crate::problem::Fault;
 use crate::program::{
-    Comparison, EntryKind, Freebody, FreebodyEntry, Governing, NodeId, QuantityId, Requirement,
+    EntryKind, Freebody, FreebodyEntry, Governing, NodeId, QuantityId, Requirement,
 };
 use crate::span::Span;
 use crate::syntax::BinaryOp;
@@ -154,15 +155,17 @@ impl Machine<'_> {
         if body.items.is_empty() {
             return result;
         }
-        let items: Option<Vec<Loaded<'_>>> = body.items.iter().map(|e| self.load(e)).collect();
-        let Some(items) = items else { return result };
+        let Some(items) = self.loaded(body) else {
+            return result;
+        };
+        let items = reads(&items, &shape);
         result.known = true;
         result.closes = true;
         let mut open: Vec<usize> = Vec::new();
         let mut farthest = -1.0;
         let mut worst_sums = Sums::default();
         for at in 0..shape.conditions() {
-            let sums = sums(&items, &shape, at);
+            let sums = sums(&items, at);
             let Some(sums) = sums else {
                 result.without_value += 1;
                 continue;
@@ -196,16 +199,21 @@ impl Machine<'_> {
         result
     }
 
-    fn load<'e>(&self, entry: &'e FreebodyEntry) -> Option<Loaded<'e>> {
-        let at = match entry.at {
-            Some(node) => Some(self.held(node)?),
-            None => None,
+    /// The entries of a free body with their columns; `None` where one is not there.
+    fn loaded(&self, body: &Freebody) -> Option<Vec<Loaded>> {
+        let load = |entry: &FreebodyEntry| {
+            let at = match entry.at {
+                Some(node) => Some(self.held(node)?),
+                None => None,
+            };
+            let value = self.held(entry.value)?;
+            Some(Loaded {
+                kind: entry.kind,
+                value,
+                at,
+            })
         };
-        Some(Loaded {
-            entry,
-            value: self.held(entry.value)?,
-            at,
-        })
+        body.items.iter().map(load).collect()
     }
 
     fn report_open(&mut self, body: &Freebody, result: &FreebodyValues, sums: &Sums) {
@@ -236,7 +244,7 @@ impl Machine<'_> {
             axial: axial.then(|| shown(sums.axial.0, force, "N")),
             moment: shown(sums.moment.0, moment, "N.m"),
         };
-        self.problems.push(at_quantity(
+        self.problems.push(located(
             body.statement,
             Span::new(0, "freebody".len()),
             fault,
@@ -289,18 +297,35 @@ impl Machine<'_> {
     }
 
     fn force_sum_closes(&self, body: &Freebody, shape: &Shape) -> bool {
-        let items: Option<Vec<Loaded<'_>>> = body.items.iter().map(|e| self.load(e)).collect();
-        let Some(items) = items else { return false };
-        (0..shape.conditions())
-            .all(|at| sums(&items, shape, at).is_some_and(|s| ratio(s.force) <= CLOSE))
+        let Some(items) = self.loaded(body) else {
+            return false;
+        };
+        let items = reads(&items, shape);
+        (0..shape.conditions()).all(|at| sums(&items, at).is_some_and(|s| ratio(s.force) <= CLOSE))
     }
 }
 
 /// An entry of a free body with its columns.
-struct Loaded<'e> {
-    entry: &'e FreebodyEntry,
+struct Loaded {
+    kind: EntryKind,
     value: Held,
     at: Option<Held>,
+}
+
+/// The same, read along the conditions of the free body.
+struct Read<'a> {
+    kind: EntryKind,
+    value: Feed<'a>,
+    at: Option<Feed<'a>>,
+}
+
+fn reads<'a>(items: &'a [Loaded], shape: &Shape) -> Vec<Read<'a>> {
+    let read = |item: &'a Loaded| Read {
+        kind: item.kind,
+        value: item.value.feed(shape),
+        at: item.at.as_ref().map(|at| at.feed(shape)),
+    };
+    items.iter().map(read).collect()
 }
 
 /// Sums and sums of magnitudes.
@@ -325,19 +350,16 @@ fn ratio(sum: (f64, f64)) -> f64 {
 }
 
 /// The sums in one condition, moments about the first station and height; `None` where a value is missing.
-fn sums(items: &[Loaded<'_>], shape: &Shape, condition: usize) -> Option<Sums> {
+fn sums(items: &[Read<'_>], condition: usize) -> Option<Sums> {
     let mut sums = Sums::default();
     let (mut first_station, mut first_height) = (None, None);
     for item in items {
-        let value = item.value.feed(shape).value(condition);
-        let at = item
-            .at
-            .as_ref()
-            .map_or(0.0, |at| at.feed(shape).value(condition));
+        let value = item.value.value(condition);
+        let at = item.at.as_ref().map_or(0.0, |at| at.value(condition));
         if value.is_nan() || at.is_nan() {
             return None;
         }
-        match item.entry.kind {
+        match item.kind {
             EntryKind::Force => {
                 add(&mut sums.force, value);
                 add(
@@ -398,7 +420,7 @@ fn count_condition(result: &mut RequirementValues, truth: f64) {
 
 /// Distance to the limit, positive when met.
 #[must_use]
-pub(crate) fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
+fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
     match op {
         BinaryOp::Less | BinaryOp::LessOrEqual => right - left,
         BinaryOp::Greater | BinaryOp::GreaterOrEqual => left - right,
@@ -414,14 +436,5 @@ fn relative_reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
         0.0
     } else {
         reserve(op, left, right) / size
-    }
-}
-
-/// Kept beside the parts it is about.
-impl Comparison {
-    /// The distance to the limit, positive when met.
-    #[must_use]
-    pub fn reserve(&self, left: f64, right: f64) -> f64 {
-        reserve(self.op, left, right)
     }
 }

@@ -105,6 +105,7 @@ impl Machine<'_> {
                 .all(|(axis, label)| shape.position(*axis).is_none_or(|p| indices[p] == *label))
         };
         let mut effects: Vec<(usize, Vec<f64>)> = Vec::new();
+        let base = self.columns.clone();
         for sign in [1.0, -1.0] {
             let moved = nominal
                 .iter()
@@ -115,7 +116,6 @@ impl Machine<'_> {
                     ToleranceWidth::Node(_) => value + sign * width.unwrap_or(0.0),
                 });
             let moved: Vec<f64> = moved.collect();
-            let base = self.columns.clone();
             self.with_column(slot, moved, |machine| {
                 machine.larger_changes(&base, &mut effects)
             })?;
