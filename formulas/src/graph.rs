@@ -15,8 +15,10 @@ pub struct Order {
     pub statements: Vec<usize>,
     /// For each statement, whether it stands in a circle (or is an own function that calls itself).
     pub circular: Vec<bool>,
-    /// For each statement, the statements it rests on.
+    /// For each statement, the statements it rests on; for an `unknown` those of its bounds.
     pub rests_on: Vec<Vec<usize>>,
+    /// For each statement, what the equations of an `unknown` rest on, lines that use it among them.
+    pub equations: Vec<Vec<usize>>,
     /// For each symbol of `Names::symbols`, whether anything uses it.
     pub symbol_used: Vec<bool>,
     /// The statements of own functions that something calls.
@@ -33,9 +35,15 @@ pub fn order(tree: &Tree, names: &Names, problems: &mut Vec<Located>) -> Order {
     };
     for index in 0..tree.statements.len() {
         let edges = edges_of(tree, names, index, &mut order, problems);
-        order.rests_on.push(edges);
+        let (bounds, equations) = match &tree.statements[index].kind {
+            StatementKind::Unknown(u) => (bounds_of(names, u), edges),
+            _ => (edges, Vec::new()),
+        };
+        order.rests_on.push(bounds);
+        order.equations.push(equations);
     }
     sort(tree, names, &mut order, problems);
+    unknowns_that_need_each_other(tree, names, &mut order, problems);
     order
 }
 
@@ -89,6 +97,101 @@ fn edges_of(
     edges.sort_unstable();
     edges.dedup();
     edges
+}
+
+/// The statements that the bounds of an `unknown` rest on.
+fn bounds_of(names: &Names, unknown: &crate::syntax::Unknown) -> Vec<usize> {
+    let mut targets = Vec::new();
+    for symbol in &unknown.unknowns {
+        for bound in [&symbol.low, &symbol.high] {
+            crate::names::uses(bound, &mut |used| match used {
+                Use::Function(name, _) => targets.extend(names.function(name)),
+                Use::Symbol(name, _) | Use::Axis(name, _) => {
+                    targets.extend(names.symbol(name).map(|s| s.statement));
+                }
+            });
+        }
+    }
+    targets.sort_unstable();
+    targets.dedup();
+    targets
+}
+
+/// An unknown may stand in the lines of its own equations, and use another unknown; two that need each other are a
+/// circle.
+fn unknowns_that_need_each_other(
+    tree: &Tree,
+    names: &Names,
+    order: &mut Order,
+    problems: &mut Vec<Located>,
+) {
+    let is_unknown = |s: usize| matches!(tree.statements[s].kind, StatementKind::Unknown(_));
+    let unknowns: Vec<usize> = (0..tree.statements.len())
+        .filter(|s| is_unknown(*s))
+        .collect();
+    // What each rests on by way of lines: other unknowns are noted and not entered.
+    let needs: Vec<Vec<usize>> = unknowns
+        .iter()
+        .map(|start| {
+            let mut seen = vec![false; tree.statements.len()];
+            let mut open = [&order.rests_on[*start][..], &order.equations[*start]].concat();
+            let mut found = Vec::new();
+            while let Some(at) = open.pop() {
+                if at == *start || std::mem::replace(&mut seen[at], true) {
+                    continue;
+                }
+                match unknowns.binary_search(&at) {
+                    Ok(other) => found.push(other),
+                    Err(_) => open.extend(&order.rests_on[at]),
+                }
+            }
+            found.sort_unstable();
+            found
+        })
+        .collect();
+    for start in 0..unknowns.len() {
+        if let Some(chain) = way_back(&needs, start)
+            && !chain.iter().all(|at| order.circular[unknowns[*at]])
+        {
+            let mut names_of: Vec<String> = chain
+                .iter()
+                .map(|at| names.of_statement(unknowns[*at]).0.to_string())
+                .collect();
+            names_of.extend(names_of.first().cloned());
+            chain
+                .iter()
+                .for_each(|at| order.circular[unknowns[*at]] = true);
+            let span = names.of_statement(unknowns[start]).1;
+            problems.push(located(
+                unknowns[start],
+                span,
+                Fault::Circular { chain: names_of },
+            ));
+        }
+    }
+}
+
+/// The shortest way from a node back to itself.
+fn way_back(needs: &[Vec<usize>], start: usize) -> Option<Vec<usize>> {
+    let mut came_from = vec![None; needs.len()];
+    let mut open = std::collections::VecDeque::from([start]);
+    while let Some(at) = open.pop_front() {
+        for next in &needs[at] {
+            if *next == start {
+                let mut chain = vec![at];
+                while let Some(before) = came_from[chain[chain.len() - 1]] {
+                    chain.push(before);
+                }
+                chain.reverse();
+                return Some(chain);
+            }
+            if came_from[*next].is_none() {
+                came_from[*next] = Some(at);
+                open.push_back(*next);
+            }
+        }
+    }
+    None
 }
 
 /// What to say of a name that nothing defines; `None` for constants and catalogue functions.

@@ -507,6 +507,15 @@ pub enum Fault {
         unknowns: usize,
         equations: usize,
     },
+    /// More unknowns in a statement than can be solved for together.
+    UnknownLimit {
+        found: usize,
+        limit: usize,
+    },
+    /// Equations that mix the conditions over which their unknown varies.
+    UnknownCoupled {
+        symbol: String,
+    },
     /// Axes of a figure that are neither named behind `each` nor picked.
     FigureAxes {
         symbol: String,

@@ -38,6 +38,8 @@ pub struct Program {
     pub requirements: Vec<Requirement>,
     /// The `freebody` statements.
     pub freebodies: Vec<Freebody>,
+    /// The `unknown` statements.
+    pub unknowns: Vec<Unknown>,
     /// The inputs that carry a tolerance.
     pub tolerances: Vec<Tolerance>,
     /// Significant figures shown.
@@ -128,6 +130,8 @@ pub enum Op {
     },
     /// The value of a quantity.
     Quantity(QuantityId),
+    /// What a statement of [`Program::unknowns`] solves for: its index, and which of its symbols.
+    Unknown(usize, usize),
     Negate(NodeId),
     Not(NodeId),
     Binary(BinaryOp, NodeId, NodeId),
@@ -263,6 +267,23 @@ pub struct Quantity {
     pub remark: Option<String>,
     /// The part under which it stands.
     pub part: Option<String>,
+}
+
+/// An `unknown` statement.
+#[derive(Clone, Debug)]
+pub struct Unknown {
+    /// The statement.
+    pub statement: usize,
+    /// The symbols it solves for.
+    pub symbols: Vec<String>,
+    /// The place of the first symbol.
+    pub span: Span,
+    /// The bounds of each symbol.
+    pub bounds: Vec<(NodeId, NodeId)>,
+    /// Both sides of each equation; empty where one could not be checked.
+    pub equations: Vec<(NodeId, NodeId)>,
+    /// The axes of all bounds and sides.
+    pub axes: AxisSet,
 }
 
 /// One symbol of a `governing` statement.

@@ -5,8 +5,8 @@
 pub const PARTS: usize = 64;
 /// A residual within this part of the larger side over the ends of the part is a solution.
 const CLOSE: f64 = 1e-10;
-/// The refinement goes on to this part, as the last steps cost little.
-const CLOSER: f64 = 1e-15;
+/// The refinement goes on to the last digit, as the last steps cost little.
+const CLOSER: f64 = 0.0;
 /// Steps of a refinement; halving alone needs fewer to get to neighbouring numbers from anywhere.
 const STEPS_MOST: u32 = 1_200;
 

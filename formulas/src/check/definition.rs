@@ -534,7 +534,7 @@ pub(crate) struct PointTolerance {
 }
 
 /// A definition of nothing but `none` is a pure number.
-fn settled(kind: Kind) -> Kind {
+pub(super) fn settled(kind: Kind) -> Kind {
     match kind {
         Kind::Number(n) if n.any => Kind::Number(NumberKind { any: false, ..n }),
         kind => kind,

@@ -17,6 +17,7 @@ mod reduce;
 mod shown;
 mod table;
 mod units;
+mod unknown;
 
 use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Entry;
@@ -128,6 +129,8 @@ pub(crate) struct Checker<'a> {
     pub(crate) tree: &'a Tree,
     pub(crate) names: &'a Names,
     pub(crate) order: &'a Order,
+    /// The axes that each unknown is taken to vary over, by its statement.
+    unknown_axes: &'a HashMap<usize, AxisSet>,
     pub(crate) program: Program,
     pub(crate) problems: Vec<Located>,
     pub(crate) statement: usize,
@@ -145,46 +148,22 @@ pub(crate) struct Checker<'a> {
 }
 
 /// Checks a sheet whose names are settled.
+///
+/// The axes of an unknown are those of its equations, which may rest on it: the sheet is checked with the fewest axes
+/// first, and again with those found, until they agree.
 #[must_use]
 pub fn check(text: &str, tree: &Tree, names: &Names, order: &Order) -> (Program, Vec<Located>) {
-    let mut checker = Checker {
-        text,
-        tree,
-        names,
-        order,
-        program: Program {
-            digits: 4,
-            ..Program::default()
-        },
-        problems: Vec::new(),
-        statement: 0,
-        meanings: vec![Meaning::Unknown; names.symbols.len()],
-        axis_of_symbol: HashMap::new(),
-        frames: Vec::new(),
-        written_out: 0,
-        prefer: Vec::new(),
-        texts: HashMap::new(),
-        unit_cache: HashMap::new(),
-        constants: HashMap::new(),
-        call_results: HashMap::new(),
-        remarks: tree
-            .statements
-            .iter()
-            .map(|s| s.remark.as_ref().map(|r| r.text.clone()))
-            .collect(),
-        parts: parts(tree),
-    };
-    checker.title_block();
-    checker.declare_axes();
-    for statement in &order.statements {
-        checker.check_statement(*statement);
+    let mut unknown_axes = HashMap::new();
+    loop {
+        let mut checker = Checker::new(text, tree, names, order, &unknown_axes);
+        checker.check_all();
+        let found = checker.unknown_axes_found();
+        if found == unknown_axes {
+            checker.finish();
+            return (checker.program, checker.problems);
+        }
+        unknown_axes = found;
     }
-    for statement in 0..tree.statements.len() {
-        checker.statement = statement;
-        checker.check_output(statement);
-    }
-    checker.finish();
-    (checker.program, checker.problems)
 }
 
 /// The part under which each statement stands.
@@ -200,6 +179,56 @@ fn parts(tree: &Tree) -> Rc<[Option<String>]> {
 }
 
 impl<'a> Checker<'a> {
+    fn new(
+        text: &'a str,
+        tree: &'a Tree,
+        names: &'a Names,
+        order: &'a Order,
+        unknown_axes: &'a HashMap<usize, AxisSet>,
+    ) -> Self {
+        Checker {
+            text,
+            tree,
+            names,
+            order,
+            unknown_axes,
+            program: Program {
+                digits: 4,
+                ..Program::default()
+            },
+            problems: Vec::new(),
+            statement: 0,
+            meanings: vec![Meaning::Unknown; names.symbols.len()],
+            axis_of_symbol: HashMap::new(),
+            frames: Vec::new(),
+            written_out: 0,
+            prefer: Vec::new(),
+            texts: HashMap::new(),
+            unit_cache: HashMap::new(),
+            constants: HashMap::new(),
+            call_results: HashMap::new(),
+            remarks: tree
+                .statements
+                .iter()
+                .map(|s| s.remark.as_ref().map(|r| r.text.clone()))
+                .collect(),
+            parts: parts(tree),
+        }
+    }
+
+    fn check_all(&mut self) {
+        self.title_block();
+        self.declare_axes();
+        for statement in &self.order.statements {
+            self.check_statement(*statement);
+        }
+        self.check_equations();
+        for statement in 0..self.tree.statements.len() {
+            self.statement = statement;
+            self.check_output(statement);
+        }
+    }
+
     /// Reports a problem at a place of the statement in hand.
     pub(crate) fn report(&mut self, span: Span, fault: Fault) {
         self.problems.push(located(self.statement, span, fault));
@@ -246,7 +275,7 @@ impl<'a> Checker<'a> {
             StatementKind::Table(t) => self.check_table(t),
             StatementKind::Vary(v) => self.check_vary_symbol(v),
             StatementKind::Function(f) => self.check_function(f),
-            StatementKind::Unknown(_) => self.not_computed("an unknown"),
+            StatementKind::Unknown(u) => self.check_unknown(u),
             StatementKind::Use { .. } => self.not_computed("the use of another sheet"),
             _ => {}
         }

@@ -70,6 +70,13 @@ const USUAL: &[Usual] = &[
     usual(Dimension::MASS_FLOW, "kg/s", "slug/s", [0, 0, 0]),
 ];
 
+fn unit_dimension(quantity: &Typed) -> Dimension {
+    quantity
+        .unit
+        .as_ref()
+        .map_or(Dimension::NONE, |u| u.unit.dimension)
+}
+
 impl Checker<'_> {
     /// The unit of the operands: the first with a unit; of pure numbers only a unit that all of them share.
     pub(crate) fn unit_of_operands(&self, operands: &[&Typed]) -> Option<ShownUnit> {
@@ -97,8 +104,12 @@ impl Checker<'_> {
             if number.dimension().is_number()
                 && quantity.dimension().without_angle() == dimension.without_angle()
             {
+                // So many lb/rad times an angle are no longer so many lb/rad.
+                let angle = unit_dimension(quantity).angle;
+                let per_angle = !angle.is_zero() && angle != dimension.angle;
                 if let Some(unit) = &quantity.unit
                     && !unit.unit.absolute
+                    && !per_angle
                 {
                     return Some(unit.clone());
                 }

@@ -1,6 +1,6 @@
 //! From nodes to steps.
 
-use super::{Instruction, Plan, SlotId, Step, Work};
+use super::{Instruction, Plan, SlotId, Solve, Step, Work};
 use crate::axes::AxisSet;
 use crate::catalogue::Compute;
 use crate::program::{Axis, NodeId, Op, Program, QuantityId};
@@ -18,12 +18,15 @@ pub fn plan(program: &Program) -> Plan {
             ..Plan::default()
         },
         fields: HashMap::new(),
+        unknowns: Vec::new(),
         quantity: None,
     };
+    lowering.unknown_slots();
     for id in &program.order {
         lowering.quantity(*id);
     }
     lowering.quantity = None;
+    lowering.solves();
     for requirement in &program.requirements {
         let sides = requirement.parts.iter().flat_map(|p| [p.left, p.right]);
         for node in requirement.condition.into_iter().chain(sides) {
@@ -41,6 +44,7 @@ pub fn plan(program: &Program) -> Plan {
             lowering.slot(node);
         }
     }
+    super::solves::place(&mut lowering.plan);
     lowering.plan
 }
 
@@ -49,6 +53,8 @@ struct Lowering<'a> {
     plan: Plan,
     /// The columns of the fields of calls that give records.
     fields: HashMap<NodeId, Vec<SlotId>>,
+    /// The columns of each unknown's symbols; none where it cannot be solved.
+    unknowns: Vec<Vec<SlotId>>,
     quantity: Option<QuantityId>,
 }
 
@@ -65,6 +71,44 @@ impl Lowering<'_> {
         self.quantity = Some(id);
         let slot = self.slot(node);
         self.plan.quantities[id.0 as usize] = slot;
+    }
+
+    /// The columns of unknowns are there before any step: lines that rest on them are laid out like all others, and the
+    /// solving is put in its place at the end.
+    fn unknown_slots(&mut self) {
+        for unknown in &self.program.unknowns {
+            let count = if unknown.equations.is_empty() {
+                0
+            } else {
+                unknown.symbols.len()
+            };
+            let slots = (0..count).map(|_| self.new_slot(unknown.axes)).collect();
+            self.unknowns.push(slots);
+        }
+    }
+
+    fn solves(&mut self) {
+        let program = self.program;
+        for (at, unknown) in program.unknowns.iter().enumerate() {
+            let out = self.unknowns.get(at).cloned().unwrap_or_default();
+            let pairs = |lowering: &mut Self, nodes: &[(NodeId, NodeId)]| {
+                let pair =
+                    |(a, b): &(NodeId, NodeId)| Some((lowering.slot(*a)?, lowering.slot(*b)?));
+                nodes.iter().map(pair).collect::<Option<Vec<_>>>()
+            };
+            let bounds = pairs(self, &unknown.bounds);
+            let sides = pairs(self, &unknown.equations);
+            let solve = match (bounds, sides) {
+                (Some(bounds), Some(sides)) if !out.is_empty() => Solve {
+                    out,
+                    bounds,
+                    sides,
+                    ..Solve::default()
+                },
+                _ => Solve::default(),
+            };
+            self.plan.solves.push(solve);
+        }
     }
 
     fn new_slot(&mut self, axes: AxisSet) -> SlotId {
@@ -128,6 +172,7 @@ impl Lowering<'_> {
                 .get(quantity.0 as usize)
                 .copied()
                 .flatten(),
+            Op::Unknown(unknown, at) => self.unknowns.get(*unknown)?.get(*at).copied(),
             Op::List { axis, items } => self.list(*axis, items, axes),
             Op::Grid { axes: keys, items } => self.grid(keys, items, axes),
             Op::Reduce { .. } | Op::Pick { .. } | Op::Along { .. } => {

@@ -2,6 +2,7 @@
 //! record) over its own axes only; what varies over fewer axes than its line is worked out once, beforehand.
 
 mod lower;
+mod solves;
 
 use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Entry;
@@ -26,8 +27,26 @@ pub struct Plan {
     pub quantities: Vec<Option<SlotId>>,
     /// The columns of the nodes that outputs ask for.
     pub nodes: HashMap<NodeId, SlotId>,
+    /// How each statement of `Program::unknowns` is solved.
+    pub solves: Vec<Solve>,
     /// The length of every axis.
     pub lengths: Vec<usize>,
+}
+
+/// How an `unknown` is solved: its trial columns are put in the place of `out`, `steps` are worked out, and the sides
+/// read.
+#[derive(Debug, Default)]
+pub struct Solve {
+    /// The columns of its symbols.
+    pub out: Vec<SlotId>,
+    /// Columns of the bounds.
+    pub bounds: Vec<(SlotId, SlotId)>,
+    /// Columns of both sides of each equation.
+    pub sides: Vec<(SlotId, SlotId)>,
+    /// The steps between the unknown and the sides, as indices into the plan's steps.
+    pub steps: Vec<usize>,
+    /// Whether such a step looks along an axis over which the unknown varies.
+    pub coupled: bool,
 }
 
 /// One step.
@@ -74,6 +93,8 @@ pub enum Work {
         axis: AxisId,
         has_x: bool,
     },
+    /// An `unknown`, by its index in [`Plan::solves`]: bounds, and all that its steps read from elsewhere.
+    Solve(usize),
     /// A catalogue function that gives a record, or takes whole lines. For each argument the read that holds it.
     Call {
         entry: &'static Entry,

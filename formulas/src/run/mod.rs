@@ -9,6 +9,7 @@ mod outputs;
 mod pick;
 mod reduce;
 pub(crate) mod scalar;
+mod solve;
 mod spread;
 
 use crate::axes::{AxisSet, Shape};
@@ -266,6 +267,7 @@ impl Machine<'_> {
         };
         match &step.work {
             Work::Values(values) => Some(vec![values.clone()]),
+            Work::Solve(at) => self.solve(*at),
             Work::Kernel(code) => {
                 let mut column = self.room(step, shape.conditions())?;
                 kernel::run(code, &read.along(&shape), &self.program.texts, &mut column);

@@ -30,6 +30,7 @@ mod dimension_mismatch;
 mod duplicate_symbol;
 mod end_without_table;
 mod equation_count;
+mod equations_mixed;
 mod equivalent_with_density;
 mod exponent_not_fixed;
 mod field_of_number;
@@ -93,6 +94,7 @@ mod unknown_character;
 mod unknown_field;
 mod unknown_function;
 mod unknown_label;
+mod unknown_limit;
 mod unknown_symbol;
 mod unknown_unit;
 mod unknown_word;
@@ -201,6 +203,8 @@ pub const CODES: &[&Code] = &[
     &rules_mixed::ROW,
     &further_solutions::ROW,
     &equation_count::ROW,
+    &equations_mixed::ROW,
+    &unknown_limit::ROW,
     &figure_axes::ROW,
     &memory_limit::ROW,
     &missing_sheet::ROW,
@@ -326,6 +330,8 @@ told_by! {
     RulesMixed { rules } => rules_mixed::draft(rules),
     FurtherSolutions { symbol, conditions } => further_solutions::draft(symbol, conditions),
     EquationCount { unknowns, equations } => equation_count::draft(*unknowns, *equations),
+    UnknownLimit { found, limit } => unknown_limit::draft(*found, *limit),
+    UnknownCoupled { symbol } => equations_mixed::draft(symbol),
     FigureAxes { symbol, axes } => figure_axes::draft(site, symbol, axes),
     MemoryLimit { symbol } => memory_limit::draft(symbol),
 
