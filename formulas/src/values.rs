@@ -89,6 +89,43 @@ pub struct GoverningValues {
     pub groups: Vec<Summary>,
     /// The axes not named.
     pub group_shape: Shape,
+    /// What tolerances do to the largest value.
+    pub largest: Sensitivity,
+    /// What they do to the smallest.
+    pub smallest: Sensitivity,
+}
+
+/// What the tolerances of inputs do to a governing value or to the reserve of a requirement.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Sensitivity {
+    /// The tolerances by effect, the largest first; none without effect.
+    pub ranked: Vec<Influence>,
+    /// The worst that the ends of the first eight come to, combined in every way.
+    pub corner: Option<Corner>,
+    /// Other conditions that govern in some corner.
+    pub others: Vec<usize>,
+}
+
+/// The effect of one tolerance: the larger change with the input at either end.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Influence {
+    /// Which of `Program::tolerances`.
+    pub tolerance: usize,
+    /// The larger change, in SI.
+    pub effect: f64,
+}
+
+/// A corner of the tolerances.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Corner {
+    /// By which corners are compared; the largest is the worst.
+    pub rank: f64,
+    /// The value or reserve there, in SI.
+    pub value: f64,
+    /// The condition that governs there.
+    pub condition: usize,
+    /// The tolerances that were moved, and whether upwards.
+    pub moves: Vec<(usize, bool)>,
 }
 
 /// How a requirement fared.
@@ -108,6 +145,8 @@ pub struct RequirementValues {
     pub worst: Option<WorstCondition>,
     /// The same judged with all tolerances at their worst; `None` without tolerances.
     pub met_at_worst: Option<bool>,
+    /// What tolerances do to the least reserve.
+    pub sensitivity: Sensitivity,
 }
 
 /// The condition of a requirement that has the least reserve.

@@ -152,11 +152,22 @@ fn note_quantity(quantity: &Quantity) -> String {
     } else {
         format!(" over {}", quantity.axes.join(", "))
     };
-    format!("{} = {values}{unit}{over}", quantity.symbol)
+    let spread = quantity.spread.as_ref().map_or(String::new(), |spread| {
+        let list = |all: &[Option<f64>]| values_of(&serde_json::to_value(all).unwrap_or_default());
+        format!(
+            " +/- worst {}, rss {}",
+            list(&spread.worst),
+            list(&spread.rss)
+        )
+    });
+    format!("{} = {values}{unit}{over}{spread}", quantity.symbol)
 }
 
 fn values(list: &ValueList) -> String {
-    let text = serde_json::to_value(list).unwrap_or_default();
+    values_of(&serde_json::to_value(list).unwrap_or_default())
+}
+
+fn values_of(text: &serde_json::Value) -> String {
     let items = text.as_array().cloned().unwrap_or_default();
     let shown: Vec<String> = items
         .iter()
@@ -172,6 +183,32 @@ fn values(list: &ValueList) -> String {
 }
 
 fn note_outputs(report: &Report, line: u32, out: &mut String) {
+    let json = |value: serde_json::Result<String>| value.unwrap_or_default();
+    for governing in report.governing.iter().filter(|g| g.line == line) {
+        let ends =
+            [&governing.largest, &governing.smallest].map(|e| json(serde_json::to_string(e)));
+        let _ = writeln!(
+            out,
+            "//= {}: largest {}, smallest {}",
+            governing.symbol, ends[0], ends[1]
+        );
+        for group in governing
+            .groups
+            .iter()
+            .filter(|_| governing.groups.len() > 1)
+        {
+            let _ = writeln!(out, "// | {}", json(serde_json::to_string(group)));
+        }
+        for moved in &governing.sensitivity {
+            let _ = writeln!(out, "// | {}", json(serde_json::to_string(moved)));
+        }
+        for corner in &governing.corners {
+            let _ = writeln!(out, "// | corner {}", json(serde_json::to_string(corner)));
+        }
+        for others in &governing.others {
+            let _ = writeln!(out, "// | others {}", json(serde_json::to_string(others)));
+        }
+    }
     for requirement in report.requirements.iter().filter(|r| r.line == line) {
         let met = match requirement.met {
             Some(true) => "met",
@@ -180,6 +217,12 @@ fn note_outputs(report: &Report, line: u32, out: &mut String) {
         };
         let worst = serde_json::to_string(&requirement.worst).unwrap_or_default();
         let _ = writeln!(out, "//= {met}, worst {worst}");
+        if let Some(met) = requirement.met_at_worst {
+            let _ = writeln!(out, "// | met at worst: {met}");
+        }
+        if let Some(corner) = &requirement.corner {
+            let _ = writeln!(out, "// | corner {}", json(serde_json::to_string(corner)));
+        }
     }
     for body in report.freebodies.iter().filter(|b| b.line == line) {
         let taken = body

@@ -2,6 +2,7 @@
 
 use super::convert::{Scale, condition, extreme};
 use super::requirement::{freebodies, requirements};
+use super::sensitivity;
 use super::{
     Axis, FORMAT, Governing, GoverningGroup, Quantity, QuantityKind, Report, Spread, TitleBlock,
     ValueList, WRITTEN_MOST,
@@ -46,7 +47,7 @@ pub fn build(input: &Input) -> Report {
         sheet: title_block(tree),
         axes: program.axes.iter().map(axis).collect(),
         quantities: quantities(input),
-        governing: governing(program, values),
+        governing: governing(input.tree, program, values),
         requirements: requirements(tree, program, values),
         freebodies: freebodies(tree, program, values),
         figures: Vec::new(),
@@ -228,7 +229,7 @@ fn axis_names(program: &Program, shape: &Shape) -> Vec<String> {
     names.filter_map(|a| axis_name(program, *a)).collect()
 }
 
-fn governing(program: &Program, values: &Values) -> Vec<Governing> {
+fn governing(tree: &Tree, program: &Program, values: &Values) -> Vec<Governing> {
     let unknown = (GoverningValues::default(), QuantityValues::default());
     let pairs = program.governing.iter().enumerate();
     pairs
@@ -237,14 +238,15 @@ fn governing(program: &Program, values: &Values) -> Vec<Governing> {
             let quantity = program.quantities.get(index)?;
             let found = values.governing.get(i).unwrap_or(&unknown.0);
             let column = values.quantities.get(index).unwrap_or(&unknown.1);
-            Some(governing_one(program, line, quantity, found, column))
+            let at = tree.statements.get(line.statement).map_or(0, |s| s.line);
+            Some(governing_one(program, (line, at), quantity, found, column))
         })
         .collect()
 }
 
 fn governing_one(
     program: &Program,
-    line: &program::Governing,
+    (line, at): (&program::Governing, u32),
     quantity: &program::Quantity,
     found: &GoverningValues,
     column: &QuantityValues,
@@ -261,6 +263,7 @@ fn governing_one(
     let groups = found.groups.iter().enumerate();
     Governing {
         symbol: quantity.symbol.clone(),
+        line: at,
         unit: quantity.unit.as_ref().map(|u| u.text.to_string()),
         over: over.iter().filter_map(|a| axis_name(program, a)).collect(),
         conditions: shape.conditions(),
@@ -275,7 +278,9 @@ fn governing_one(
                 smallest: end(group.smallest),
             })
             .collect(),
-        sensitivity: Vec::new(),
+        sensitivity: sensitivity::governing(program, scale.of_differences(), found),
+        corners: sensitivity::corners(program, shape, scale, found),
+        others: sensitivity::others(program, shape, found),
     }
 }
 

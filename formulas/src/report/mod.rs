@@ -11,6 +11,7 @@ pub mod json;
 mod requirement;
 #[cfg(test)]
 mod sample;
+mod sensitivity;
 pub mod text;
 
 pub use build::{Input, build};
@@ -222,6 +223,8 @@ pub struct Quantity {
 pub struct Governing {
     /// The symbol.
     pub symbol: String,
+    /// Line of the statement, from 1.
+    pub line: u32,
     /// Its unit.
     pub unit: Option<String>,
     /// Names of the axes over which the extremes are sought.
@@ -238,8 +241,45 @@ pub struct Governing {
     pub smallest: Option<Extreme>,
     /// The extremes for each condition of the axes that are left.
     pub groups: Vec<GoverningGroup>,
-    /// The inputs with tolerances by effect, the largest first; empty where they were not ranked.
+    /// The inputs with tolerances by effect, the largest first; empty without tolerances.
     pub sensitivity: Vec<GoverningSensitivity>,
+    /// The worst corner of the tolerances for either extreme; empty without tolerances.
+    pub corners: Vec<GoverningCorner>,
+    /// Whether another condition could govern within the tolerances; empty where none can.
+    pub others: Vec<GoverningOthers>,
+}
+
+/// What the worst corner of the tolerances comes to: the ends of up to eight inputs, combined in every way.
+#[derive(Clone, Debug, PartialEq, serde::Serialize)]
+pub struct GoverningCorner {
+    /// `largest` or `smallest`.
+    pub of: &'static str,
+    /// The value there, in the unit of the governed symbol.
+    pub value: f64,
+    /// The condition that governs there.
+    pub condition: Condition,
+    /// To which end each input is moved.
+    pub inputs: Vec<CornerInput>,
+}
+
+/// Other conditions that could govern: with all tolerances at their worst they come as far as the governing one.
+#[derive(Clone, Debug, PartialEq, serde::Serialize)]
+pub struct GoverningOthers {
+    /// `largest` or `smallest`.
+    pub of: &'static str,
+    /// At most the first hundred.
+    pub conditions: Vec<Condition>,
+}
+
+/// An input of a corner.
+#[derive(Clone, Debug, PartialEq, serde::Serialize)]
+pub struct CornerInput {
+    /// The input.
+    pub symbol: String,
+    /// Where in a list the input stands.
+    pub condition: Condition,
+    /// `+` or `-`.
+    pub end: &'static str,
 }
 
 /// What governs under one condition of the axes left.
@@ -289,8 +329,21 @@ pub struct Requirement {
     pub worst: Option<WorstCondition>,
     /// The same with all tolerances at their worst; `None` without tolerances.
     pub met_at_worst: Option<bool>,
-    /// The inputs with tolerances by effect on the reserve; empty where they were not ranked.
+    /// The inputs with tolerances by effect on the reserve; empty without tolerances.
     pub sensitivity: Vec<RequirementSensitivity>,
+    /// The worst corner of the tolerances; `None` without tolerances.
+    pub corner: Option<RequirementCorner>,
+}
+
+/// What the worst corner of the tolerances comes to for a requirement.
+#[derive(Clone, Debug, PartialEq, serde::Serialize)]
+pub struct RequirementCorner {
+    /// The least reserve, in the unit of the requirement.
+    pub reserve: f64,
+    /// The condition in which it stands.
+    pub condition: Condition,
+    /// To which end each input is moved.
+    pub inputs: Vec<CornerInput>,
 }
 
 /// The condition of least reserve.

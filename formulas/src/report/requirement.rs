@@ -1,6 +1,7 @@
 //! Requirements and free bodies as facts of the report.
 
 use super::convert::{Scale, condition};
+use super::sensitivity;
 use super::{Condition, Freebody, FreebodyCouple, FreebodyForce, Requirement, WorstCondition};
 use crate::axes::Shape;
 use crate::program::{Comparison, EntryKind, FreebodyEntry, Program};
@@ -33,7 +34,8 @@ pub(super) fn requirements(tree: &Tree, program: &Program, values: &Values) -> V
                 without_value: found.without_value,
                 worst: worst(program, &line.parts, found),
                 met_at_worst: found.met_at_worst,
-                sensitivity: Vec::new(),
+                sensitivity: sensitivity::requirement(program, line, found),
+                corner: sensitivity::requirement_corner(program, line, found),
             }
         })
         .collect()
@@ -211,7 +213,7 @@ mod tests {
         let at = sample().values.requirements[0].worst.unwrap();
         let json = json::write_any(&sample().report().requirements).unwrap();
         let expected = format!(
-            r#"[{{"line":10,"text":"P <= W","reason":"strength","met":false,"conditions":4,"not_met":1,"without_value":1,"worst":{{"condition":{{"point":"C","cg":"fwd"}},"left":700.0,"right":560.0,"unit":"lb","reserve":-140.0,"margin":{}}},"met_at_worst":null,"sensitivity":[]}}]"#,
+            r#"[{{"line":10,"text":"P <= W","reason":"strength","met":false,"conditions":4,"not_met":1,"without_value":1,"worst":{{"condition":{{"point":"C","cg":"fwd"}},"left":700.0,"right":560.0,"unit":"lb","reserve":-140.0,"margin":{}}},"met_at_worst":null,"sensitivity":[],"corner":null}}]"#,
             json::number(at.right / at.left - 1.0)
         );
         assert_eq!(json, expected);

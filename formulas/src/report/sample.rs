@@ -360,6 +360,7 @@ fn values() -> Values {
             all,
             groups: vec![extremes((lb(700.0), 2), (lb(-20.0), 0)), Summary::default()],
             group_shape: Shape::of(AxisSet::of(CG), &[2, 2]),
+            ..GoverningValues::default()
         }],
         requirements: vec![RequirementValues {
             shape: Shape::of(both, &[2, 2]),
@@ -374,6 +375,7 @@ fn values() -> Values {
                 right: lb(560.0),
             }),
             met_at_worst: None,
+            sensitivity: crate::values::Sensitivity::default(),
         }],
         freebodies: vec![FreebodyValues {
             shape: Shape::of(both, &[2, 2]),

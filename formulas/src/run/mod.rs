@@ -6,11 +6,12 @@ mod kernel;
 mod lines;
 pub mod missing;
 mod outputs;
+mod overlay;
 mod pick;
 mod reduce;
 pub(crate) mod scalar;
 mod solve;
-mod spread;
+mod tolerance;
 
 use crate::axes::{AxisSet, Shape};
 use crate::names::located;

@@ -26,7 +26,7 @@ pub(super) struct Held {
 }
 
 impl Held {
-    fn feed(&self, outer: &Shape) -> Feed<'_> {
+    pub(super) fn feed(&self, outer: &Shape) -> Feed<'_> {
         Feed::new(&self.values, &self.shape, outer)
     }
 }
@@ -49,7 +49,7 @@ impl Machine<'_> {
             let result = self.freebody(body);
             values.freebodies.push(result);
         }
-        self.spreads(values);
+        self.tolerances(values);
     }
 
     pub(super) fn held(&self, node: NodeId) -> Option<Held> {
@@ -98,6 +98,7 @@ impl Machine<'_> {
             all,
             groups,
             group_shape,
+            ..GoverningValues::default()
         }
     }
 
@@ -276,7 +277,7 @@ impl Machine<'_> {
                 .fold(0.0, |m: f64, v| m.max(v.abs()));
             let trial = if size > 0.0 { 0.375 * size } else { 1000.0 };
             let moved: Vec<f64> = column.iter().map(|v| v + trial).collect();
-            let changed = self.with_column(*slot, moved, |machine| {
+            let changed = self.with_columns(vec![(*slot, moved)], |machine| {
                 if !machine.force_sum_closes(body, shape) {
                     return None;
                 }
@@ -420,7 +421,7 @@ fn count_condition(result: &mut RequirementValues, truth: f64) {
 
 /// Distance to the limit, positive when met.
 #[must_use]
-fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
+pub(super) fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
     match op {
         BinaryOp::Less | BinaryOp::LessOrEqual => right - left,
         BinaryOp::Greater | BinaryOp::GreaterOrEqual => left - right,
@@ -430,7 +431,7 @@ fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
 }
 
 /// The reserve over the sum of both sides' magnitudes, by which conditions are ranked.
-fn relative_reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
+pub(super) fn relative_reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
     let size = left.abs() + right.abs();
     if size == 0.0 {
         0.0

@@ -4,7 +4,8 @@ use super::page::{Page, padded};
 use super::{at_condition, behind, condition_text, counted};
 use crate::numbers::shown;
 use crate::report::{
-    Extreme, Form, Freebody, Governing, GoverningGroup, Report, Requirement, WorstCondition,
+    Condition, CornerInput, Extreme, Form, Freebody, Governing, GoverningCorner, GoverningGroup,
+    GoverningOthers, Report, Requirement, WorstCondition,
 };
 
 /// Significant figures of a residual, which says only how small it is.
@@ -76,6 +77,87 @@ fn governing(page: &mut Page, report: &Report, line: &Governing) {
     extreme(page, report, "smallest", line.smallest.as_ref(), unit);
     let with_axes = line.groups.iter().filter(|g| !g.condition.0.is_empty());
     with_axes.for_each(|group| governing_group(page, report, group, unit));
+    for of in ["largest", "smallest"] {
+        let moved = line.sensitivity.iter().filter(|s| s.of == of);
+        let moved = moved.map(|s| (&s.symbol, &s.condition, s.effect, s.share));
+        influences(page, report, of, unit, moved);
+    }
+    for corner in &line.corners {
+        governing_corner(page, report, corner, unit);
+    }
+    line.others
+        .iter()
+        .for_each(|others| governing_others(page, others));
+}
+
+/// The inputs with tolerances by what they move.
+fn influences<'a>(
+    page: &mut Page,
+    report: &Report,
+    of: &str,
+    unit: Option<&str>,
+    moved: impl Iterator<Item = (&'a String, &'a Condition, f64, f64)>,
+) {
+    let text: Vec<String> = moved
+        .map(|(symbol, condition, effect, share)| {
+            let percent = shown(share * 100.0, 2);
+            let effect = shown(effect, report.digits);
+            format!(
+                "{symbol}{} {effect}{} ({percent} %)",
+                at_condition(condition),
+                behind(unit)
+            )
+        })
+        .collect();
+    if !text.is_empty() {
+        let lead = format!("{}tolerances move the {of} by: ", " ".repeat(LEAD));
+        page.paragraph(&lead, &text.join(", "));
+    }
+}
+
+fn governing_corner(
+    page: &mut Page,
+    report: &Report,
+    corner: &GoverningCorner,
+    unit: Option<&str>,
+) {
+    let value = shown(corner.value, report.digits);
+    let text = format!(
+        "worst corner of the {}: {value}{}{} ({})",
+        corner.of,
+        behind(unit),
+        at_condition(&corner.condition),
+        corner_inputs(&corner.inputs)
+    );
+    page.paragraph(&" ".repeat(LEAD), &text);
+}
+
+fn governing_others(page: &mut Page, others: &GoverningOthers) {
+    let named: Vec<String> = others
+        .conditions
+        .iter()
+        .take(5)
+        .map(condition_text)
+        .collect();
+    let more = if others.conditions.len() > 5 {
+        "; …"
+    } else {
+        ""
+    };
+    let text = format!(
+        "within the tolerances, {} could govern the {} too: {}{more}",
+        counted(others.conditions.len() as u64, "condition"),
+        others.of,
+        named.join("; ")
+    );
+    page.paragraph(&" ".repeat(LEAD), &text);
+}
+
+fn corner_inputs(inputs: &[CornerInput]) -> String {
+    let each = inputs
+        .iter()
+        .map(|i| format!("{}{} at {}", i.symbol, at_condition(&i.condition), i.end));
+    each.collect::<Vec<_>>().join(", ")
 }
 
 fn governing_group(page: &mut Page, report: &Report, group: &GoverningGroup, unit: Option<&str>) {
@@ -122,6 +204,22 @@ fn requirement(page: &mut Page, report: &Report, item: String, line: &Requiremen
     if let Some(met) = line.met_at_worst {
         let word = if met { "met" } else { "NOT MET" };
         let text = format!("with all tolerances at their worst: {word}");
+        page.paragraph(&" ".repeat(LEAD), &text);
+    }
+    let unit = line.worst.as_ref().and_then(|w| w.unit.as_deref());
+    let moved = line
+        .sensitivity
+        .iter()
+        .map(|s| (&s.symbol, &s.condition, s.effect, s.share));
+    influences(page, report, "reserve", unit, moved);
+    if let Some(corner) = &line.corner {
+        let reserve = shown(corner.reserve, report.digits);
+        let text = format!(
+            "worst corner: reserve {reserve}{}{} ({})",
+            behind(unit),
+            at_condition(&corner.condition),
+            corner_inputs(&corner.inputs)
+        );
         page.paragraph(&" ".repeat(LEAD), &text);
     }
 }
