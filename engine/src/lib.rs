@@ -53,6 +53,7 @@ pub mod mass;
 pub mod moment;
 
 pub mod balance;
+pub mod control;
 pub mod tail;
 
 pub mod elementary;

@@ -19,9 +19,9 @@ pub use nearest::nearest_unit;
 pub use typed::{
     Acceleration, Angle, AngularAcceleration, AngularVelocity, Area, CalibratedAirspeed,
     DynamicViscosity, EquivalentAirspeed, Force, ForcePerLength, Frequency, Kinded,
-    KinematicViscosity, Length, Mass, MassDensity, MassMoment, MomentOfInertia, PerAngle, Power,
-    Pressure, Ratio, TemperatureInterval, ThermodynamicTemperature, Time, Torque, TrueAirspeed,
-    Typed, Velocity, Volume,
+    KinematicViscosity, Length, Mass, MassDensity, MassMoment, MomentOfInertia, PerAngle,
+    PerLength, Power, Pressure, Ratio, TemperatureInterval, ThermodynamicTemperature, Time, Torque,
+    TrueAirspeed, Typed, Velocity, Volume,
 };
 pub use unit::Unit;
 pub use units::{Prefix, System, UnitRow};

@@ -1,7 +1,7 @@
 //! Typed quantities of the public functions: the `uom` crate's SI types and a few kinds that it lacks.
 
 use uom::si::{ISQ, SI};
-use uom::typenum::{Integer, N2, P1, Z0};
+use uom::typenum::{Integer, N1, N2, P1, Z0};
 
 use super::dimension::Dimension;
 use super::exponent::Exponent;
@@ -15,6 +15,9 @@ pub use uom::si::f64::{
 
 /// Force per length, as a spanwise load: what a force over a length is.
 pub type ForcePerLength = uom::si::Quantity<ISQ<Z0, P1, N2, Z0, Z0, Z0, Z0>, SI<f64>, f64>;
+
+/// A number per length, as the gearing of a control: its angle over the travel of the grip.
+pub type PerLength = uom::si::Quantity<ISQ<N1, Z0, Z0, Z0, Z0, Z0, Z0>, SI<f64>, f64>;
 
 /// First moment of a mass: what a mass times a length is.
 pub type MassMoment = uom::si::Quantity<ISQ<P1, P1, Z0, Z0, Z0, Z0, Z0>, SI<f64>, f64>;

@@ -4,6 +4,7 @@
 mod air;
 mod axes;
 mod balance;
+mod control;
 mod general;
 mod macros;
 mod mass;
@@ -24,6 +25,7 @@ static GROUPS: &[&[Entry]] = &[
     mass::ROWS,
     moment::ROWS,
     tail::ROWS,
+    control::ROWS,
     balance::ROWS,
     general::ROWS,
     axes::ROWS,

@@ -5,7 +5,7 @@ use super::row::{Compute, Entry, Parameter, Wants};
 use engine::quantity::{Angle, Area, Length, PerAngle, TrueAirspeed, Typed};
 use engine::tail::Maneuver;
 
-const GROUP: &str = "Tail and control";
+pub(super) const GROUP: &str = "Tail and control";
 
 /// The word of the manoeuvre.
 const MANEUVER: Parameter = Parameter {

@@ -185,6 +185,14 @@ fn names_order_and_defaults_are_what_sheets_use() {
             "neutral_point(x_ac, slope, S, mac, x_tail, tail_slope, tail_area, downwash_slope, q_ratio = 1, \
              body_slope = 0)",
             "static_margin(x_cg, x_np, mac)",
+            "control_effectiveness(chord_ratio, area_ratio = 1, section_factor = 1)",
+            "tail_lift(slope, alpha, downwash, incidence, effectiveness, deflection, q, S, q_ratio = 1, zero_lift = 0, \
+             pitch_angle = 0)",
+            "tail_load_split(chord_ratio, load_alpha, load_delta, x_le, c) fixed movable x_cp",
+            "free_control_factor(C_h_alpha, C_h_delta, effectiveness)",
+            "hinge_moment(C_h0, C_h_alpha, C_h_delta, alpha, delta, q, S, c, C_h_tab = 0, tab = 0)",
+            "pivot_moment(load, x_load, x_pivot, M0 = 0)",
+            "stick_force(hinge_moment, gearing)",
             "balancing_load(M, n, weight, x_cg, x_ac, x_tail, M_other = 0)",
             "wing_lift(n, weight, tail_load)",
             "inertia_load(n, weight, pitch_acceleration, x, x_cg)",
