@@ -54,6 +54,7 @@ pub mod moment;
 
 pub mod balance;
 pub mod control;
+pub mod envelope;
 pub mod tail;
 
 pub mod elementary;

@@ -5,6 +5,7 @@ mod air;
 mod axes;
 mod balance;
 mod control;
+mod envelope;
 mod general;
 mod macros;
 mod mass;
@@ -27,6 +28,7 @@ static GROUPS: &[&[Entry]] = &[
     tail::ROWS,
     control::ROWS,
     balance::ROWS,
+    envelope::ROWS,
     general::ROWS,
     axes::ROWS,
 ];

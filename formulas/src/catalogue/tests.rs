@@ -197,6 +197,22 @@ fn names_order_and_defaults_are_what_sheets_use() {
             "wing_lift(n, weight, tail_load)",
             "inertia_load(n, weight, pitch_acceleration, x, x_cg)",
             "pitch_acceleration_load(inertia, acceleration, x_tail, x_cg)",
+            "stall_speed(weight, S, CL_max, density = 1.225)",
+            "limit_load_factor(rule, weight, category = normal) positive negative positive_at_dive negative_at_dive flaps",
+            "design_speeds(rule, weight, S, stall_speed, stall_speed_flaps, n, category = normal, level_speed = none) \
+             VA VC VD VF",
+            "mass_ratio(wing_loading, density, chord, slope)",
+            "gust_alleviation(mass_ratio)",
+            "gust_velocity(rule, speed_point, altitude = 0)",
+            "gust_load_increment(rule, gust, eas, slope, wing_loading, alleviation)",
+            "tail_gust_load(rule, gust, eas, tail_slope, tail_area, downwash_slope, alleviation)",
+            "maneuver_pitch_acceleration(rule, limit_factor, eas) nose_up nose_down n_nose_up n_nose_down",
+            "elevator_step_load(q, tail_area, tail_slope, effectiveness, deflection)",
+            "load_factor_step_load(rule, dn, weight, x_cg, x_ac, arm, S, slope, tail_area, tail_slope, downwash_slope)",
+            "unsymmetrical_tail_share(rule, n) greater lesser",
+            "ground_gust_hinge_moment(rule, surface, weight, S, S_control, c_control)",
+            "factor_of_safety(rule)",
+            "fitting_factor(rule)",
         ]
     );
 }
