@@ -69,6 +69,8 @@ pub enum Cause {
     NoValue,
     /// An unknown without a solution in its bounds.
     NoSolution,
+    /// Something that a set of rules does not have, or that is not coded.
+    NotCoded,
 }
 
 /// Every kind of problem. The names are those of the faults, not of their remedies.
@@ -487,8 +489,10 @@ pub enum Fault {
     NotComputed {
         what: String,
     },
+    /// `basis` is the line that names other rules than those, where there is one.
     RulesMixed {
         rules: Vec<String>,
+        basis: Option<String>,
     },
     /// A method outside what its argument may be at all: `text` reads after 'is to be' (`at most 1.5, such as 0.25 or
     /// 25 %`); the span is the value.

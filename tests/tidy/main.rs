@@ -301,7 +301,6 @@ fn later(code: &str) -> bool {
             | "sheet-name"
             | "sheet-axis"
             | "sheet-findings"
-            | "rules-mixed"
             | "outside-validity"
             | "memory-limit"
             | "operation-limit"

@@ -323,19 +323,28 @@ impl Checker<'_> {
         expr: &Expr,
         typed: Typed,
     ) -> Option<Typed> {
-        if let ExprKind::Text(word) = &expr.kind
+        let word = (typed.kind == Kind::Text)
+            .then(|| self.fixed_text(&typed).map(str::to_owned))
+            .flatten();
+        if let Some(word) = &word
             && !parameter.words.is_empty()
             && !parameter.words.contains(&word.as_str())
         {
+            // A word that stands in another line is mended there.
+            let typed_here = matches!(expr.kind, ExprKind::Text(_));
+            let near = || crate::nearest::nearest(word, parameter.words.iter().copied());
             let fault = Fault::UnknownWord {
                 function: entry.name.to_string(),
                 argument: parameter.name.to_string(),
                 found: word.clone(),
                 words: parameter.words.iter().map(|w| (*w).to_string()).collect(),
-                nearest: crate::nearest::nearest(word, parameter.words.iter().copied()),
+                nearest: typed_here.then(near).flatten(),
             };
             self.report(expr.span, fault);
             return None;
+        }
+        if let Some(word) = word.filter(|_| parameter.name == "rule") {
+            self.note_rule(&word, expr.span);
         }
         if typed.kind == Kind::Text || typed.number_kind().any {
             return Some(typed);

@@ -14,6 +14,7 @@ mod operand;
 mod outputs;
 mod pick;
 mod reduce;
+mod rules;
 mod shown;
 mod table;
 mod units;
@@ -143,6 +144,8 @@ pub(crate) struct Checker<'a> {
     unit_cache: HashMap<String, ShownUnit>,
     constants: HashMap<u64, NodeId>,
     pub(crate) call_results: HashMap<NodeId, (Vec<Dimension>, Vec<Typed>)>,
+    /// The sets of rules that calls ask for.
+    rules_asked: Vec<rules::RuleAsked>,
     remarks: Rc<[Option<String>]>,
     parts: Rc<[Option<String>]>,
 }
@@ -207,6 +210,7 @@ impl<'a> Checker<'a> {
             unit_cache: HashMap::new(),
             constants: HashMap::new(),
             call_results: HashMap::new(),
+            rules_asked: Vec::new(),
             remarks: tree
                 .statements
                 .iter()
@@ -372,6 +376,7 @@ impl<'a> Checker<'a> {
         self.sort_quantities();
         self.advise_unused();
         self.advise_sources();
+        self.advise_rules();
     }
 }
 

@@ -243,6 +243,8 @@ pub(super) struct Arguments<'t> {
     numbers: Vec<f64>,
     texts: Vec<&'t str>,
     results: Vec<f64>,
+    /// Why a result is no number: what a set of rules does not have is not coded.
+    cause: Cause,
 }
 
 impl<'t> Arguments<'t> {
@@ -253,6 +255,10 @@ impl<'t> Arguments<'t> {
             numbers: vec![0.0; entry.parameters.len()],
             texts: vec![""; entry.parameters.len()],
             results: vec![0.0; entry.fields.len()],
+            cause: match entry.parameters.iter().any(|p| p.name == "rule") {
+                true => Cause::NotCoded,
+                false => Cause::Domain,
+            },
         }
     }
 
@@ -291,7 +297,7 @@ impl<'t> Arguments<'t> {
             None => {
                 compute(&self.numbers, &self.texts, &mut self.results);
                 for value in self.results.iter_mut() {
-                    *value = finite_or(*value + 0.0, Cause::Domain);
+                    *value = finite_or(*value + 0.0, self.cause);
                 }
             }
         }

@@ -6,7 +6,7 @@ use crate::values::{EXCLUDED, NONE, is_excluded};
 
 const LOST_BITS: u64 = 0x7ff8_0000_0000_0100;
 
-const CAUSES: [Cause; 7] = [
+const CAUSES: [Cause; 8] = [
     Cause::DivisionByZero,
     Cause::Domain,
     Cause::Overflow,
@@ -14,6 +14,7 @@ const CAUSES: [Cause; 7] = [
     Cause::NoSuchLabel,
     Cause::NoValue,
     Cause::NoSolution,
+    Cause::NotCoded,
 ];
 
 /// A value lost here, for a cause.

@@ -327,7 +327,7 @@ told_by! {
     InputWithoutSource { symbol } => input_without_source::draft(symbol),
     Validity { function, text, conditions } => outside_validity::draft(function, text, conditions),
     NotComputed { what } => not_computed::draft(what),
-    RulesMixed { rules } => rules_mixed::draft(rules),
+    RulesMixed { rules, basis } => rules_mixed::draft(rules, basis),
     FurtherSolutions { symbol, conditions } => further_solutions::draft(symbol, conditions),
     EquationCount { unknowns, equations } => equation_count::draft(*unknowns, *equations),
     UnknownLimit { found, limit } => unknown_limit::draft(*found, *limit),

@@ -29,6 +29,9 @@ fn reason(cause: Cause) -> &'static str {
         Cause::NoSuchLabel => "the axis has no such label",
         Cause::NoValue => "the method finds no value",
         Cause::NoSolution => "no solution lies between the bounds",
+        Cause::NotCoded => {
+            "the set of rules does not have it, or it is not coded: state the factors"
+        }
     }
 }
 
@@ -78,6 +81,10 @@ mod tests {
             (
                 Cause::NoSolution,
                 "y has no value: no solution lies between the bounds.",
+            ),
+            (
+                Cause::NotCoded,
+                "y has no value: the set of rules does not have it, or it is not coded: state the factors.",
             ),
         ] {
             says(cause, &one, message);
