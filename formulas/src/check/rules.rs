@@ -34,12 +34,13 @@ fn named_in(text: &str) -> Vec<Rule> {
         .filter(|c| c.is_alphanumeric() || matches!(c, '.' | ',' | ';'))
         .collect();
     let plain = plain.replace("PART", "");
-    // An edition may follow the number of a standard (F2245-16c), but a part goes on only behind a point.
+    // Paragraph or edition may follow (CS-VLA 331, F2245-16c), but the number of a part goes on only behind a point.
     let names = |name: &str| {
         let mut places = plain.match_indices(name);
         places.any(|(at, _)| {
             let rest = plain.get(at + name.len()..).unwrap_or("");
-            name == "F2245" || !rest.starts_with(|c: char| c.is_ascii_digit())
+            let part = name.ends_with("23") || name.ends_with("22");
+            !part || !rest.starts_with(|c: char| c.is_ascii_digit())
         })
     };
     NAMES
