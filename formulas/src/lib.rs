@@ -19,6 +19,7 @@ pub mod plan;
 pub mod print;
 pub mod problem;
 pub mod program;
+pub mod reading;
 pub mod report;
 pub mod run;
 mod setting;
@@ -27,6 +28,7 @@ pub mod source;
 pub mod span;
 pub mod syntax;
 pub mod token;
+pub mod used;
 pub mod values;
 
 pub use sheet::Sheet;

@@ -2,6 +2,7 @@
 //! lines can be checked. Circles are found here, on names alone.
 
 use crate::problem::{Fault, Located, Problem};
+use crate::program::Program;
 use crate::span::Span;
 use crate::syntax::{
     Argument, DefinitionValue, Expr, ExprKind, FreebodyItem, Name, Statement, StatementKind,
@@ -87,6 +88,22 @@ impl Names {
         }
         let function = self.function_list.iter().find(|(_, s)| *s == statement);
         (function.map_or("", |(name, _)| name), Span::default())
+    }
+
+    /// Takes over the axes of another sheet that this one lacks; a name that stands here keeps its meaning.
+    pub fn take_axes(&mut self, statement: usize, span: Span, other: &Program) {
+        for axis in &other.axes {
+            if self.by_name.contains_key(&axis.name) {
+                continue;
+            }
+            self.by_name.insert(axis.name.clone(), self.symbols.len());
+            self.symbols.push(Symbol {
+                name: axis.name.clone(),
+                statement,
+                role: Role::Axis,
+                span,
+            });
+        }
     }
 
     fn add(

@@ -526,6 +526,21 @@ pub enum Fault {
         axes: Vec<String>,
     },
     // --- other sheets ---
+    /// A symbol that another sheet does not give.
+    UnknownInSheet {
+        sheet: String,
+        name: String,
+        nearest: Option<String>,
+    },
+    /// Sheets that use one another too deep.
+    SheetDepth {
+        limit: usize,
+    },
+    /// An axis of another sheet by a name that means something else here.
+    SheetAxisHidden {
+        sheet: String,
+        axis: String,
+    },
     MissingSheet {
         sheet: String,
     },

@@ -61,6 +61,8 @@ pub struct Axis {
     pub values: Option<Vec<f64>>,
     /// The unit in which the values are shown.
     pub unit: Option<ShownUnit>,
+    /// Whether it is told of: an axis of another sheet only where a line of this one varies over it.
+    pub listed: bool,
 }
 
 /// A unit with the text by which it is shown, `lb/ft^2`.
@@ -267,6 +269,19 @@ pub struct Quantity {
     pub remark: Option<String>,
     /// The part under which it stands.
     pub part: Option<String>,
+    /// Whether it is one of this sheet's own. What another sheet gives is worked out here, but not told of.
+    pub listed: bool,
+    /// The sheet that it comes from, with what it is there.
+    pub origin: Option<Origin>,
+}
+
+/// Where a quantity of another sheet stands there.
+#[derive(Clone, PartialEq, Eq, Hash, Debug)]
+pub struct Origin {
+    /// The sheet's name.
+    pub sheet: Rc<str>,
+    /// Its symbol in that sheet.
+    pub symbol: Rc<str>,
 }
 
 /// An `unknown` statement.

@@ -20,7 +20,10 @@ pub(crate) fn replaced(
             "{symbol} is to be set to an expression or a list, not to '{expression}'."
         ));
     }
-    let quantity = program.quantities.iter().find(|q| q.symbol == symbol);
+    let quantity = program
+        .quantities
+        .iter()
+        .find(|q| q.listed && q.symbol == symbol);
     let Some(quantity) = quantity else {
         return Err(format!("Nothing in this sheet is called {symbol}."));
     };

@@ -1,16 +1,18 @@
 //! The front door: a sheet with everything that was found out about it. The only holder of state.
 
 use crate::diagnostics::{self, Finding};
-use crate::graph;
-use crate::names;
-use crate::parse;
+use crate::names::Names;
 use crate::plan;
 use crate::problem::Located;
 use crate::program::Program;
+use crate::reading::{Lookup, Reader, of_this_sheet};
 use crate::report::{self, Report};
 use crate::run::{self, Limits};
 use crate::syntax::Tree;
+use crate::used::UsedSheet;
 use crate::values::Values;
+use std::collections::BTreeMap;
+use std::rc::Rc;
 
 /// A sheet that was read, checked and worked out.
 ///
@@ -24,13 +26,40 @@ use crate::values::Values;
 /// ```
 #[derive(Debug)]
 pub struct Sheet {
+    name: Option<String>,
     text: String,
     asked: Vec<String>,
     tree: Tree,
+    names: Names,
     program: Program,
     values: Values,
     problems: Vec<Located>,
     limits: Limits,
+    used: BTreeMap<String, Rc<UsedSheet>>,
+}
+
+/// Beside what, and within what limits, a sheet is worked out.
+#[derive(Clone, Copy)]
+pub struct Around<'a> {
+    /// The name by which other sheets use this one, where it has one: so a sheet that uses itself is found out.
+    pub name: Option<&'a str>,
+    /// The texts of other sheets.
+    pub sheets: Lookup<'a>,
+    /// Limits of the run.
+    pub limits: Limits,
+    /// Quantities whose values are kept however many they are.
+    pub asked: &'a [String],
+}
+
+impl Default for Around<'_> {
+    fn default() -> Self {
+        Around {
+            name: None,
+            sheets: &|_| None,
+            limits: Limits::default(),
+            asked: &[],
+        }
+    }
 }
 
 impl Sheet {
@@ -40,26 +69,64 @@ impl Sheet {
         Self::open_within(text, Limits::default(), &[])
     }
 
+    /// The same with other sheets to be used: `sheets` gives the text of a sheet by its name.
+    ///
+    /// What a line takes from another sheet is worked out here anew, so that its tolerances and conditions come along.
+    /// An axis that only the other sheet has stands where the sheet is used; it is among the report's axes where a line
+    /// of this sheet varies over it. The report lists the quantities of this sheet only.
+    ///
+    /// # Example
+    /// ```
+    /// use formulas::sheet::Sheet;
+    /// let text = "use \"osier-geometry\" as g\nL [lb] = 12 lb/ft^2*g.S\n";
+    /// let beside = |name: &str| (name == "osier-geometry").then(|| "S [ft^2] = 142\n".to_owned());
+    /// let report = Sheet::open_with(text, &beside).report(&[]);
+    /// assert_eq!(report.quantity("L").unwrap().largest.as_ref().unwrap().value, 1704.0);
+    /// ```
+    #[must_use]
+    pub fn open_with(text: &str, sheets: Lookup<'_>) -> Self {
+        Self::open_around(
+            text,
+            &Around {
+                sheets,
+                ..Around::default()
+            },
+        )
+    }
+
     /// The same within lower limits; `asked` names quantities whose values are kept however many they are.
     #[must_use]
     pub fn open_within(text: &str, limits: Limits, asked: &[String]) -> Self {
-        let tree = parse::parse(text);
-        let mut problems = reading_problems(&tree);
-        let names = names::collect(&tree, &mut problems);
-        let order = graph::order(&tree, &names, &mut problems);
-        let (program, checked) = crate::check::check(text, &tree, &names, &order);
-        problems.extend(checked);
-        let plan = plan::plan(&program);
-        let (values, found) = run::run(&program, &plan, limits, asked);
-        problems.extend(found);
+        Self::open_around(
+            text,
+            &Around {
+                limits,
+                asked,
+                ..Around::default()
+            },
+        )
+    }
+
+    /// The same with everything that can be said about its surroundings.
+    #[must_use]
+    pub fn open_around(text: &str, around: &Around<'_>) -> Self {
+        let mut reader = Reader::new(around.sheets, around.limits);
+        let checked = reader.read(around.name, text);
+        let mut problems = checked.problems;
+        let plan = plan::plan(&checked.program);
+        let (values, found) = run::run(&checked.program, &plan, around.limits, around.asked);
+        problems.extend(of_this_sheet(&checked.tree, found));
         Sheet {
+            name: around.name.map(str::to_string),
             text: text.to_string(),
-            asked: asked.to_vec(),
-            tree,
-            program,
+            asked: around.asked.to_vec(),
+            tree: checked.tree,
+            names: checked.names,
+            program: checked.program,
             values,
             problems,
-            limits,
+            limits: around.limits,
+            used: reader.known,
         }
     }
 
@@ -73,6 +140,18 @@ impl Sheet {
     #[must_use]
     pub fn tree(&self) -> &Tree {
         &self.tree
+    }
+
+    /// What it names.
+    #[must_use]
+    pub fn names(&self) -> &Names {
+        &self.names
+    }
+
+    /// The other sheets that were read for it, by their names.
+    #[must_use]
+    pub fn used(&self) -> &BTreeMap<String, Rc<UsedSheet>> {
+        &self.used
     }
 
     /// What was checked.
@@ -121,7 +200,15 @@ impl Sheet {
     pub fn set(&mut self, symbol: &str, expression: &str) -> Result<(), String> {
         let text =
             crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
-        let other = Self::open_within(&text, self.limits, &self.asked);
+        let other = Self::open_around(
+            &text,
+            &Around {
+                name: self.name.as_deref(),
+                sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
+                limits: self.limits,
+                asked: &self.asked,
+            },
+        );
         let errors = |s: &Sheet| {
             s.findings()
                 .into_iter()
@@ -134,23 +221,4 @@ impl Sheet {
         *self = other;
         Ok(())
     }
-}
-
-/// The problems of reading, with the statements they stand in.
-fn reading_problems(tree: &Tree) -> Vec<Located> {
-    let whole = tree.problems.iter().map(|p| Located {
-        statement: None,
-        problem: p.clone(),
-    });
-    let each = tree
-        .statements
-        .iter()
-        .enumerate()
-        .flat_map(|(index, statement)| {
-            statement.problems.iter().map(move |p| Located {
-                statement: Some(index),
-                problem: p.clone(),
-            })
-        });
-    whole.chain(each).collect()
 }

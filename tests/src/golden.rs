@@ -3,7 +3,8 @@
 //! A case begins `--- name ---`; prose up to the first blank line says what it proves; the sheet follows. A line that
 //! begins with `//` is a note on the sheet line above: `//= symbol = value unit over axes` for every quantity of that
 //! line, `// ^^^ severity[code]: message` for a finding at those columns, `// | fix(grade): title` for its fixes. The
-//! notes of a case are whole: what is not noted is not there.
+//! notes of a case are whole: what is not noted is not there. Behind the sheet a line `+++ name +++` begins another one
+//! that it may use; what stands there carries no notes.
 
 use formulas::Sheet;
 use formulas::diagnostics::{Edit, Finding, Severity};
@@ -19,8 +20,22 @@ pub struct Case {
     pub prose: String,
     /// The sheet without its notes.
     pub sheet: String,
-    /// The sheet with its notes, as stored.
+    /// The sheet with its notes, as stored, and the other sheets.
     pub stored: String,
+    /// The other sheets by their names, in the order of the file.
+    pub others: Vec<(String, String)>,
+}
+
+impl Case {
+    /// A text among the other sheets of the case.
+    #[must_use]
+    pub fn opened(&self, text: &str) -> Sheet {
+        let text_of = |name: &str| {
+            let other = self.others.iter().find(|(other, _)| other == name);
+            other.map(|(_, text)| text.clone())
+        };
+        Sheet::open_with(text, &text_of)
+    }
 }
 
 /// The files of the suite, in order.
@@ -47,12 +62,12 @@ pub fn cases(text: &str) -> Vec<Case> {
             .strip_prefix("--- ")
             .and_then(|l| l.strip_suffix(" ---"));
         if let Some(name) = heading {
-            let (prose, sheet, stored) = (String::new(), String::new(), String::new());
             cases.push(Case {
                 name: name.to_owned(),
-                prose,
-                sheet,
-                stored,
+                prose: String::new(),
+                sheet: String::new(),
+                stored: String::new(),
+                others: Vec::new(),
             });
             in_prose = true;
             continue;
@@ -68,14 +83,26 @@ pub fn cases(text: &str) -> Vec<Case> {
         }
         case.stored.push_str(line);
         case.stored.push('\n');
-        if !line.starts_with("//") {
+        let other = line
+            .strip_prefix("+++ ")
+            .and_then(|l| l.strip_suffix(" +++"));
+        if let Some(name) = other {
+            case.others.push((name.to_owned(), String::new()));
+        } else if let Some((_, other)) = case.others.last_mut() {
+            other.push_str(line);
+            other.push('\n');
+        } else if !line.starts_with("//") {
             case.sheet.push_str(line);
             case.sheet.push('\n');
         }
     }
     for case in &mut cases {
         // Blank lines before the next heading belong to the file, not to the sheet.
-        for text in [&mut case.sheet, &mut case.stored] {
+        let others = case.others.iter_mut().map(|(_, text)| text);
+        for text in [&mut case.sheet, &mut case.stored]
+            .into_iter()
+            .chain(others)
+        {
             let length = text.trim_end().len();
             text.truncate(length);
             text.push('\n');
@@ -84,13 +111,12 @@ pub fn cases(text: &str) -> Vec<Case> {
     cases
 }
 
-/// The sheet with the notes that the program gives.
+/// The sheet with the notes that the program gives, and the other sheets as they are.
 #[must_use]
-pub fn noted(sheet: &str) -> String {
-    let opened = Sheet::open(sheet);
-    let report = opened.report(&[]);
+pub fn noted(case: &Case) -> String {
+    let report = case.opened(&case.sheet).report(&[]);
     let mut out = String::new();
-    let lines: Vec<&str> = sheet.lines().collect();
+    let lines: Vec<&str> = case.sheet.lines().collect();
     for (index, line) in lines.iter().enumerate() {
         let number = index as u32 + 1;
         let _ = writeln!(out, "{line}");
@@ -106,6 +132,9 @@ pub fn noted(sheet: &str) -> String {
             let _ = writeln!(out, "//= {}", note_quantity(quantity));
         }
         note_outputs(&report, number, &mut out);
+    }
+    for (name, text) in &case.others {
+        let _ = write!(out, "+++ {name} +++\n{text}");
     }
     out
 }

@@ -20,7 +20,7 @@ fn every_case_says_what_it_notes() {
                 "{} does not say what it proves",
                 case.name
             );
-            let now = noted(&case.sheet);
+            let now = noted(&case);
             if now != case.stored {
                 wrong.push(format!(
                     "--- {} ---\nnoted:\n{}\nfound:\n{now}",
@@ -44,7 +44,7 @@ fn a_safe_fix_removes_its_problem_and_adds_none() {
     for file in files() {
         let text = std::fs::read_to_string(&file).expect("a case file");
         for case in cases(&text) {
-            let report = formulas::Sheet::open(&case.sheet).report(&[]);
+            let report = case.opened(&case.sheet).report(&[]);
             let errors = |r: &formulas::report::Report| {
                 r.findings
                     .iter()
@@ -54,7 +54,7 @@ fn a_safe_fix_removes_its_problem_and_adds_none() {
             for finding in &report.findings {
                 for fix in finding.fixes.iter().filter(|f| f.safe) {
                     let mended = applied(&case.sheet, &fix.edits);
-                    let after = formulas::Sheet::open(&mended).report(&[]);
+                    let after = case.opened(&mended).report(&[]);
                     let same = |f: &&formulas::diagnostics::Finding| {
                         f.code == finding.code
                             && f.line == finding.line

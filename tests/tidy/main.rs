@@ -176,11 +176,11 @@ fn stages_use_only_earlier_ones() {
         &["lex"],
         &["parse", "print"],
         &["values", "catalogue"],
-        &["program"],
+        &["program", "used"],
         &["names", "graph", "check", "plan", "run"],
         &["diagnostics"],
         &["report", "assist"],
-        &["setting", "sheet", "bin"],
+        &["setting", "reading", "sheet", "bin"],
     ];
     let rank = |name: &str| order.iter().position(|stage| stage.contains(&name));
     let base = root().join("formulas/src");
@@ -297,10 +297,6 @@ fn later(code: &str) -> bool {
         "further-solutions"
             | "equation-count"
             | "figure-axes"
-            | "missing-sheet"
-            | "sheet-name"
-            | "sheet-axis"
-            | "sheet-findings"
             | "outside-validity"
             | "memory-limit"
             | "operation-limit"

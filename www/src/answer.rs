@@ -1,13 +1,12 @@
 //! A sheet's report and its computation form as one JavaScript object.
 
-use formulas::Sheet;
 use formulas::report::{Form, Report, ValueList};
-use js_sys::{Array, Float64Array, Reflect};
+use js_sys::{Array, Float64Array, Object, Reflect};
 use serde::Serialize;
 use serde_wasm_bindgen::Serializer;
 use wasm_bindgen::prelude::{JsValue, wasm_bindgen};
 
-use crate::panic;
+use crate::{panic, sheets};
 
 /// What the page gets: the report as `run --json` writes it, with the form beside.
 #[derive(Serialize)]
@@ -20,14 +19,15 @@ struct Answer<'a> {
 /// Reads, checks and works out the sheet `text`.
 ///
 /// Gives the object that `run --json` writes, with two differences: `form` holds the rows of the computation form, and
-/// the numbers of a quantity are a `Float64Array` with NaN where there is no value.
+/// the numbers of a quantity are a `Float64Array` with NaN where there is no value. `sheets` holds the texts of other
+/// sheets by their names; it may be left out.
 ///
 /// # Errors
 /// Only where the object itself cannot be made; a sheet with errors has them among its `findings`.
 #[wasm_bindgen]
-pub fn evaluate(text: &str) -> Result<JsValue, JsValue> {
+pub fn evaluate(text: &str, sheets: Option<Object>) -> Result<JsValue, JsValue> {
     panic::listen();
-    let sheet = Sheet::open(text);
+    let sheet = sheets::open(text, sheets.as_ref());
     let mut report = sheet.report(&[]);
     let columns = take_columns(&mut report);
     let answer = Answer {

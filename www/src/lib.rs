@@ -4,6 +4,7 @@
 mod answer;
 mod marks;
 mod panic;
+mod sheets;
 
 pub use answer::evaluate;
 pub use marks::{kinds, marks};

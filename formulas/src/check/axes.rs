@@ -31,6 +31,7 @@ impl Checker<'_> {
                     self.declare(&vary.name.text, vary.name.span, Role::Axis, points);
                 }
                 StatementKind::Table(table) => self.declare_keys(table),
+                StatementKind::Use { name, .. } => self.declare_used_axes(name),
                 _ => {}
             }
         }
@@ -59,6 +60,7 @@ impl Checker<'_> {
                     label_texts,
                     values: None,
                     unit: None,
+                    listed: true,
                 }
             }
             Points::Numbers(values, unit) => Axis {
@@ -68,6 +70,7 @@ impl Checker<'_> {
                 label_texts: Vec::new(),
                 values: Some(values),
                 unit: (!unit.text.is_empty()).then_some(unit),
+                listed: true,
             },
         };
         self.program.axes.push(axis);

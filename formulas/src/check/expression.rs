@@ -220,6 +220,7 @@ impl Checker<'_> {
         };
         match self.meanings.get(index)?.clone() {
             Meaning::Unknown => None,
+            Meaning::Sheet(_) => self.sheet_as_value(name, span),
             Meaning::Value {
                 quantity,
                 unit,
@@ -289,6 +290,10 @@ impl Checker<'_> {
     }
 
     fn field_value(&mut self, base: &Expr, field: &Name, span: Span) -> Option<Typed> {
+        if let Some((sheet, mut path)) = self.used_path(base) {
+            path.push(field);
+            return self.used_value(&sheet, &path, span);
+        }
         if let ExprKind::Name(name) = &base.kind
             && !self
                 .frames

@@ -10,6 +10,7 @@ mod compare;
 mod definition;
 mod expression;
 mod general;
+mod linking;
 mod operand;
 mod outputs;
 mod pick;
@@ -19,15 +20,17 @@ mod shown;
 mod table;
 mod units;
 mod unknown;
+mod used;
 
 use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Entry;
 use crate::graph::Order;
 use crate::names::{Names, located};
 use crate::problem::{Fault, Located};
-use crate::program::{Kind, NodeId, NumberKind, Program, QuantityId, ShownUnit, TextId};
+use crate::program::{Kind, NodeId, NumberKind, Origin, Program, QuantityId, ShownUnit, TextId};
 use crate::span::Span;
 use crate::syntax::{StatementKind, Tree};
+use crate::used::{UsedSheet, UsedSheets};
 use engine::quantity::{Dimension, SpeedKind, System, constants};
 use std::collections::HashMap;
 use std::rc::Rc;
@@ -116,6 +119,8 @@ pub(crate) enum Meaning {
         entry: &'static Entry,
         fields: Vec<QuantityId>,
     },
+    /// Another sheet.
+    Sheet(Rc<UsedSheet>),
 }
 
 /// An own function being written out: its parameters with what they stand for.
@@ -130,6 +135,11 @@ pub(crate) struct Checker<'a> {
     pub(crate) tree: &'a Tree,
     pub(crate) names: &'a Names,
     pub(crate) order: &'a Order,
+    /// The other sheets that this one uses.
+    used: &'a UsedSheets,
+    links: HashMap<String, linking::Links>,
+    origins: HashMap<Origin, QuantityId>,
+    fresh: Vec<(QuantityId, QuantityId)>,
     /// The axes that each unknown is taken to vary over, by its statement.
     unknown_axes: &'a HashMap<usize, AxisSet>,
     pub(crate) program: Program,
@@ -155,10 +165,16 @@ pub(crate) struct Checker<'a> {
 /// The axes of an unknown are those of its equations, which may rest on it: the sheet is checked with the fewest axes
 /// first, and again with those found, until they agree.
 #[must_use]
-pub fn check(text: &str, tree: &Tree, names: &Names, order: &Order) -> (Program, Vec<Located>) {
+pub fn check(
+    text: &str,
+    tree: &Tree,
+    names: &Names,
+    order: &Order,
+    used: &UsedSheets,
+) -> (Program, Vec<Located>) {
     let mut unknown_axes = HashMap::new();
     loop {
-        let mut checker = Checker::new(text, tree, names, order, &unknown_axes);
+        let mut checker = Checker::new(text, tree, (names, order), used, &unknown_axes);
         checker.check_all();
         let found = checker.unknown_axes_found();
         if found == unknown_axes {
@@ -167,6 +183,13 @@ pub fn check(text: &str, tree: &Tree, names: &Names, order: &Order) -> (Program,
         }
         unknown_axes = found;
     }
+}
+
+/// The numbers of the texts that other sheets have.
+fn text_ids(texts: &[String]) -> HashMap<String, TextId> {
+    let each = texts.iter().enumerate();
+    each.map(|(at, text)| (text.clone(), TextId(at as u32)))
+        .collect()
 }
 
 /// The part under which each statement stands.
@@ -185,8 +208,8 @@ impl<'a> Checker<'a> {
     fn new(
         text: &'a str,
         tree: &'a Tree,
-        names: &'a Names,
-        order: &'a Order,
+        (names, order): (&'a Names, &'a Order),
+        used: &'a UsedSheets,
         unknown_axes: &'a HashMap<usize, AxisSet>,
     ) -> Self {
         Checker {
@@ -194,9 +217,14 @@ impl<'a> Checker<'a> {
             tree,
             names,
             order,
+            used,
+            links: HashMap::new(),
+            origins: HashMap::new(),
+            fresh: Vec::new(),
             unknown_axes,
             program: Program {
                 digits: 4,
+                texts: used.texts.clone(),
                 ..Program::default()
             },
             problems: Vec::new(),
@@ -206,7 +234,7 @@ impl<'a> Checker<'a> {
             frames: Vec::new(),
             written_out: 0,
             prefer: Vec::new(),
-            texts: HashMap::new(),
+            texts: text_ids(&used.texts),
             unit_cache: HashMap::new(),
             constants: HashMap::new(),
             call_results: HashMap::new(),
@@ -280,7 +308,7 @@ impl<'a> Checker<'a> {
             StatementKind::Vary(v) => self.check_vary_symbol(v),
             StatementKind::Function(f) => self.check_function(f),
             StatementKind::Unknown(u) => self.check_unknown(u),
-            StatementKind::Use { .. } => self.not_computed("the use of another sheet"),
+            StatementKind::Use { sheet, name } => self.check_use(sheet, name),
             _ => {}
         }
     }
@@ -298,16 +326,6 @@ impl<'a> Checker<'a> {
         for (_, name, span) in symbols {
             self.add_failed(name, span);
         }
-    }
-
-    fn not_computed(&mut self, what: &str) {
-        let span = self.names.of_statement(self.statement).1;
-        self.report(
-            span,
-            Fault::NotComputed {
-                what: what.to_string(),
-            },
-        );
     }
 
     /// A quantity whose line failed: it is listed, without values.
@@ -341,6 +359,8 @@ impl<'a> Checker<'a> {
             is_axis: false,
             remark: self.remarks.get(statement).cloned().flatten(),
             part: self.parts.get(statement).cloned().flatten(),
+            listed: true,
+            origin: None,
         });
         self.program.order.push(id);
         id
@@ -373,6 +393,7 @@ impl<'a> Checker<'a> {
     /// What is said of the sheet as a whole: inputs without remark, lines that nothing uses.
     fn finish(&mut self) {
         // Quantities were listed in the order in which they were checked; the sheet's order is theirs to be shown in.
+        self.list_used_axes();
         self.sort_quantities();
         self.advise_unused();
         self.advise_sources();

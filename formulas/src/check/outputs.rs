@@ -296,7 +296,7 @@ impl Checker<'_> {
             .program
             .quantities
             .iter()
-            .filter(|q| q.input && q.node.is_some())
+            .filter(|q| q.listed && q.input && q.node.is_some())
         {
             let Some(index) = self.names.index(&quantity.symbol) else {
                 continue;
@@ -315,6 +315,7 @@ impl Checker<'_> {
                     .push(located(quantity.statement, quantity.span, fault));
             }
         }
+        self.advise_unused_sheets();
         for (name, statement) in &self.names.function_list {
             if !self.order.functions_called.contains(statement) {
                 let span = self.function_span(*statement);
@@ -322,6 +323,20 @@ impl Checker<'_> {
                     *statement,
                     span,
                     Fault::NeverUsed { name: name.clone() },
+                ));
+            }
+        }
+    }
+
+    fn advise_unused_sheets(&mut self) {
+        for (at, symbol) in self.names.symbols.iter().enumerate() {
+            let used = self.order.symbol_used.get(at).copied().unwrap_or(true);
+            if symbol.role == Role::Sheet && !used {
+                let name = symbol.name.clone();
+                self.problems.push(located(
+                    symbol.statement,
+                    symbol.span,
+                    Fault::NeverUsed { name },
                 ));
             }
         }

@@ -45,7 +45,7 @@ pub fn build(input: &Input) -> Report {
         engine: env!("CARGO_PKG_VERSION"),
         digest: digest(input.text),
         sheet: title_block(tree),
-        axes: program.axes.iter().map(axis).collect(),
+        axes: program.axes.iter().filter(|a| a.listed).map(axis).collect(),
         quantities: quantities(input),
         governing: governing(input.tree, program, values),
         requirements: requirements(tree, program, values),
@@ -110,6 +110,7 @@ fn quantities(input: &Input) -> Vec<Quantity> {
     let unknown = QuantityValues::default();
     let pairs = input.program.quantities.iter().enumerate();
     pairs
+        .filter(|(_, line)| line.listed)
         .filter_map(|(i, line)| {
             let found = input.values.quantities.get(i).unwrap_or(&unknown);
             quantity(input, line, found)

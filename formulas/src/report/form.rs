@@ -1,7 +1,7 @@
 //! The rows of the computation form: each statement as the page and the text report set it out.
 
 use crate::lex::words::title_text;
-use crate::program::{EntryKind, Program};
+use crate::program::{EntryKind, Program, Quantity};
 use crate::span::Span;
 use crate::syntax::{
     Definition, DefinitionValue, Name, Parameter, Row, Statement, StatementKind, Table, Tree,
@@ -143,21 +143,21 @@ fn is_item(kind: RowKind) -> bool {
 /// The symbols that each statement gives or, of `governing` and `freebody`, looks at.
 fn symbols_by_statement(statements: usize, program: &Program) -> Vec<Vec<String>> {
     let mut symbols: Vec<Vec<String>> = vec![Vec::new(); statements];
-    let mut put = |statement: usize, symbol: &str| {
-        let Some(list) = symbols.get_mut(statement) else {
-            return;
-        };
-        if !list.iter().any(|s| s == symbol) {
-            list.push(symbol.to_owned());
+    let mut put = |statement: usize, quantity: &Quantity| {
+        let list = symbols.get_mut(statement).filter(|_| quantity.listed);
+        let Some(list) = list else { return };
+        let symbol = &quantity.symbol;
+        if !list.contains(symbol) {
+            list.push(symbol.clone());
         }
     };
     for quantity in &program.quantities {
-        put(quantity.statement, &quantity.symbol);
+        put(quantity.statement, quantity);
     }
     let quantity = |id: crate::program::QuantityId| program.quantities.get(id.0 as usize);
     for governing in &program.governing {
         if let Some(found) = quantity(governing.quantity) {
-            put(governing.statement, &found.symbol);
+            put(governing.statement, found);
         }
     }
     for body in &program.freebodies {
@@ -165,7 +165,7 @@ fn symbols_by_statement(statements: usize, program: &Program) -> Vec<Vec<String>
         for kind in kinds {
             let entries = body.items.iter().filter(|entry| entry.kind == kind);
             for found in entries.filter_map(|entry| entry.quantity.and_then(quantity)) {
-                put(body.statement, &found.symbol);
+                put(body.statement, found);
             }
         }
     }

@@ -220,6 +220,7 @@ fn label_axis(label: &str, statement: usize, labels: &[&str]) -> Axis {
         statement,
         labels: labels.iter().map(|l| (*l).to_owned()).collect(),
         label_texts: Vec::new(),
+        listed: true,
         values: None,
         unit: None,
     }
@@ -242,6 +243,8 @@ fn quantity(symbol: &str, statement: usize, kind: Kind, unit: Option<ShownUnit>)
         axes: AxisSet::NONE,
         input: symbol == "W" || symbol == "T",
         is_axis: false,
+        listed: true,
+        origin: None,
         remark: place.remark.as_ref().map(|r| r.text.clone()),
         part: None,
     }

@@ -1,7 +1,6 @@
 //! `cargo golden [filter]`: writes the notes of golden cases anew, to be read before they are committed. With
 //! `--sheets FILE` it writes every sheet of the suite, and the bits of its values, for the comparison with wasm.
 
-use formulas::Sheet;
 use std::fmt::Write as _;
 use tests::golden::{cases, files, noted};
 
@@ -18,7 +17,7 @@ fn main() -> Result<(), Box<dyn std::error::Error>> {
         let mut out = String::new();
         for (at, case) in cases(&text).into_iter().enumerate() {
             let body = if case.name.contains(filter) {
-                noted(&case.sheet)
+                noted(&case)
             } else {
                 case.stored
             };
@@ -38,7 +37,7 @@ fn write_bits(file: &str) -> Result<(), Box<dyn std::error::Error>> {
     let mut all = Vec::new();
     for path in files() {
         for case in cases(&std::fs::read_to_string(path)?) {
-            let sheet = Sheet::open(&case.sheet);
+            let sheet = case.opened(&case.sheet);
             let report = sheet.report(&[]);
             let quantities: Vec<serde_json::Value> = report
                 .quantities

@@ -6,7 +6,6 @@ use crate::mending;
 use crate::outcome::{NO_FILE, NOT_MET, Outcome, SHEET_ERROR, WELL};
 use formulas::diagnostics::{Finding, Severity};
 use formulas::report::{Report, compare as comparison, csv, json, text};
-use formulas::run::Limits;
 use formulas::sheet::Sheet;
 use std::ffi::{OsStr, OsString};
 
@@ -40,7 +39,7 @@ pub(crate) fn run(run: &Run) -> Outcome {
 
 /// The sheet with its inputs set, the columns of the symbols asked for kept however long they are.
 fn opened(loaded: &Loaded, set: &[(String, String)], asked: &[String]) -> Result<Sheet, String> {
-    let mut sheet = Sheet::open_within(&loaded.text, Limits::default(), asked);
+    let mut sheet = loaded.opened(asked);
     for (symbol, value) in set {
         sheet
             .set(symbol, value)
@@ -120,7 +119,7 @@ pub(crate) fn check(paths: &[OsString]) -> Outcome {
 }
 
 fn check_one(outcome: &mut Outcome, loaded: &Loaded) -> u8 {
-    let report = Sheet::open(&loaded.text).report(&[]);
+    let report = loaded.opened(&[]).report(&[]);
     outcome.results += &diagnostics(loaded, &report.findings, Severity::Advice);
     for line in report.requirements.iter().filter(|r| r.met != Some(true)) {
         let verdict = match line.met {
@@ -142,7 +141,7 @@ pub(crate) fn fix(path: &OsStr, dry_run: bool) -> Outcome {
     if let Some(message) = loaded.encoding_finding() {
         return Outcome::failed(SHEET_ERROR, &message);
     }
-    let mended = mending::apply_safe(&loaded.text);
+    let mended = loaded.around(&[], |around| mending::apply_safe(&loaded.text, around));
     let said: String = mended
         .applied
         .iter()
@@ -158,7 +157,10 @@ pub(crate) fn fix(path: &OsStr, dry_run: bool) -> Outcome {
         let message = format!("{}: cannot be written: {error}", loaded.name);
         return Outcome::failed(NO_FILE, &message);
     }
-    let status = status(&loaded, &Sheet::open(&mended.text).report(&[]));
+    let report = loaded.around(&[], |around| {
+        Sheet::open_around(&mended.text, around).report(&[])
+    });
+    let status = status(&loaded, &report);
     let (results, diagnostics) = if to_stdout {
         (mended.text, said)
     } else {
@@ -203,7 +205,7 @@ pub(crate) fn compare(old: &OsStr, new: &OsStr) -> Outcome {
 
 /// The report with all values of all quantities.
 fn full_report(loaded: &Loaded) -> Report {
-    complete(loaded, &[], &Sheet::open(&loaded.text).report(&[]))
+    complete(loaded, &[], &loaded.opened(&[]).report(&[]))
 }
 
 #[cfg(test)]

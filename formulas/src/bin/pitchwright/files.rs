@@ -1,8 +1,9 @@
 //! Sheets read from files and standard input.
 
+use formulas::sheet::{Around, Sheet};
 use std::ffi::{OsStr, OsString};
 use std::io::Read;
-use std::path::Path;
+use std::path::{Path, PathBuf};
 
 /// The text of a sheet as it was found.
 pub(crate) struct Loaded {
@@ -54,6 +55,41 @@ fn decoded(name: String, bytes: Vec<u8>) -> Loaded {
 }
 
 impl Loaded {
+    /// The text of another sheet in the same folder.
+    pub(crate) fn beside(&self, sheet: &str) -> Option<String> {
+        let path = self.folder().join(format!("{sheet}.pitchwright"));
+        let bytes = std::fs::read(path).ok()?;
+        Some(decoded(String::new(), bytes).text)
+    }
+
+    fn folder(&self) -> PathBuf {
+        let folder = Path::new(&self.name).parent();
+        folder.map(Path::to_path_buf).unwrap_or_default()
+    }
+
+    /// The name by which other sheets use this one.
+    fn used_as(&self) -> Option<&str> {
+        Path::new(&self.name)
+            .file_name()?
+            .to_str()?
+            .strip_suffix(".pitchwright")
+    }
+
+    /// Runs `look` with what lies around the sheet.
+    pub(crate) fn around<R>(&self, asked: &[String], look: impl FnOnce(&Around<'_>) -> R) -> R {
+        look(&Around {
+            name: self.used_as(),
+            sheets: &|name| self.beside(name),
+            asked,
+            ..Around::default()
+        })
+    }
+
+    /// The sheet worked out among those beside it, the columns of the symbols asked for kept however long they are.
+    pub(crate) fn opened(&self, asked: &[String]) -> Sheet {
+        self.around(asked, |around| Sheet::open_around(&self.text, around))
+    }
+
     /// Says where the bytes are that are no UTF-8, in the form of a finding.
     pub(crate) fn encoding_finding(&self) -> Option<String> {
         let before = self.text.get(..self.broken_at?)?;
@@ -79,5 +115,25 @@ mod tests {
         assert!(finding.starts_with("a:2:3: error[no-utf-8]: "), "{finding}");
         let plain = decoded("a".to_owned(), "x = 1 ; \u{b0}".into());
         assert_eq!(plain.encoding_finding(), None);
+    }
+
+    #[test]
+    fn other_sheets_lie_beside_the_sheet() {
+        let folder =
+            std::env::temp_dir().join(format!("pitchwright-beside-{}", std::process::id()));
+        std::fs::create_dir_all(&folder).unwrap();
+        let write = |name: &str, text: &str| std::fs::write(folder.join(name), text).unwrap();
+        write("geometry.pitchwright", "S [ft^2] = 142\n");
+        write(
+            "loads.pitchwright",
+            "use \"geometry\" as g\nuse \"loads\" as l\nx = g.S\n",
+        );
+        let loaded = load(folder.join("loads.pitchwright").as_os_str()).unwrap();
+        let report = loaded.opened(&[]).report(&[]);
+        std::fs::remove_dir_all(&folder).unwrap();
+        let codes: Vec<&str> = report.findings.iter().map(|f| f.code).collect();
+        assert_eq!(codes, ["sheet-name", "never-used"]);
+        let value = report.quantity("x").and_then(|q| q.largest.as_ref());
+        assert_eq!(value.map(|v| v.value), Some(142.0));
     }
 }

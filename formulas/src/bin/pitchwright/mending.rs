@@ -1,7 +1,7 @@
 //! Applies the fixes of a sheet that are marked safe.
 
 use formulas::diagnostics::{Edit, Finding};
-use formulas::sheet::Sheet;
+use formulas::sheet::{Around, Sheet};
 
 /// Most rounds of reading a sheet again after its mending.
 const ROUNDS_MOST: usize = 20;
@@ -23,13 +23,13 @@ pub(crate) struct Applied {
 
 /// Applies safe fixes until none is left. A round takes at most one fix for each line, from the end of the text, so that
 /// no fix moves the place of another.
-pub(crate) fn apply_safe(text: &str) -> Mended {
+pub(crate) fn apply_safe(text: &str, around: &Around<'_>) -> Mended {
     let mut mended = Mended {
         text: text.to_owned(),
         applied: Vec::new(),
     };
     for _ in 0..ROUNDS_MOST {
-        let findings = Sheet::open(&mended.text).report(&[]).findings;
+        let findings = Sheet::open_around(&mended.text, around).findings();
         let (next, applied) = round(&mended.text, &findings);
         if applied.is_empty() || next == mended.text {
             break;

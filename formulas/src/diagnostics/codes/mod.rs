@@ -72,6 +72,7 @@ mod row_length;
 mod rows_missing;
 mod rules_mixed;
 mod sheet_axis;
+mod sheet_depth;
 mod sheet_findings;
 mod sheet_name;
 mod sheet_too_large;
@@ -210,6 +211,7 @@ pub const CODES: &[&Code] = &[
     &missing_sheet::ROW,
     &sheet_name::ROW,
     &sheet_axis::ROW,
+    &sheet_depth::ROW,
     &sheet_findings::ROW,
 ];
 
@@ -337,6 +339,9 @@ told_by! {
 
     MissingSheet { sheet } => missing_sheet::draft(sheet),
     SheetName { sheet } => sheet_name::draft(sheet),
+    UnknownInSheet { sheet, name, nearest } => unknown_symbol::in_sheet(site, sheet, name, nearest),
+    SheetDepth { limit } => sheet_depth::draft(*limit),
     SheetAxis { sheet, axis } => sheet_axis::draft(sheet, axis),
+    SheetAxisHidden { sheet, axis } => sheet_axis::hidden(sheet, axis),
     SheetFindings { sheet, errors, warnings } => sheet_findings::draft(sheet, *errors, *warnings),
 }

@@ -20,6 +20,13 @@ pub(super) fn draft(sheet: &str, axis: &str) -> Draft {
     ))
 }
 
+pub(super) fn hidden(sheet: &str, axis: &str) -> Draft {
+    Draft::says(format!(
+        "This varies over the axis {axis} of the sheet {}, but {axis} is something else here.",
+        quoted(sheet)
+    ))
+}
+
 #[cfg(test)]
 mod tests {
     use crate::diagnostics::check::check;

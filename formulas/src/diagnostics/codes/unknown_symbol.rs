@@ -2,7 +2,7 @@
 
 use crate::diagnostics::draft::{Draft, Site};
 use crate::diagnostics::finding::{Code, Severity};
-use crate::diagnostics::wording::meant;
+use crate::diagnostics::wording::{meant, quoted};
 
 pub(super) const ROW: Code = Code {
     code: "unknown-symbol",
@@ -28,6 +28,20 @@ pub(super) fn draft(
             meant(nearest.as_deref())
         ),
     };
+    Draft::says(message).offers_name(site, nearest.as_deref())
+}
+
+pub(super) fn in_sheet(
+    site: &Site<'_>,
+    sheet: &str,
+    name: &str,
+    nearest: &Option<String>,
+) -> Draft {
+    let message = format!(
+        "Nothing in the sheet {} is called {name}.{}",
+        quoted(sheet),
+        meant(nearest.as_deref())
+    );
     Draft::says(message).offers_name(site, nearest.as_deref())
 }
 
