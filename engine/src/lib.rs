@@ -55,6 +55,7 @@ pub mod moment;
 pub mod balance;
 pub mod control;
 pub mod envelope;
+pub mod structure;
 pub mod tail;
 
 pub mod elementary;

@@ -11,6 +11,7 @@ mod macros;
 mod mass;
 mod moment;
 mod row;
+mod structure;
 mod tail;
 
 pub use row::{Compute, Entry, Field, Gives, Line, Parameter, Validity, Wants};
@@ -29,6 +30,7 @@ static GROUPS: &[&[Entry]] = &[
     control::ROWS,
     balance::ROWS,
     envelope::ROWS,
+    structure::ROWS,
     general::ROWS,
     axes::ROWS,
 ];

@@ -213,6 +213,11 @@ fn names_order_and_defaults_are_what_sheets_use() {
             "ground_gust_hinge_moment(rule, surface, weight, S, S_control, c_control)",
             "factor_of_safety(rule)",
             "fitting_factor(rule)",
+            "shear_from_tip(load*, y*)",
+            "bending_from_tip(load*, y*)",
+            "torsion_from_tip(torque*, y*)",
+            "chordwise_load(shape, load, chord, chord_ratio, x_cp = none, bay = 0) p_leading p_hinge p_trailing rib_load",
+            "bag_plan(load*, y*, bag, tare* = 0, factor = 1) bags load_error shear_error bending_error",
         ]
     );
 }
