@@ -1,13 +1,15 @@
 //! The rows of the checks: read from the tables beside this file, one row for each value, with its source.
 
 /// The tables, by the name of their file.
-const TABLES: [(&str, &str); 6] = [
+const TABLES: [(&str, &str); 8] = [
     ("moment", include_str!("moment.csv")),
     ("balance", include_str!("balance.csv")),
     ("trim", include_str!("trim.csv")),
     ("mass", include_str!("mass.csv")),
     ("atmosphere", include_str!("atmosphere.csv")),
     ("units", include_str!("units.csv")),
+    ("envelope", include_str!("envelope.csv")),
+    ("structure", include_str!("structure.csv")),
 ];
 
 /// First line of every table.

@@ -26,11 +26,12 @@ pub struct BagPlan {
 /// - `factor`: test load over limit load: 1 for limit, the factor of safety for ultimate load.
 ///
 /// Method: the test load of each bay, straight between its stations, is shared between the two by statics, so that shear
-/// and bending at the stations are those of the load. From the tip inward each station gets the next lower or next higher
-/// whole number for what is still due, of the two that which leaves the smaller bending error at the next station inward;
-/// at the root the nearer one. So the shear error is nowhere more than one bag, and the bending error nowhere more than one
-/// bag times the widest bay. That holds while the load still due is nowhere negative: bags cannot push the other way, and
-/// where the tare is more than the test load, the errors say so.
+/// and bending at the stations are those of the load. From the tip inward each station gets the nearest whole number of
+/// bags for what is still due, the error of the stations outboard within, unless the bending error at the next station
+/// inward were to be more than one bag times the bay: then of the next lower and higher number the one that leaves less.
+/// So the shear error is nowhere more than one bag, and the bending error nowhere more than one bag times the widest bay.
+/// That holds while the load still due is nowhere negative: bags cannot push the other way, and where the tare is more
+/// than the test load, the errors say so.
 ///
 /// NaN, no value, where the stations do not run outward or the bag weighs nothing.
 ///
@@ -105,18 +106,21 @@ fn at_stations(load: &[f64], y: &[Length]) -> Vec<f64> {
     out
 }
 
-/// The next lower or higher whole number of bags for what is still due: that which leaves the smaller bending error at the
-/// next station inward, or the nearer one where there is no further station.
+/// The nearest whole number of bags for what is still due, unless it leaves more than one bag times the bay of bending
+/// error at the next station inward: then of the next lower and higher number the one that leaves less.
 fn whole_bags(due: f64, bag: f64, bay: Option<f64>, bending: f64) -> f64 {
     let low = (due / bag).floor().max(0.0);
-    let error = |bags: f64| {
-        let shear = bags * bag - due;
-        match bay {
-            Some(bay) if bay > 0.0 => (bending + shear * bay).abs(),
-            _ => shear.abs(),
-        }
+    let shear = |bags: f64| (bags * bag - due).abs();
+    let nearest = if shear(low + 1.0) < shear(low) {
+        low + 1.0
+    } else {
+        low
     };
-    if error(low + 1.0) < error(low) {
+    let bay = bay.unwrap_or(0.0);
+    let error = |bags: f64| (bending + (bags * bag - due) * bay).abs();
+    if error(nearest) <= bag * bay {
+        nearest
+    } else if error(low + 1.0) < error(low) {
         low + 1.0
     } else {
         low

@@ -183,9 +183,10 @@ pub(super) static ROWS: &[Entry] = &[
         });
         "Whole bags at the stations of one half for a load test, with the errors that they make.",
         "The test load factor load - tare of each bay is shared between its stations by statics; from the tip inward the \
-         next lower or higher whole number of bags is taken, whichever leaves the smaller bending error. The shear error \
-         is nowhere more than one bag, the bending error nowhere more than one bag times the widest bay. load is the limit \
-         load per span, air less inertia; tare the structure's own weight per span, which pulls with the bags; bag a force.",
+         nearest whole number of bags is taken for what is still due, or its neighbour where the bending error would grow \
+         above one bag times the bay. The shear error is nowhere more than one bag, the bending error nowhere more than one \
+         bag times the widest bay. load is the limit load per span, air less inertia; tare the structure's own weight per \
+         span, which pulls with the bags; bag a force.",
         "Stations from root to tip, and nowhere more tare than test load: bags do not push.",
         STATICS,
         "table station | y [m] | w [N/m] ; limit load of one half, air less inertia\n\
