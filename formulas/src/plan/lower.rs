@@ -69,7 +69,16 @@ impl Lowering<'_> {
             return;
         };
         self.quantity = Some(id);
-        let slot = self.slot(node);
+        // Equal numbers are one node. Each input has a column of its own all the same: moving one is to leave the others.
+        let is_number = matches!(
+            self.program.nodes.get(node.0 as usize).map(|n| &n.op),
+            Some(Op::Constant(_))
+        );
+        let slot = if is_number {
+            self.make(node)
+        } else {
+            self.slot(node)
+        };
         self.plan.quantities[id.0 as usize] = slot;
     }
 
