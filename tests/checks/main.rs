@@ -3,6 +3,7 @@
 
 mod example;
 mod rows;
+mod starting;
 
 use formulas::Sheet;
 use formulas::diagnostics::Severity;

@@ -1,0 +1,55 @@
+//! The starting sheets: each is complete, every unit fits, every requirement is met and every free body closes.
+
+use formulas::Sheet;
+use formulas::diagnostics::Severity;
+use formulas::report::Report;
+use std::path::Path;
+
+/// The reports of all starting sheets, by the name of their file.
+fn reports() -> Vec<(String, Report)> {
+    let folder = Path::new(env!("CARGO_MANIFEST_DIR")).join("../www/sheets");
+    let mut paths: Vec<_> = std::fs::read_dir(folder)
+        .expect("the starting sheets")
+        .map(|entry| entry.expect("an entry").path())
+        .filter(|path| path.extension().is_some_and(|e| e == "pitchwright"))
+        .collect();
+    paths.sort();
+    let report = |path: std::path::PathBuf| {
+        let text = std::fs::read_to_string(&path).expect("a sheet");
+        let name = path.file_stem().and_then(|n| n.to_str()).unwrap_or("");
+        (name.to_owned(), Sheet::open(&text).report(&[]))
+    };
+    paths.into_iter().map(report).collect()
+}
+
+#[test]
+fn starting_sheets_are_clean() {
+    let reports = reports();
+    assert!(reports.len() >= 4);
+    for (name, report) in &reports {
+        for finding in &report.findings {
+            let (line, message) = (finding.line, &finding.message);
+            assert_eq!(
+                finding.severity,
+                Severity::Advice,
+                "{name}:{line}: {message}"
+            );
+        }
+        for requirement in &report.requirements {
+            assert_eq!(requirement.met, Some(true), "{name}: {}", requirement.text);
+        }
+        for body in &report.freebodies {
+            assert_eq!(body.closes, Some(true), "{name}: {}", body.name);
+        }
+    }
+}
+
+#[test]
+fn starting_sheets_have_a_full_title_block() {
+    for (name, report) in reports() {
+        let block = &report.sheet;
+        for text in [&block.title, &block.revision, &block.prepared, &block.basis] {
+            assert!(text.is_some(), "{name} lacks a line of its title block");
+        }
+    }
+}
