@@ -155,6 +155,15 @@ fn pointed(figures: &str, whole: usize) -> String {
     }
 }
 
+/// A unit as it is typed behind a number: ` ft`, ` /deg`, or as a factor where only brackets can hold it.
+pub(crate) fn behind_number(unit: &str) -> String {
+    let plain = unit.strip_prefix('1').filter(|rest| rest.starts_with('/'));
+    match plain.unwrap_or(unit) {
+        held if held.contains([' ', '*', '(']) => format!("*[{unit}]"),
+        plain => format!(" {plain}"),
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;

@@ -65,6 +65,22 @@ pub struct Axis {
     pub listed: bool,
 }
 
+impl Axis {
+    /// The place of a label; on an axis of numbers a number in the axis's unit will do.
+    #[must_use]
+    pub fn find(&self, text: &str) -> Option<usize> {
+        if let Some(at) = self.labels.iter().position(|l| l == text) {
+            return Some(at);
+        }
+        let number: f64 = text.parse().ok()?;
+        let si = self.unit.as_ref().map_or(number, |u| u.unit.to_si(number));
+        self.values
+            .as_ref()?
+            .iter()
+            .position(|v| (v - si).abs() <= 1e-12 * v.abs().max(si.abs()))
+    }
+}
+
 /// A unit with the text by which it is shown, `lb/ft^2`.
 #[derive(Clone, PartialEq, Debug)]
 pub struct ShownUnit {

@@ -1,6 +1,7 @@
 //! From a text to a checked program, the other sheets that it uses on the way.
 
 use crate::diagnostics::{self, Severity};
+use crate::graph::Order;
 use crate::names::{self, Names};
 use crate::problem::Located;
 use crate::program::Program;
@@ -21,6 +22,8 @@ pub type Lookup<'a> = &'a dyn Fn(&str) -> Option<String>;
 pub(crate) struct Checked {
     pub(crate) tree: Tree,
     pub(crate) names: Names,
+    pub(crate) order: Order,
+    pub(crate) used: UsedSheets,
     pub(crate) program: Program,
     pub(crate) problems: Vec<Located>,
     circles: Vec<Vec<String>>,
@@ -65,6 +68,8 @@ impl<'a> Reader<'a> {
         Checked {
             tree,
             names,
+            order,
+            used,
             program,
             problems,
             circles,

@@ -1,6 +1,8 @@
 //! The front door: a sheet with everything that was found out about it. The only holder of state.
 
+use crate::assist::trail::{self, Followed, Trail, TrailError};
 use crate::diagnostics::{self, Finding};
+use crate::graph::Order;
 use crate::names::Names;
 use crate::plan;
 use crate::problem::Located;
@@ -9,7 +11,7 @@ use crate::reading::{Lookup, Reader, of_this_sheet};
 use crate::report::{self, Report};
 use crate::run::{self, Limits};
 use crate::syntax::Tree;
-use crate::used::UsedSheet;
+use crate::used::{UsedSheet, UsedSheets};
 use crate::values::Values;
 use std::collections::BTreeMap;
 use std::rc::Rc;
@@ -35,6 +37,8 @@ pub struct Sheet {
     values: Values,
     problems: Vec<Located>,
     limits: Limits,
+    order: Order,
+    uses: UsedSheets,
     used: BTreeMap<String, Rc<UsedSheet>>,
 }
 
@@ -126,6 +130,8 @@ impl Sheet {
             values,
             problems,
             limits: around.limits,
+            order: checked.order,
+            uses: checked.used,
             used: reader.known,
         }
     }
@@ -191,6 +197,52 @@ impl Sheet {
     #[must_use]
     pub fn form(&self) -> report::Form {
         report::form(&self.text, &self.tree, &self.program)
+    }
+
+    /// How a value came about. `condition` names labels of axes; along those that it leaves the condition of largest
+    /// magnitude is taken.
+    ///
+    /// # Errors
+    /// Says which symbol, axis or label there is not.
+    pub fn trail(&self, symbol: &str, condition: &[(String, String)]) -> Result<Trail, TrailError> {
+        let other = |sheet: &str, symbol: &str, condition: &[(String, String)]| {
+            let used = self.used.get(sheet)?;
+            let condition = self.labels_in(used, condition);
+            let around = Around {
+                name: Some(sheet),
+                sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
+                limits: self.limits,
+                asked: &[],
+            };
+            let opened = Sheet::open_around(&used.text, &around);
+            opened.trail(symbol, &condition).ok()
+        };
+        let followed = Followed {
+            text: &self.text,
+            tree: &self.tree,
+            names: &self.names,
+            order: &self.order,
+            used: &self.uses,
+            program: &self.program,
+            limits: self.limits,
+            other: &other,
+        };
+        trail::follow(&followed, symbol, condition)
+    }
+
+    /// A condition as another sheet calls it: axes agree in place and value, but show numbers in units of their own.
+    fn labels_in(
+        &self,
+        other: &UsedSheet,
+        condition: &[(String, String)],
+    ) -> Vec<(String, String)> {
+        let label = |(name, label): &(String, String)| {
+            let axes = |program: &Program| program.axes.iter().position(|a| a.name == *name);
+            let place = self.program.axes.get(axes(&self.program)?)?.find(label)?;
+            let theirs = other.program.axes.get(axes(&other.program)?)?;
+            Some((name.clone(), theirs.labels.get(place)?.clone()))
+        };
+        condition.iter().filter_map(label).collect()
     }
 
     /// Replaces the right side of an input by another, and works the sheet out again.

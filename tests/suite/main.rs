@@ -79,3 +79,32 @@ fn a_safe_fix_removes_its_problem_and_adds_none() {
     }
     assert!(tried >= 10, "only {tried} safe fixes");
 }
+
+#[test]
+fn every_value_has_a_trail_down_to_inputs() {
+    use formulas::assist::trail::{StepKind, TrailValue};
+    for file in files() {
+        let text = std::fs::read_to_string(&file).expect("a case file");
+        for case in cases(&text) {
+            let sheet = case.opened(&case.sheet);
+            for quantity in sheet.report(&[]).quantities {
+                let trail = sheet.trail(&quantity.symbol, &[]);
+                let trail = trail.unwrap_or_else(|e| panic!("{}: {e}", case.name));
+                let first = &trail.steps[0];
+                let name = format!("{}: {}", case.name, quantity.symbol);
+                let ends = [&quantity.largest, &quantity.smallest];
+                let ends = ends.map(|e| e.as_ref().map(|e| e.value));
+                if let (TrailValue::Number(value), [Some(a), Some(b)]) = (&first.value, ends) {
+                    assert!(*value == Some(a) || *value == Some(b), "{name}: {value:?}");
+                }
+                for step in &trail.steps {
+                    let within = step.rests_on.iter().all(|at| *at < trail.steps.len());
+                    assert!(within && !step.symbol.is_empty(), "{name}: {step:?}");
+                    if step.kind == StepKind::Input {
+                        assert!(step.rests_on.is_empty(), "{name}: {step:?}");
+                    }
+                }
+            }
+        }
+    }
+}

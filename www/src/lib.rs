@@ -5,7 +5,9 @@ mod answer;
 mod marks;
 mod panic;
 mod sheets;
+mod trail;
 
 pub use answer::evaluate;
 pub use marks::{kinds, marks};
 pub use panic::last_panic;
+pub use trail::trail;

@@ -1,7 +1,7 @@
 //! Sheets among the texts that JavaScript hands over.
 
 use formulas::Sheet;
-use js_sys::{Object, Reflect};
+use js_sys::{Array, Object, Reflect};
 
 /// Opens a text; `sheets` holds the texts of other sheets by their names.
 pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
@@ -14,4 +14,13 @@ pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
         Reflect::get(sheets, &name.into()).ok()?.as_string()
     };
     Sheet::open_with(text, &beside)
+}
+
+/// The texts of an object by their names, in its order.
+pub(crate) fn entries(object: &Object) -> Vec<(String, String)> {
+    let pair = |entry: wasm_bindgen::JsValue| {
+        let entry = Array::from(&entry);
+        Some((entry.get(0).as_string()?, entry.get(1).as_string()?))
+    };
+    Object::entries(object).iter().filter_map(pair).collect()
 }

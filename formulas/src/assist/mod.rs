@@ -1,3 +1,4 @@
 //! Help while a sheet is typed.
 
 pub mod marks;
+pub mod trail;

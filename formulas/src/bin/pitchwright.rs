@@ -32,6 +32,7 @@ fn carry_out(command: Command) -> Outcome {
         Command::Run(run) => commands::run(&run),
         Command::Check(sheets) => commands::check(&sheets),
         Command::Fix { sheet, dry_run } => commands::fix(&sheet, dry_run),
+        Command::Trail { sheet, symbol, at } => commands::trail(&sheet, &symbol, &at),
         Command::Compare { old, new } => commands::compare(&old, &new),
         Command::Functions(name) => lists::functions(name.as_deref()),
         Command::Units(text) => lists::units(text.as_deref()),

@@ -398,7 +398,8 @@ impl Checker<'_> {
 
     /// The label of an axis that a text means.
     pub(crate) fn place_of_label(&mut self, axis: AxisId, label: &Words) -> Option<usize> {
-        let found = self.find_label(axis, &label.text);
+        let row = self.program.axes.get(axis.0 as usize);
+        let found = row.and_then(|row| row.find(&label.text));
         if found.is_none() {
             let axis = &self.program.axes[axis.0 as usize];
             let nearest =
@@ -411,20 +412,6 @@ impl Checker<'_> {
             self.report(label.span, fault);
         }
         found
-    }
-
-    /// The index of a label; on an axis of numbers a number in the axis's unit will do.
-    pub(crate) fn find_label(&self, axis: AxisId, text: &str) -> Option<usize> {
-        let axis = self.program.axes.get(axis.0 as usize)?;
-        if let Some(at) = axis.labels.iter().position(|l| l == text) {
-            return Some(at);
-        }
-        let number: f64 = text.parse().ok()?;
-        let si = axis.unit.as_ref().map_or(number, |u| u.unit.to_si(number));
-        axis.values
-            .as_ref()?
-            .iter()
-            .position(|v| (v - si).abs() <= 1e-12 * v.abs().max(si.abs()))
     }
 
     /// Units of an own function's parameters and result are read even where nobody calls it.
@@ -489,6 +476,7 @@ impl Checker<'_> {
         parameters: Vec<(String, Typed)>,
         span: Span,
     ) -> Option<Typed> {
+        let outer = self.trace_body(self.statement, span);
         self.frames.push(Frame {
             statement: self.statement,
             parameters,
@@ -502,6 +490,7 @@ impl Checker<'_> {
         if let Some(frame) = self.frames.pop() {
             self.statement = frame.statement;
         }
+        self.trace_back(outer);
         result.map(|typed| Typed {
             span,
             marks: Marks::systems_of(&[&typed]),

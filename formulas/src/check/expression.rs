@@ -12,6 +12,12 @@ impl Checker<'_> {
     /// Checks an expression. `None` where it failed; then a problem is reported, here or at what it rests on.
     pub(crate) fn expression(&mut self, expr: &Expr) -> Option<Typed> {
         self.count_written_out(expr.span)?;
+        let typed = self.expression_of(expr);
+        self.trace(expr.span, typed.as_ref());
+        typed
+    }
+
+    fn expression_of(&mut self, expr: &Expr) -> Option<Typed> {
         match &expr.kind {
             ExprKind::Number { value, unit, more } => {
                 self.typed_number(expr.span, *value, unit.as_ref(), more)

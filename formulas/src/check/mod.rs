@@ -18,6 +18,7 @@ mod reduce;
 mod rules;
 mod shown;
 mod table;
+mod trace;
 mod units;
 mod unknown;
 mod used;
@@ -34,6 +35,8 @@ use crate::used::{UsedSheet, UsedSheets};
 use engine::quantity::{Dimension, SpeedKind, System, constants};
 use std::collections::HashMap;
 use std::rc::Rc;
+
+pub use trace::{Part, Seen, Trace};
 
 /// Most operators with own functions written out.
 const WRITTEN_OUT_MOST: u32 = 100_000;
@@ -140,6 +143,7 @@ pub(crate) struct Checker<'a> {
     links: HashMap<String, linking::Links>,
     origins: HashMap<Origin, QuantityId>,
     fresh: Vec<(QuantityId, QuantityId)>,
+    trace: Option<Trace>,
     /// The axes that each unknown is taken to vary over, by its statement.
     unknown_axes: &'a HashMap<usize, AxisSet>,
     pub(crate) program: Program,
@@ -172,14 +176,40 @@ pub fn check(
     order: &Order,
     used: &UsedSheets,
 ) -> (Program, Vec<Located>) {
+    let checker = checked(text, tree, (names, order), used, None);
+    (checker.0, checker.1)
+}
+
+/// Checks a sheet once more, and keeps what every part of some of its statements came to.
+#[must_use]
+pub fn trace(
+    text: &str,
+    tree: &Tree,
+    (names, order): (&Names, &Order),
+    used: &UsedSheets,
+    wanted: &[bool],
+) -> (Program, Trace) {
+    let (program, _, trace) = checked(text, tree, (names, order), used, Some(wanted));
+    (program, trace)
+}
+
+fn checked(
+    text: &str,
+    tree: &Tree,
+    names: (&Names, &Order),
+    used: &UsedSheets,
+    traced: Option<&[bool]>,
+) -> (Program, Vec<Located>, Trace) {
     let mut unknown_axes = HashMap::new();
     loop {
-        let mut checker = Checker::new(text, tree, (names, order), used, &unknown_axes);
+        let mut checker = Checker::new(text, tree, names, used, &unknown_axes);
+        checker.trace = traced.map(Trace::of);
         checker.check_all();
         let found = checker.unknown_axes_found();
         if found == unknown_axes {
             checker.finish();
-            return (checker.program, checker.problems);
+            let trace = checker.trace.unwrap_or_default();
+            return (checker.program, checker.problems, trace);
         }
         unknown_axes = found;
     }
@@ -221,6 +251,7 @@ impl<'a> Checker<'a> {
             links: HashMap::new(),
             origins: HashMap::new(),
             fresh: Vec::new(),
+            trace: None,
             unknown_axes,
             program: Program {
                 digits: 4,

@@ -1,5 +1,6 @@
 //! Phrases that several findings share.
 
+pub(super) use crate::numbers::behind_number;
 use crate::problem::{Conditions, Operand};
 use engine::quantity::{Dimension, SpeedKind};
 
@@ -148,15 +149,6 @@ pub(super) fn conversion(from: SpeedKind, to: SpeedKind) -> &'static str {
         (Calibrated, True) => "eas_of_cas and then tas_of_eas convert",
         (True, Calibrated) => "eas_of_tas and then cas_of_eas convert",
         _ => "nothing need convert",
-    }
-}
-
-/// A unit as it is typed behind a number: ` ft`, ` /deg`, or as a factor where only brackets can hold it.
-pub(super) fn behind_number(unit: &str) -> String {
-    let plain = unit.strip_prefix('1').filter(|rest| rest.starts_with('/'));
-    match plain.unwrap_or(unit) {
-        held if held.contains([' ', '*', '(']) => format!("*[{unit}]"),
-        plain => format!(" {plain}"),
     }
 }
 

@@ -8,13 +8,13 @@ use engine::quantity::Unit;
 
 /// How the SI values of one quantity are shown.
 #[derive(Clone, Copy)]
-pub(super) struct Scale {
+pub(crate) struct Scale {
     unit: Option<Unit>,
 }
 
 impl Scale {
     /// For values of that kind. The zero of a temperature scale counts only for absolute temperatures.
-    pub(super) fn of(unit: Option<&ShownUnit>, kind: Kind) -> Self {
+    pub(crate) fn of(unit: Option<&ShownUnit>, kind: Kind) -> Self {
         let absolute = matches!(kind, Kind::Number(number) if number.absolute);
         let unit = unit.map(|shown| shown.unit);
         Scale {
@@ -41,7 +41,7 @@ impl Scale {
     }
 
     /// The number shown, `None` for whatever is no finite number. Never -0.
-    pub(super) fn number(self, si: f64) -> Option<f64> {
+    pub(crate) fn number(self, si: f64) -> Option<f64> {
         let shown = match self.unit {
             Some(unit) if si.is_finite() => unit.from_si(si),
             _ => si,
@@ -60,7 +60,7 @@ fn without_zero(unit: Unit) -> Unit {
 }
 
 /// The labels of one condition of a shape.
-pub(super) fn condition(axes: &[Axis], shape: &Shape, condition: usize) -> Condition {
+pub(crate) fn condition(axes: &[Axis], shape: &Shape, condition: usize) -> Condition {
     let label = |(id, index): (&crate::axes::AxisId, usize)| {
         let axis = axes.get(id.0 as usize)?;
         Some((axis.name.clone(), axis.labels.get(index)?.clone()))

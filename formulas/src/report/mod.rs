@@ -15,6 +15,7 @@ mod sensitivity;
 pub mod text;
 
 pub use build::{Input, build};
+pub(crate) use convert::{Scale, condition};
 pub use form::{Form, FormRow, form};
 
 use crate::diagnostics::Finding;

@@ -28,7 +28,7 @@ pub const OPERATIONS_MOST: f64 = 2e10;
 /// Numbers kept at a time before columns that are no longer read are let go.
 const KEPT_MOST: usize = 48 << 20;
 /// Conditions up to which the column of a quantity is kept for good.
-const COLUMN_KEPT_MOST: usize = 65_536;
+pub const COLUMN_KEPT_MOST: usize = 65_536;
 
 /// Limits that a host may lower.
 #[derive(Clone, Copy, PartialEq, Debug)]

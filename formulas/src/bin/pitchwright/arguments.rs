@@ -7,6 +7,7 @@ pub(crate) const USAGE: &str = "\
 usage: pitchwright run SHEET [--text|--json|--csv] [--set SYMBOL=EXPR]... [--quantity SYMBOL]...
        pitchwright check SHEET...
        pitchwright fix SHEET [--dry-run]
+       pitchwright trail SHEET SYMBOL [--at AXIS=LABEL]...
        pitchwright compare OLD NEW
        pitchwright functions [NAME]
        pitchwright units [TEXT]
@@ -26,6 +27,11 @@ pub(crate) enum Command {
     Fix {
         sheet: OsString,
         dry_run: bool,
+    },
+    Trail {
+        sheet: OsString,
+        symbol: String,
+        at: Vec<(String, String)>,
     },
     Compare {
         old: OsString,
@@ -86,9 +92,19 @@ pub(crate) fn read(arguments: impl Iterator<Item = OsString>) -> Result<Command,
         }
         "functions" => Ok(Command::Functions(words.at_most_one("functions")?)),
         "units" => Ok(Command::Units(words.at_most_one("units")?)),
-        "trail" => Ok(Command::Unsupported("trail".to_owned())),
+        "trail" => trail(words),
         _ => Err(format!("unknown command `{word}`")),
     }
+}
+
+fn trail(words: Words) -> Result<Command, String> {
+    let at = words.pairs_of("--at", "axis and label")?;
+    let [sheet, symbol] = words.exactly("trail", "a sheet and a symbol")?;
+    Ok(Command::Trail {
+        sheet,
+        symbol: symbol.to_string_lossy().into_owned(),
+        at,
+    })
 }
 
 fn run(words: Words) -> Result<Command, String> {
@@ -105,13 +121,7 @@ fn run(words: Words) -> Result<Command, String> {
     if chosen.next().is_some() {
         return Err("only one of --text, --json and --csv can be given".to_owned());
     }
-    let mut set = Vec::new();
-    for text in words.values_of("--set") {
-        let (symbol, value) = text
-            .split_once('=')
-            .ok_or_else(|| format!("`--set {text}` lacks the `=` between symbol and value"))?;
-        set.push((symbol.trim().to_owned(), value.trim().to_owned()));
-    }
+    let set = words.pairs_of("--set", "symbol and value")?;
     let quantities = words.values_of("--quantity");
     let [sheet] = words.exactly("run", "one sheet")?;
     Ok(Command::Run(Run {
@@ -206,6 +216,17 @@ impl Words {
         options.map(|(_, value)| value.clone()).collect()
     }
 
+    /// Values of the form `NAME=TEXT`.
+    fn pairs_of(&self, option: &str, between: &str) -> Result<Vec<(String, String)>, String> {
+        let pair = |text: String| {
+            let parts = text.split_once('=');
+            let (name, value) = parts
+                .ok_or_else(|| format!("`{option} {text}` lacks the `=` between {between}"))?;
+            Ok((name.trim().to_owned(), value.trim().to_owned()))
+        };
+        self.values_of(option).into_iter().map(pair).collect()
+    }
+
     fn exactly<const N: usize>(self, command: &str, what: &str) -> Result<[OsString; N], String> {
         let given = <[OsString; N]>::try_from(self.plain);
         given.map_err(|_| format!("`{command}` wants {what}"))
@@ -269,11 +290,27 @@ mod tests {
             (&["run", "a", "--json=1"], "takes no value"),
             (&["check"], "at least one"),
             (&["compare", "a"], "two sheets"),
+            (&["trail", "a"], "a sheet and a symbol"),
+            (&["trail", "a", "x", "--at", "cg"], "lacks the `=`"),
             (&["units", "a", "b"], "one name at most"),
         ] {
             let message = parsed(line).unwrap_err();
             assert!(message.contains(word), "{line:?}: {message}");
         }
+    }
+
+    #[test]
+    fn a_trail_takes_labels_of_axes() {
+        let command = parsed(&["trail", "a", "P_t", "--at", "cg=aft", "--at=point=D"]);
+        let pair = |a: &str, b: &str| (a.to_owned(), b.to_owned());
+        assert_eq!(
+            command,
+            Ok(Command::Trail {
+                sheet: "a".into(),
+                symbol: "P_t".to_owned(),
+                at: vec![pair("cg", "aft"), pair("point", "D")],
+            })
+        );
     }
 
     #[test]

@@ -4,6 +4,7 @@ use crate::arguments::{Format, Run};
 use crate::files::{Loaded, load, load_all};
 use crate::mending;
 use crate::outcome::{NO_FILE, NOT_MET, Outcome, SHEET_ERROR, WELL};
+use formulas::assist::trail as steps;
 use formulas::diagnostics::{Finding, Severity};
 use formulas::report::{Report, compare as comparison, csv, json, text};
 use formulas::sheet::Sheet;
@@ -182,6 +183,24 @@ fn said(name: &str, applied: &mending::Applied) -> String {
         message,
     } = applied;
     format!("{name}:{line}:{column}: {title} ({message})\n")
+}
+
+/// Prints how a value came about.
+pub(crate) fn trail(path: &OsStr, symbol: &str, at: &[(String, String)]) -> Outcome {
+    let loaded = match load(path) {
+        Ok(loaded) => loaded,
+        Err(message) => return Outcome::failed(NO_FILE, &message),
+    };
+    let sheet = loaded.opened(&[]);
+    let report = sheet.report(&[]);
+    match sheet.trail(symbol, at) {
+        Ok(trail) => Outcome {
+            results: steps::write(&trail),
+            diagnostics: diagnostics(&loaded, &report.findings, Severity::Error),
+            status: status(&loaded, &report),
+        },
+        Err(error) => Outcome::usage(&error.to_string()),
+    }
 }
 
 /// Prints what differs between two sheets.
