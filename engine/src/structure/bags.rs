@@ -118,7 +118,7 @@ fn whole_bags(due: f64, bag: f64, bay: Option<f64>, bending: f64) -> f64 {
     };
     let bay = bay.unwrap_or(0.0);
     let error = |bags: f64| (bending + (bags * bag - due) * bay).abs();
-    if error(nearest) <= bag * bay {
+    if bay <= 0.0 || error(nearest) <= bag * bay {
         nearest
     } else if error(low + 1.0) < error(low) {
         low + 1.0
@@ -159,6 +159,7 @@ mod tests {
                 let bay = 4.5 / (count - 1) as f64;
                 let shear = plan.shear_error.iter().map(|e| e.si().abs());
                 let bending = plan.bending_error.iter().map(|e| e.si().abs());
+                assert!(plan.shear_error[0].si().abs() <= 0.5 * bag, "{count} {bag}");
                 assert!(shear.fold(0.0, f64::max) <= bag, "{count} {bag}");
                 assert!(
                     bending.fold(0.0, f64::max) <= bag * bay * 1.000_001,

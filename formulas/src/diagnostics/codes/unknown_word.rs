@@ -23,8 +23,13 @@ pub(super) fn draft(
 ) -> Draft {
     let known = listed(words, "or");
     let meant = meant(nearest.as_deref());
+    let own = argument == "rule" && found == engine::envelope::Rule::Stated.word();
     let found = quoted(found);
-    let draft = Draft::says(if argument == "rule" {
+    let draft = Draft::says(if own {
+        format!(
+            "{function} has no number for {found} factors: give them in lines of their own, or take {known}."
+        )
+    } else if argument == "rule" {
         format!(
             "The rule {found} is not coded in {function}: state the factors, or take {known}.{meant}"
         )
@@ -82,5 +87,8 @@ mod tests {
         let message = "The rule “CS 99” is not coded in pitch_rate_angle: state the factors, or take CS-VLA or 14 CFR 23.";
         let fault = word("rule", "CS 99", &["CS-VLA", "14 CFR 23"], None);
         check("f = g(\"CS 99\")", "\"CS 99\"", fault, message, &[]);
+        let message = "pitch_rate_angle has no number for “stated” factors: give them in lines of their own, or take CS-VLA.";
+        let fault = word("rule", "stated", &["CS-VLA"], None);
+        check("f = g(\"stated\")", "\"stated\"", fault, message, &[]);
     }
 }
