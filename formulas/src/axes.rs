@@ -65,9 +65,28 @@ impl AxisSet {
 
     /// The axes in their order.
     pub fn iter(self) -> impl DoubleEndedIterator<Item = AxisId> {
-        (0..64u8)
-            .filter(move |i| self.0 & (1 << i) != 0)
-            .map(AxisId)
+        Members(self.0)
+    }
+}
+
+/// The axes of a set, from either end.
+struct Members(u64);
+
+impl Iterator for Members {
+    type Item = AxisId;
+
+    fn next(&mut self) -> Option<AxisId> {
+        let first = self.0.trailing_zeros();
+        self.0 &= self.0.wrapping_sub(1);
+        (first < 64).then_some(AxisId(first as u8))
+    }
+}
+
+impl DoubleEndedIterator for Members {
+    fn next_back(&mut self) -> Option<AxisId> {
+        let last = 63u32.checked_sub(self.0.leading_zeros())?;
+        self.0 &= !(1 << last);
+        Some(AxisId(last as u8))
     }
 }
 

@@ -2,6 +2,7 @@
 
 use crate::axes::Shape;
 use crate::problem::Conditions;
+use std::rc::Rc;
 
 /// A value left out by nobody's intent: bits of a NaN, so that a column stays a plain list of numbers.
 const NONE_BITS: u64 = 0x7ff8_0000_0000_0001;
@@ -25,7 +26,7 @@ pub struct Column {
     /// Its axes.
     pub shape: Shape,
     /// One value for each condition.
-    pub values: Vec<f64>,
+    pub values: Rc<Vec<f64>>,
 }
 
 /// Everything that was worked out.

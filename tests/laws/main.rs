@@ -76,7 +76,7 @@ fn values(text: &str) -> Vec<(String, Vec<f64>)> {
                 q.symbol.clone(),
                 v.column
                     .as_ref()
-                    .map(|c| c.values.clone())
+                    .map(|c| c.values.to_vec())
                     .unwrap_or_default(),
             )
         })

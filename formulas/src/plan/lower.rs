@@ -1,11 +1,13 @@
 //! From nodes to steps.
 
-use super::{Instruction, Plan, SlotId, Solve, Step, Work};
+use super::fuse::fuse;
+use super::{Instruction, Judged, Plan, SlotId, Solve, Step, Work};
 use crate::axes::AxisSet;
 use crate::catalogue::Compute;
 use crate::program::{Axis, NodeId, Op, Program, QuantityId};
 use crate::values::{EXCLUDED, NONE};
 use std::collections::HashMap;
+use std::rc::Rc;
 
 /// Lays out the steps of a program.
 #[must_use]
@@ -27,25 +29,19 @@ pub fn plan(program: &Program) -> Plan {
     }
     lowering.quantity = None;
     lowering.solves();
-    for requirement in &program.requirements {
-        let sides = requirement.parts.iter().flat_map(|p| [p.left, p.right]);
-        for node in requirement.condition.into_iter().chain(sides) {
-            lowering.slot(node);
-        }
-    }
-    for entry in program.freebodies.iter().flat_map(|b| &b.items) {
-        lowering.slot(entry.value);
-        if let Some(at) = entry.at {
-            lowering.slot(at);
-        }
-    }
+    lowering.judged();
     for tolerance in &program.tolerances {
         if let crate::program::ToleranceWidth::Node(node) = tolerance.width {
             lowering.slot(node);
         }
     }
-    super::solves::place(&mut lowering.plan);
-    lowering.plan
+    let mut plan = lowering.plan;
+    super::solves::place(&mut plan);
+    plan.groups = fuse(&plan, 0..plan.steps.len());
+    for at in 0..plan.solves.len() {
+        plan.solves[at].groups = fuse(&plan, plan.solves[at].steps.iter().copied());
+    }
+    plan
 }
 
 struct Lowering<'a> {
@@ -120,6 +116,56 @@ impl Lowering<'_> {
         }
     }
 
+    /// What outputs ask about, and steps that look at it.
+    fn judged(&mut self) {
+        let program = self.program;
+        for (at, governing) in program.governing.iter().enumerate() {
+            let slot = self
+                .plan
+                .quantities
+                .get(governing.quantity.0 as usize)
+                .copied()
+                .flatten();
+            let axes = slot.map(|s| self.plan.slots[s.0 as usize]);
+            if let (Some(slot), Some(axes)) = (slot, axes)
+                && !governing.over.holds(axes)
+            {
+                self.judge(Judged::Governing(at), axes, vec![slot]);
+            }
+        }
+        for (at, requirement) in program.requirements.iter().enumerate() {
+            let sides = requirement.parts.iter().flat_map(|p| [p.left, p.right]);
+            let nodes: Vec<NodeId> = requirement.condition.into_iter().chain(sides).collect();
+            let slots: Vec<Option<SlotId>> = nodes.iter().map(|n| self.slot(*n)).collect();
+            if let Some(slots) = slots.into_iter().collect::<Option<Vec<_>>>()
+                && requirement.condition.is_some()
+            {
+                self.judge(Judged::Requirement(at), requirement.axes, slots);
+            }
+        }
+        for (at, body) in program.freebodies.iter().enumerate() {
+            let nodes = body
+                .items
+                .iter()
+                .flat_map(|e| std::iter::once(e.value).chain(e.at));
+            let slots: Vec<Option<SlotId>> = nodes.map(|n| self.slot(n)).collect();
+            if let Some(slots) = slots.into_iter().collect::<Option<Vec<_>>>()
+                && !body.items.is_empty()
+            {
+                self.judge(Judged::Freebody(at), body.axes, slots);
+            }
+        }
+    }
+
+    fn judge(&mut self, what: Judged, axes: AxisSet, reads: Vec<SlotId>) {
+        self.plan.steps.push(Step {
+            out: Vec::new(),
+            reads,
+            work: Work::Judge { what, axes },
+            quantity: None,
+        });
+    }
+
     fn new_slot(&mut self, axes: AxisSet) -> SlotId {
         self.plan.slots.push(axes);
         SlotId(self.plan.slots.len() as u32 - 1)
@@ -157,12 +203,16 @@ impl Lowering<'_> {
         let node = program.nodes.get(id.0 as usize)?;
         let axes = node.axes;
         match &node.op {
-            Op::Constant(value) => Some(self.step(axes, Vec::new(), Work::Values(vec![*value]))),
-            Op::None => Some(self.step(axes, Vec::new(), Work::Values(vec![NONE]))),
-            Op::Excluded => Some(self.step(axes, Vec::new(), Work::Values(vec![EXCLUDED]))),
+            Op::Constant(value) => {
+                Some(self.step(axes, Vec::new(), Work::Values(Rc::new(vec![*value]))))
+            }
+            Op::None => Some(self.step(axes, Vec::new(), Work::Values(Rc::new(vec![NONE])))),
+            Op::Excluded => {
+                Some(self.step(axes, Vec::new(), Work::Values(Rc::new(vec![EXCLUDED]))))
+            }
             Op::Labels(axis) => {
                 let texts = &program.axes.get(axis.0 as usize)?.label_texts;
-                let values = texts.iter().map(|t| f64::from(t.0)).collect();
+                let values = Rc::new(texts.iter().map(|t| f64::from(t.0)).collect());
                 Some(self.step(axes, Vec::new(), Work::Values(values)))
             }
             Op::Points(axis) => {
@@ -173,7 +223,7 @@ impl Lowering<'_> {
                 else {
                     return None;
                 };
-                Some(self.step(axes, Vec::new(), Work::Values(values.clone())))
+                Some(self.step(axes, Vec::new(), Work::Values(Rc::new(values.clone()))))
             }
             Op::Quantity(quantity) => self
                 .plan
@@ -250,7 +300,7 @@ impl Lowering<'_> {
     ) -> Option<SlotId> {
         let constants: Option<Vec<f64>> = items.iter().map(|n| self.known(*n)).collect();
         if let Some(values) = constants {
-            return Some(self.step(axes, Vec::new(), Work::Values(values)));
+            return Some(self.step(axes, Vec::new(), Work::Values(Rc::new(values))));
         }
         let reads = self.slots(items)?;
         Some(self.step(axes, reads, Work::List { axis }))

@@ -1,6 +1,8 @@
 //! The plan: the checked program as a row of steps over columns. A step works out one column (or the fields of one
 //! record) over its own axes only; what varies over fewer axes than its line is worked out once, beforehand.
 
+pub mod code;
+pub mod fuse;
 mod lower;
 mod solves;
 
@@ -8,7 +10,9 @@ use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Entry;
 use crate::program::{Along, Function, NodeId, PickMode, QuantityId, Reduction};
 use crate::syntax::BinaryOp;
+use fuse::Group;
 use std::collections::HashMap;
+use std::rc::Rc;
 
 pub use lower::plan;
 
@@ -29,6 +33,8 @@ pub struct Plan {
     pub nodes: HashMap<NodeId, SlotId>,
     /// How each statement of `Program::unknowns` is solved.
     pub solves: Vec<Solve>,
+    /// The steps put together, in the order in which they are run.
+    pub groups: Vec<Group>,
     /// The length of every axis.
     pub lengths: Vec<usize>,
 }
@@ -45,6 +51,8 @@ pub struct Solve {
     pub sides: Vec<(SlotId, SlotId)>,
     /// The steps between the unknown and the sides, as indices into the plan's steps.
     pub steps: Vec<usize>,
+    /// The same steps put together.
+    pub groups: Vec<Group>,
     /// Whether such a step looks along an axis over which the unknown varies.
     pub coupled: bool,
 }
@@ -67,7 +75,7 @@ pub struct Step {
 #[allow(missing_docs)]
 pub enum Work {
     /// Values that are known already.
-    Values(Vec<f64>),
+    Values(Rc<Vec<f64>>),
     /// Condition by condition, in blocks.
     Kernel(Vec<Instruction>),
     /// One read for each label of the axis.
@@ -95,12 +103,37 @@ pub enum Work {
     },
     /// An `unknown`, by its index in [`Plan::solves`]: bounds, and all that its steps read from elsewhere.
     Solve(usize),
+    /// Looks at what an output asks about, over these axes.
+    Judge {
+        what: Judged,
+        axes: AxisSet,
+    },
     /// A catalogue function that gives a record, or takes whole lines. For each argument the read that holds it.
     Call {
         entry: &'static Entry,
         arguments: Vec<Option<usize>>,
         over: Option<AxisId>,
     },
+}
+
+/// An output that is judged condition by condition, by its index in the program.
+#[derive(Clone, Copy, Debug)]
+#[allow(missing_docs)]
+pub enum Judged {
+    Governing(usize),
+    Requirement(usize),
+    Freebody(usize),
+}
+
+impl Plan {
+    /// How many conditions a set of axes has.
+    #[must_use]
+    pub fn conditions(&self, axes: AxisSet) -> f64 {
+        let lengths = axes
+            .iter()
+            .map(|a| self.lengths.get(a.0 as usize).copied().unwrap_or(1));
+        lengths.map(|n| n as f64).product()
+    }
 }
 
 /// One instruction of a kernel: it takes its operands from a stack of blocks and leaves its result there.

@@ -1,6 +1,7 @@
 //! Broadcasting: how a column of fewer axes is read along the conditions of a line.
 
-use crate::axes::Shape;
+use super::wide::Source;
+use crate::axes::{AXES_MOST, Shape};
 
 /// Reads a column along the conditions of a larger shape, block by block.
 pub(super) struct Feed<'a> {
@@ -52,6 +53,41 @@ impl<'a> Feed<'a> {
         self.at(offset)
     }
 
+    /// The values for `n` conditions from `start` on, without a copy where they stand together.
+    pub(super) fn block<'s>(
+        &'s self,
+        start: usize,
+        n: usize,
+        room: &'s mut Vec<f64>,
+    ) -> Source<'s> {
+        let Some((&(inner, stride), outer)) = self.runs.split_last() else {
+            return Source::Value(self.at(0));
+        };
+        let along = start % inner;
+        if along + n <= inner && stride <= 1 {
+            let mut rest = start / inner;
+            let mut offset = along * stride;
+            for (length, stride) in outer.iter().rev() {
+                offset += rest % length * stride;
+                rest /= length;
+            }
+            if stride == 0 {
+                return Source::Value(self.at(offset));
+            }
+            if let Some(values) = self.values.get(offset..offset + n) {
+                return Source::Block(values);
+            }
+        }
+        room.resize(n, 0.0);
+        self.fill(start, room);
+        Source::Block(room)
+    }
+
+    /// Conditions that are read from one stretch of the column, or are all the same.
+    pub(super) fn stretch(&self) -> usize {
+        self.runs.last().map_or(usize::MAX, |(length, _)| *length)
+    }
+
     /// The values for the conditions from `start` on.
     pub(super) fn fill(&self, start: usize, out: &mut [f64]) {
         if let Some(all) = self.straight()
@@ -60,34 +96,57 @@ impl<'a> Feed<'a> {
             out.copy_from_slice(part);
             return;
         }
-        let Some(&(inner, stride)) = self.runs.last() else {
+        let Some((&(inner, stride), outer)) = self.runs.split_last() else {
             out.fill(self.at(0));
             return;
         };
+        // Where the first condition stands along each axis; from there on the axes are stepped, not divided out.
+        let mut indices = [0usize; AXES_MOST];
+        let mut rest = start;
+        let along = rest % inner;
+        rest /= inner;
+        let mut offset = 0;
+        for (at, (length, stride)) in outer.iter().enumerate().rev() {
+            indices[at] = rest % length;
+            offset += indices[at] * stride;
+            rest /= length;
+        }
+        let mut along = along;
         let mut done = 0;
         while done < out.len() {
-            let condition = start + done;
-            let along = condition % inner;
             let length = (inner - along).min(out.len() - done);
-            let mut offset = along * stride;
-            let mut rest = condition / inner;
-            for (length, stride) in self.runs[..self.runs.len() - 1].iter().rev() {
-                offset += rest % length * stride;
-                rest /= length;
-            }
-            let part = &mut out[done..done + length];
-            match stride {
-                0 => part.fill(self.at(offset)),
-                1 => match self.values.get(offset..offset + length) {
-                    Some(values) => part.copy_from_slice(values),
-                    None => part.fill(f64::NAN),
-                },
-                _ => part
-                    .iter_mut()
-                    .enumerate()
-                    .for_each(|(i, v)| *v = self.at(offset + i * stride)),
-            }
+            self.run(
+                offset + along * stride,
+                stride,
+                &mut out[done..done + length],
+            );
             done += length;
+            along = 0;
+            for (at, (length, stride)) in outer.iter().enumerate().rev() {
+                indices[at] += 1;
+                offset += stride;
+                if indices[at] < *length {
+                    break;
+                }
+                offset -= stride * length;
+                indices[at] = 0;
+            }
+        }
+    }
+
+    /// Values from an offset on, so far apart.
+    #[inline(always)]
+    fn run(&self, offset: usize, stride: usize, part: &mut [f64]) {
+        match stride {
+            0 => part.fill(self.at(offset)),
+            1 => match self.values.get(offset..offset + part.len()) {
+                Some(values) => part.copy_from_slice(values),
+                None => part.fill(f64::NAN),
+            },
+            _ => part
+                .iter_mut()
+                .enumerate()
+                .for_each(|(i, v)| *v = self.at(offset + i * stride)),
         }
     }
 }

@@ -1,20 +1,19 @@
-//! The block machine: a line condition by condition, one instruction at a time over blocks that stay in the cache.
+//! A line value by value: what a block whose result holds anything but finite numbers is worked out with. Every
+//! operation knows what a missing operand makes of it, and a value lost here carries its cause.
 
-use super::feed::Feed;
 use super::missing::{lost, of_operands};
 use super::scalar;
+use super::wide::Source;
 use crate::catalogue::{Compute, Entry};
 use crate::plan::Instruction;
 use crate::problem::Cause;
 use crate::syntax::BinaryOp;
 
-/// Conditions in a block: long enough to pay for the instruction, short enough for the first-level cache.
-const BLOCK: usize = 512;
-
 type Block = Vec<f64>;
 
 /// The stack of blocks.
-struct Stack {
+#[derive(Default)]
+pub(super) struct Stack {
     blocks: Vec<Block>,
     top: usize,
     /// Where a result is written before it takes the place of its first operand.
@@ -22,51 +21,45 @@ struct Stack {
     length: usize,
 }
 
-/// Works out a kernel over `out.len()` conditions.
-pub(super) fn run(code: &[Instruction], feeds: &[Feed<'_>], texts: &[String], out: &mut [f64]) {
-    let size = out.len().min(BLOCK);
-    let mut stack = Stack {
-        blocks: Vec::new(),
-        top: 0,
-        scratch: vec![0.0; size],
-        length: size,
-    };
-    let mut start = 0;
-    while start < out.len() {
-        let length = (out.len() - start).min(BLOCK);
-        stack.length = length;
-        stack.top = 0;
-        for instruction in code {
-            stack.execute(instruction, feeds, texts, start);
-        }
-        if let Some(result) = stack.blocks.first() {
-            out[start..start + length].copy_from_slice(&result[..length]);
-        }
-        start += length;
+/// Works out a kernel over one block.
+pub(super) fn run(
+    stack: &mut Stack,
+    code: &[Instruction],
+    reads: &[Source<'_>],
+    texts: &[String],
+    out: &mut [f64],
+) {
+    stack.length = out.len();
+    stack.top = 0;
+    stack.scratch.resize(out.len(), 0.0);
+    for instruction in code {
+        stack.execute(instruction, reads, texts);
+    }
+    if let Some(result) = stack.blocks.first() {
+        out.copy_from_slice(&result[..out.len()]);
     }
 }
 
 impl Stack {
     fn push(&mut self) -> &mut [f64] {
         if self.top == self.blocks.len() {
-            self.blocks.push(vec![0.0; self.scratch.len()]);
+            self.blocks.push(Vec::new());
         }
-        self.top += 1;
         let length = self.length;
-        &mut self.blocks[self.top - 1][..length]
+        let block = &mut self.blocks[self.top];
+        block.resize(length, 0.0);
+        self.top += 1;
+        &mut block[..length]
     }
 
-    fn execute(
-        &mut self,
-        instruction: &Instruction,
-        feeds: &[Feed<'_>],
-        texts: &[String],
-        start: usize,
-    ) {
+    fn execute(&mut self, instruction: &Instruction, reads: &[Source<'_>], texts: &[String]) {
         match instruction {
             Instruction::Load(read) => {
-                let Some(feed) = feeds.get(*read) else { return };
-                feed.fill(start, self.push());
+                let Some(read) = reads.get(*read) else { return };
+                match read {
+                    Source::Block(values) => self.push().copy_from_slice(values),
+                    Source::Value(value) => self.push().fill(*value),
+                }
             }
             Instruction::Constant(value) => self.push().fill(*value),
             Instruction::Negate => self.each(1, |v| 0.0 - v[0], Cause::Overflow),

@@ -1,9 +1,11 @@
 //! The run: steps are worked out in order, each over its own axes only.
 
 mod along;
+mod block;
 mod feed;
 mod kernel;
 mod lines;
+mod look;
 pub mod missing;
 mod outputs;
 mod overlay;
@@ -12,23 +14,28 @@ mod reduce;
 pub(crate) mod scalar;
 mod solve;
 mod tolerance;
+mod wide;
 
 use crate::axes::{AxisSet, Shape};
 use crate::names::located;
+use crate::plan::fuse::{Group, STORED_MOST};
 use crate::plan::{Plan, SlotId, Step, Work};
-use crate::problem::{Cause, Conditions, Fault, Located};
+use crate::problem::{Conditions, Fault, Located};
 use crate::program::Program;
 use crate::span::Span;
-use crate::values::{Column, NONE, QuantityValues, Summary, Values, is_excluded};
+use crate::values::{
+    Column, NONE, QuantityValues, RequirementValues, Summary, Values, is_excluded,
+};
+use block::Ending;
 use feed::Feed;
+use reduce::Reducer;
+use std::collections::HashMap;
 use std::rc::Rc;
 
 /// Most operations in a recalculation: counted, not timed, so that every machine stops at the same place.
 pub const OPERATIONS_MOST: f64 = 2e10;
-/// Numbers kept at a time before columns that are no longer read are let go.
-const KEPT_MOST: usize = 48 << 20;
 /// Conditions up to which the column of a quantity is kept for good.
-pub const COLUMN_KEPT_MOST: usize = 65_536;
+pub const COLUMN_KEPT_MOST: usize = STORED_MOST as usize;
 
 /// Limits that a host may lower.
 #[derive(Clone, Copy, PartialEq, Debug)]
@@ -54,10 +61,34 @@ pub(crate) struct Machine<'a> {
     limits: Limits,
     operations: f64,
     stopped: bool,
-    /// Columns worked out anew under a change in hand.
+    /// Columns worked out anew under the change in hand.
     overlaid: Vec<bool>,
-    /// For each slot the last step that reads it.
-    last_read: Vec<usize>,
+    /// Whether the run in hand is a trial, whose results are not those of the sheet.
+    trying: bool,
+    scratch: block::Scratch,
+    found: Found,
+    /// The quantities of each column.
+    lines: Vec<Vec<u32>>,
+    /// Groups of steps by the columns whose change makes them run again.
+    again: HashMap<Vec<SlotId>, Rc<Again>>,
+}
+
+/// What runs again when columns change.
+struct Again {
+    groups: Vec<Group>,
+    /// The columns that are made anew.
+    out: Vec<SlotId>,
+    /// Columns read that stay as they are.
+    reads: Vec<SlotId>,
+}
+
+/// What was found so far.
+#[derive(Default)]
+struct Found {
+    quantities: Vec<QuantityValues>,
+    groups: Vec<Option<Vec<Summary>>>,
+    requirements: Vec<RequirementValues>,
+    freebodies: Vec<Option<look::FreebodyLook>>,
 }
 
 /// Runs a plan from the start.
@@ -68,116 +99,97 @@ pub fn run(
     limits: Limits,
     asked: &[String],
 ) -> (Values, Vec<Located>) {
-    let mut machine = Machine {
-        program,
-        plan,
-        columns: vec![None; plan.slots.len()],
-        problems: Vec::new(),
-        limits,
-        operations: 0.0,
-        stopped: false,
-        overlaid: Vec::new(),
-        last_read: last_reads(plan),
-    };
+    let mut machine = Machine::new(program, plan, limits);
+    machine.run_all(asked);
     let mut values = Values {
-        quantities: program
-            .quantities
-            .iter()
-            .map(|q| unknown(q.axes, plan))
-            .collect(),
+        quantities: std::mem::take(&mut machine.found.quantities),
         ..Values::default()
     };
-    machine.run_all(&mut values, asked);
     machine.finish(&mut values);
     (values, machine.problems)
 }
 
-fn unknown(axes: AxisSet, plan: &Plan) -> QuantityValues {
-    QuantityValues {
-        shape: Shape::of(axes, &plan.lengths),
-        ..QuantityValues::default()
+impl<'a> Machine<'a> {
+    fn new(program: &'a Program, plan: &'a Plan, limits: Limits) -> Self {
+        let mut lines = vec![Vec::new(); plan.slots.len()];
+        for (quantity, slot) in plan.quantities.iter().enumerate() {
+            if let Some(slot) = slot {
+                lines[slot.0 as usize].push(quantity as u32);
+            }
+        }
+        let unknown = |axes: AxisSet| QuantityValues {
+            shape: Shape::of(axes, &plan.lengths),
+            ..QuantityValues::default()
+        };
+        let not_judged = |r: &crate::program::Requirement| RequirementValues {
+            shape: Shape::of(r.axes, &plan.lengths),
+            ..RequirementValues::default()
+        };
+        Machine {
+            program,
+            plan,
+            columns: vec![None; plan.slots.len()],
+            problems: Vec::new(),
+            limits,
+            operations: 0.0,
+            stopped: false,
+            overlaid: Vec::new(),
+            trying: false,
+            scratch: block::Scratch::default(),
+            found: Found {
+                quantities: program.quantities.iter().map(|q| unknown(q.axes)).collect(),
+                groups: vec![None; program.governing.len()],
+                requirements: program.requirements.iter().map(not_judged).collect(),
+                freebodies: program.freebodies.iter().map(|_| None).collect(),
+            },
+            lines,
+            again: HashMap::new(),
+        }
     }
-}
 
-/// The last step that reads each slot; outputs read at the very end.
-fn last_reads(plan: &Plan) -> Vec<usize> {
-    let mut last = vec![0; plan.slots.len()];
-    for (at, step) in plan.steps.iter().enumerate() {
-        step.reads
-            .iter()
-            .chain(&step.out)
-            .for_each(|slot| last[slot.0 as usize] = at);
+    fn run_all(&mut self, asked: &[String]) {
+        let plan = self.plan;
+        let wanted = self.wanted(asked);
+        let groups = &plan.groups;
+        let (read, last) = reads_of(plan, groups);
+        let stored = |slot: SlotId| {
+            let at = slot.0 as usize;
+            read[at] || wanted[at] || plan.conditions(plan.slots[at]) <= STORED_MOST
+        };
+        for (at, group) in groups.iter().enumerate() {
+            if self.stopped {
+                break;
+            }
+            self.run_group(group, &stored);
+            for slot in &last[at] {
+                let large = plan.conditions(plan.slots[slot.0 as usize]) > STORED_MOST;
+                if large && !wanted[slot.0 as usize] {
+                    self.columns[slot.0 as usize] = None;
+                }
+            }
+        }
     }
-    last
-}
 
-impl Machine<'_> {
+    /// Columns that are kept however long they are: those asked for, and those that outputs read afterwards.
+    fn wanted(&self, asked: &[String]) -> Vec<bool> {
+        let mut wanted = vec![false; self.plan.slots.len()];
+        for (quantity, slot) in self.program.quantities.iter().zip(&self.plan.quantities) {
+            let record = quantity.symbol.split('.').next().unwrap_or("");
+            let named = asked.iter().any(|s| *s == quantity.symbol || s == record);
+            if let Some(slot) = slot.filter(|_| named) {
+                wanted[slot.0 as usize] = true;
+            }
+        }
+        wanted
+    }
+
     pub(crate) fn shape(&self, slot: SlotId) -> Shape {
-        let axes = self
-            .plan
-            .slots
-            .get(slot.0 as usize)
-            .copied()
-            .unwrap_or(AxisSet::NONE);
-        Shape::of(axes, &self.plan.lengths)
+        let axes = self.plan.slots.get(slot.0 as usize).copied();
+        Shape::of(axes.unwrap_or(AxisSet::NONE), &self.plan.lengths)
     }
 
     pub(crate) fn column(&self, slot: SlotId) -> Option<&Rc<Vec<f64>>> {
         self.columns.get(slot.0 as usize)?.as_ref()
-    }
-
-    fn run_all(&mut self, values: &mut Values, asked: &[String]) {
-        let plan = self.plan;
-        let mut waiting = quantities_by_step(plan);
-        let needed_at_end = self.needed_at_end();
-        let mut kept = 0usize;
-        for (at, step) in plan.steps.iter().enumerate() {
-            if !self.stopped {
-                self.run_step(step);
-                kept += step
-                    .out
-                    .iter()
-                    .map(|s| self.column(*s).map_or(0, |c| c.len()))
-                    .sum::<usize>();
-            }
-            for quantity in waiting.get_mut(at).map(std::mem::take).unwrap_or_default() {
-                self.take_quantity(quantity, values, asked);
-            }
-            if kept > KEPT_MOST {
-                kept = self.let_go(at, &needed_at_end);
-            }
-        }
-    }
-
-    /// Slots that governing lists, requirements and free bodies read after all steps.
-    fn needed_at_end(&self) -> Vec<bool> {
-        let mut needed = vec![false; self.plan.slots.len()];
-        let mut need = |slot: Option<&SlotId>| {
-            if let Some(slot) = slot {
-                needed[slot.0 as usize] = true;
-            }
-        };
-        for governing in &self.program.governing {
-            need(
-                self.plan
-                    .quantities
-                    .get(governing.quantity.0 as usize)
-                    .and_then(Option::as_ref),
-            );
-        }
-        for requirement in &self.program.requirements {
-            let sides = requirement.parts.iter().flat_map(|p| [p.left, p.right]);
-            requirement
-                .condition
-                .into_iter()
-                .chain(sides)
-                .for_each(|n| need(self.plan.nodes.get(&n)));
-        }
-        for entry in self.program.freebodies.iter().flat_map(|b| &b.items) {
-            need(self.slot_of(entry.value).as_ref());
-            need(entry.at.and_then(|n| self.slot_of(n)).as_ref());
-        }
-        needed
     }
 
     /// The slot of a node that an output reads.
@@ -185,76 +197,104 @@ impl Machine<'_> {
         self.plan.nodes.get(&node).copied()
     }
 
-    fn let_go(&mut self, at: usize, needed: &[bool]) -> usize {
-        let mut kept = 0;
-        for (slot, column) in self.columns.iter_mut().enumerate() {
-            let read_later = self.last_read[slot] > at || needed[slot];
-            match column {
-                Some(values) if !read_later && values.len() > COLUMN_KEPT_MOST => *column = None,
-                Some(values) => kept += values.len(),
-                None => {}
-            }
-        }
-        kept
+    /// Whether a column is the result of a line of the sheet.
+    fn is_line(&self, slot: SlotId) -> bool {
+        !self.trying && !self.lines[slot.0 as usize].is_empty()
     }
 
-    /// Takes over the values of a quantity whose step is done: counts, extremes, what was lost in its line.
-    fn take_quantity(&mut self, at: usize, values: &mut Values, asked: &[String]) {
-        let Some(slot) = self.plan.quantities.get(at).copied().flatten() else {
-            return;
-        };
-        let shape = self.shape(slot);
-        let quantity = &self.program.quantities[at];
-        if let Some(column) = self
-            .columns
-            .get_mut(slot.0 as usize)
-            .and_then(Option::as_mut)
-        {
-            let lost = settle_losses(column);
-            for (cause, places) in lost {
-                let conditions = conditions(self.program, &shape, places.0, &places.1);
+    fn run_group(&mut self, group: &Group, stored: &dyn Fn(SlotId) -> bool) -> Option<()> {
+        match group {
+            Group::Fused(fused) => self.run_fused(fused, stored),
+            Group::Single(step) => self.run_single(&self.plan.steps[*step]),
+        }
+    }
+
+    /// Runs a step over whole columns; where it cannot be run its columns stay unknown.
+    fn run_single(&mut self, step: &Step) -> Option<()> {
+        let columns = self.evaluate(step)?;
+        for (slot, column) in step.out.iter().zip(columns) {
+            self.finish_column(*slot, column);
+        }
+        Some(())
+    }
+
+    /// Takes over a whole column: counts, extremes, what was lost in its line.
+    fn finish_column(&mut self, slot: SlotId, mut column: Rc<Vec<f64>>) {
+        if self.is_line(slot) {
+            let mut ending = Ending::new(slot, true);
+            if column.iter().all(|v| v.is_finite()) {
+                ending.summary = summary_of(column.iter().copied().enumerate());
+            } else {
+                ending.take(Rc::<Vec<f64>>::make_mut(&mut column).as_mut_slice(), false);
+            }
+            self.finish_line(&ending, Some(&column));
+        }
+        self.columns[slot.0 as usize] = Some(column);
+    }
+
+    fn finish_small(&mut self, slot: SlotId, column: Vec<f64>) {
+        self.finish_column(slot, Rc::new(column));
+    }
+
+    /// Takes over what a group has made of a step.
+    fn finish_ending(&mut self, mut ending: Ending) {
+        let column = ending.column.take().map(Rc::new);
+        if self.is_line(ending.slot) {
+            self.finish_line(&ending, column.as_ref());
+        }
+        if column.is_some() {
+            self.columns[ending.slot.0 as usize] = column;
+        }
+    }
+
+    /// The values of every quantity that a column belongs to; what was lost is told once.
+    fn finish_line(&mut self, ending: &Ending, column: Option<&Rc<Vec<f64>>>) {
+        let shape = self.shape(ending.slot);
+        let lines = std::mem::take(&mut self.lines[ending.slot.0 as usize]);
+        if let Some(first) = lines.first() {
+            let quantity = &self.program.quantities[*first as usize];
+            for (cause, (count, first)) in &ending.losses {
                 let fault = Fault::WithoutValue {
                     symbol: quantity.symbol.clone(),
-                    cause,
-                    conditions,
+                    cause: *cause,
+                    conditions: conditions(self.program, &shape, *count, first),
                 };
                 self.problems
                     .push(located(quantity.statement, quantity.span, fault));
             }
         }
-        let Some(column) = self.columns.get(slot.0 as usize).and_then(Option::as_ref) else {
-            return;
-        };
-        let record = quantity.symbol.split('.').next().unwrap_or("");
-        let wanted = asked.iter().any(|s| *s == quantity.symbol || s == record);
-        let keep = column.len() <= COLUMN_KEPT_MOST || wanted;
-        let Some(result) = values.quantities.get_mut(at) else {
-            return;
-        };
-        result.known = true;
-        result.summary = summary(column);
-        result.column = keep.then(|| Column {
-            shape: shape.clone(),
-            values: column.as_ref().clone(),
-        });
-        result.shape = shape;
-    }
-
-    /// Runs one step; where it cannot be run its columns stay unknown.
-    pub(crate) fn run_step(&mut self, step: &Step) {
-        let Some(columns) = self.evaluate(step) else {
-            return;
-        };
-        for (slot, column) in step.out.iter().zip(columns) {
-            self.columns[slot.0 as usize] = Some(Rc::new(column));
+        for at in &lines {
+            let Some(result) = self.found.quantities.get_mut(*at as usize) else {
+                continue;
+            };
+            result.known = true;
+            result.summary = ending.summary;
+            result.column = column.map(|values| Column {
+                shape: shape.clone(),
+                values: values.clone(),
+            });
         }
+        self.lines[ending.slot.0 as usize] = lines;
     }
 
-    /// The columns of a step.
-    pub(crate) fn evaluate(&mut self, step: &Step) -> Option<Vec<Vec<f64>>> {
+    /// The columns of a step that takes whole columns.
+    fn evaluate(&mut self, step: &Step) -> Option<Vec<Rc<Vec<f64>>>> {
+        if let Work::Values(values) = &step.work {
+            return Some(vec![values.clone()]);
+        }
         let out = *step.out.first()?;
         let shape = self.shape(out);
-        self.count(step, shape.conditions_f64())?;
+        let read = step.reads.iter().map(|s| self.shape(*s).conditions_f64());
+        let largest = read.fold(shape.conditions_f64(), f64::max);
+        self.count(&[step], 8.0 * largest)?;
+        let columns = match &step.work {
+            Work::Solve(at) => self.solve(*at)?,
+            _ => self.over_columns(step, &shape)?,
+        };
+        Some(columns.into_iter().map(Rc::new).collect())
+    }
+
+    fn over_columns(&mut self, step: &Step, shape: &Shape) -> Option<Vec<Vec<f64>>> {
         let reads: Option<Vec<Rc<Vec<f64>>>> = step
             .reads
             .iter()
@@ -267,13 +307,6 @@ impl Machine<'_> {
             shapes: &shapes,
         };
         match &step.work {
-            Work::Values(values) => Some(vec![values.clone()]),
-            Work::Solve(at) => self.solve(*at),
-            Work::Kernel(code) => {
-                let mut column = self.room(step, shape.conditions())?;
-                kernel::run(code, &read.along(&shape), &self.program.texts, &mut column);
-                Some(vec![column])
-            }
             Work::Call {
                 entry,
                 arguments,
@@ -282,7 +315,7 @@ impl Machine<'_> {
                 let texts = &self.program.texts;
                 Some(match over {
                     None => {
-                        let feeds = read.along(&shape);
+                        let feeds = read.along(shape);
                         lines::each(entry, arguments, &feeds, shape.conditions(), texts)
                     }
                     Some(axis) => {
@@ -292,7 +325,7 @@ impl Machine<'_> {
                 })
             }
             work => self
-                .across(work, step, &read, &shape)
+                .across(work, step, &read, shape)
                 .map(|column| vec![column]),
         }
     }
@@ -313,7 +346,11 @@ impl Machine<'_> {
             Work::Grid { axes: keys, items } => {
                 list(&read.along(shape), shape, keys, Some(items), lengths)
             }
-            Work::Reduce { how, over } => reduce::run(*how, base?, base_shape?, *over, shape, axes),
+            Work::Reduce { how, over } => {
+                let mut reducer = Reducer::new(*how, base_shape?, *over, shape, axes);
+                reducer.take(base?.iter().copied());
+                reducer.finish()
+            }
             Work::Pick { selections } => {
                 let positions = read.along(shape).into_iter().skip(1).collect();
                 pick::run(base?, base_shape?, selections, positions, shape, axes)
@@ -336,46 +373,19 @@ impl Machine<'_> {
         Shape::of(all.with(AxisSet::of(axis)), &self.plan.lengths)
     }
 
-    /// Counts the operations of a step, and stops the run where there are too many.
-    fn count(&mut self, step: &Step, conditions: f64) -> Option<()> {
-        let each = match &step.work {
-            Work::Kernel(code) => code.len() as f64,
-            Work::Values(_) => 0.0,
-            _ => 8.0,
-        };
-        let read = step
-            .reads
-            .iter()
-            .map(|s| self.shape(*s).conditions_f64())
-            .fold(conditions, f64::max);
-        self.operations += each * read;
+    /// Counts the operations of steps, and stops the run where there are too many.
+    fn count(&mut self, steps: &[&Step], operations: f64) -> Option<()> {
+        self.operations += operations;
         if self.operations > self.limits.operations && !self.stopped {
             self.stopped = true;
             let fault = Fault::OperationLimit {
                 limit: self.limits.operations,
             };
-            self.report_at_step(step, fault);
+            if let Some(step) = steps.first() {
+                self.report_at_step(step, fault);
+            }
         }
         (!self.stopped).then_some(())
-    }
-
-    /// Memory for a column; where there is none the line says so.
-    fn room(&mut self, step: &Step, conditions: usize) -> Option<Vec<f64>> {
-        let mut column = Vec::new();
-        if column.try_reserve_exact(conditions).is_err() {
-            let symbol = step
-                .quantity
-                .map(|q| self.program.quantities[q.0 as usize].symbol.clone());
-            self.report_at_step(
-                step,
-                Fault::MemoryLimit {
-                    symbol: symbol.unwrap_or_default(),
-                },
-            );
-            return None;
-        }
-        column.resize(conditions, 0.0);
-        Some(column)
     }
 
     fn report_at_step(&mut self, step: &Step, fault: Fault) {
@@ -402,21 +412,21 @@ impl Reads<'_> {
     }
 }
 
-/// The quantities whose column is done after each step.
-fn quantities_by_step(plan: &Plan) -> Vec<Vec<usize>> {
-    let mut step_of_slot = vec![0; plan.slots.len()];
-    for (at, step) in plan.steps.iter().enumerate() {
-        step.out
-            .iter()
-            .for_each(|s| step_of_slot[s.0 as usize] = at);
-    }
-    let mut by_step = vec![Vec::new(); plan.steps.len()];
-    for (quantity, slot) in plan.quantities.iter().enumerate() {
-        if let Some(slot) = slot {
-            by_step[step_of_slot[slot.0 as usize]].push(quantity);
+/// Which columns are read by another group than the one that makes them, and for each group those it reads last.
+fn reads_of(plan: &Plan, groups: &[Group]) -> (Vec<bool>, Vec<Vec<SlotId>>) {
+    let mut last: Vec<Option<usize>> = vec![None; plan.slots.len()];
+    for (at, group) in groups.iter().enumerate() {
+        for slot in group.reads(plan) {
+            last[slot.0 as usize] = Some(at);
         }
     }
-    by_step
+    let mut by_group = vec![Vec::new(); groups.len()];
+    for (slot, group) in last.iter().enumerate() {
+        if let Some(group) = group {
+            by_group[*group].push(SlotId(slot as u32));
+        }
+    }
+    (last.iter().map(Option::is_some).collect(), by_group)
 }
 
 /// Each condition takes the value of the read that its labels choose.
@@ -452,37 +462,6 @@ fn list(
         .collect()
 }
 
-/// How often and in which first five conditions values were lost, by cause; their marks become plain `none`.
-fn settle_losses(column: &mut Rc<Vec<f64>>) -> Vec<(Cause, (u64, Vec<usize>))> {
-    let mut lost: Vec<(Cause, (u64, Vec<usize>))> = Vec::new();
-    for (at, value) in column.iter().enumerate().filter(|(_, v)| v.is_nan()) {
-        let Some(cause) = missing::cause(*value) else {
-            continue;
-        };
-        let entry = match lost.iter_mut().find(|(c, _)| *c == cause) {
-            Some(entry) => entry,
-            None => {
-                lost.push((cause, (0, Vec::new())));
-                let last = lost.len() - 1;
-                &mut lost[last]
-            }
-        };
-        entry.1.0 += 1;
-        if entry.1.1.len() < 5 {
-            entry.1.1.push(at);
-        }
-    }
-    if !lost.is_empty() {
-        for value in Rc::make_mut(column)
-            .iter_mut()
-            .filter(|v| v.is_nan() && !is_excluded(**v))
-        {
-            *value = NONE;
-        }
-    }
-    lost
-}
-
 /// Conditions by their numbers, as pairs of axis and label.
 pub(crate) fn conditions(
     program: &Program,
@@ -508,31 +487,28 @@ pub(crate) fn labels(program: &Program, shape: &Shape, condition: usize) -> Vec<
         .collect()
 }
 
-/// Counts and extremes of a column.
-#[must_use]
-pub(crate) fn summary(values: &[f64]) -> Summary {
-    summary_of(values.iter().copied().enumerate())
-}
-
 /// Counts and extremes of numbered values; the first of equals stands.
 pub(crate) fn summary_of(values: impl Iterator<Item = (usize, f64)>) -> Summary {
     let mut summary = Summary::default();
-    for (condition, value) in values {
-        if value.is_nan() {
-            if is_excluded(value) {
-                summary.excluded += 1;
-            } else {
-                summary.without_value += 1;
-            }
-            continue;
-        }
-        let extreme = crate::values::Extreme { value, condition };
-        if summary.largest.is_none_or(|l| value > l.value) {
-            summary.largest = Some(extreme);
-        }
-        if summary.smallest.is_none_or(|s| value < s.value) {
-            summary.smallest = Some(extreme);
-        }
-    }
+    values.for_each(|(condition, value)| take_value(&mut summary, condition, value));
     summary
+}
+
+/// Takes one more value.
+fn take_value(summary: &mut Summary, condition: usize, value: f64) {
+    if value.is_nan() {
+        if is_excluded(value) {
+            summary.excluded += 1;
+        } else {
+            summary.without_value += 1;
+        }
+        return;
+    }
+    let extreme = crate::values::Extreme { value, condition };
+    if summary.largest.is_none_or(|l| value > l.value) {
+        summary.largest = Some(extreme);
+    }
+    if summary.smallest.is_none_or(|s| value < s.value) {
+        summary.smallest = Some(extreme);
+    }
 }

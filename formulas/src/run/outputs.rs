@@ -1,23 +1,16 @@
 //! Governing conditions, requirements, free bodies.
 
 use super::feed::Feed;
-use super::{Machine, conditions, scalar, summary_of};
+use super::look::{CLOSE, Look, Sums, ratio, sums};
+use super::{Machine, conditions};
 use crate::axes::Shape;
 use crate::names::located;
 use crate::plan::SlotId;
 use crate::problem::Fault;
-use crate::program::{
-    EntryKind, Freebody, FreebodyEntry, Governing, NodeId, QuantityId, Requirement,
-};
+use crate::program::{EntryKind, Freebody, FreebodyEntry, NodeId, QuantityId};
 use crate::span::Span;
-use crate::syntax::BinaryOp;
-use crate::values::{
-    FreebodyValues, GoverningValues, RequirementValues, Values, WorstCondition, is_excluded,
-};
+use crate::values::{FreebodyValues, GoverningValues, Values};
 use std::rc::Rc;
-
-/// A requirement `=` is met within this part of the larger side, and a free body closes within it.
-const CLOSE: f64 = 1e-9;
 
 /// A column and its shape, held while outputs are worked out.
 pub(super) struct Held {
@@ -35,18 +28,13 @@ impl Machine<'_> {
     /// Everything that is asked of the values, once they are there.
     pub(super) fn finish(&mut self, values: &mut Values) {
         let program = self.program;
-        values.governing = program
-            .governing
-            .iter()
-            .map(|g| self.governing(g))
-            .collect();
-        values.requirements = program
-            .requirements
-            .iter()
-            .map(|r| self.requirement(r))
-            .collect();
-        for body in &program.freebodies {
-            let result = self.freebody(body);
+        for at in 0..program.governing.len() {
+            let result = self.governing(at, values);
+            values.governing.push(result);
+        }
+        values.requirements = std::mem::take(&mut self.found.requirements);
+        for at in 0..program.freebodies.len() {
+            let result = self.freebody(at);
             values.freebodies.push(result);
         }
         self.tolerances(values);
@@ -63,136 +51,47 @@ impl Machine<'_> {
         })
     }
 
-    fn governing(&self, governing: &Governing) -> GoverningValues {
-        let slot = self
-            .plan
-            .quantities
-            .get(governing.quantity.0 as usize)
-            .copied()
-            .flatten();
-        let Some(held) = slot.and_then(|s| self.held_slot(s)) else {
+    /// Takes over what a look has found.
+    pub(super) fn finish_look(&mut self, look: Look<'_>) {
+        match look {
+            Look::Reduce(slot, reducer) => self.finish_small(slot, reducer.finish()),
+            Look::Groups(at, groups) => self.found.groups[at] = Some(groups.summaries),
+            Look::Requirement(at, look) => self.found.requirements[at] = look.finish(),
+            Look::Freebody(at, look) => self.found.freebodies[at] = Some(look),
+        }
+    }
+
+    fn governing(&mut self, at: usize, values: &Values) -> GoverningValues {
+        let governing = &self.program.governing[at];
+        let index = governing.quantity.0 as usize;
+        let quantity = &self.program.quantities[index];
+        let Some(found) = values.quantities.get(index).filter(|q| q.known) else {
             return GoverningValues::default();
         };
-        let all = summary_of(held.values.iter().copied().enumerate());
-        let axes = self.program.quantities[governing.quantity.0 as usize]
-            .axes
-            .without(governing.over);
-        let group_shape = Shape::of(axes, &self.plan.lengths);
-        let strides = held.shape.strides_of(&group_shape);
-        let mut members: Vec<Vec<usize>> = vec![Vec::new(); group_shape.conditions()];
-        for condition in 0..held.values.len() {
-            let group: usize = held
-                .shape
-                .indices(condition)
-                .iter()
-                .zip(&strides)
-                .map(|(i, s)| i * s)
-                .sum();
-            members[group].push(condition);
-        }
-        let groups = members
-            .iter()
-            .map(|m| summary_of(m.iter().map(|c| (*c, held.values[*c]))))
-            .collect();
+        let axes = quantity.axes.without(governing.over);
+        let groups = self.found.groups[at].take();
         GoverningValues {
-            all,
-            groups,
-            group_shape,
+            all: found.summary,
+            groups: groups.unwrap_or_else(|| vec![found.summary]),
+            group_shape: Shape::of(axes, &self.plan.lengths),
             ..GoverningValues::default()
         }
     }
 
-    fn requirement(&self, requirement: &Requirement) -> RequirementValues {
-        let shape = Shape::of(requirement.axes, &self.plan.lengths);
-        let mut result = RequirementValues {
-            shape: shape.clone(),
-            ..RequirementValues::default()
-        };
-        let Some(condition) = requirement.condition.and_then(|c| self.held(c)) else {
-            return result;
-        };
-        let sides: Option<Vec<(BinaryOp, Held, Held)>> = requirement
-            .parts
-            .iter()
-            .map(|p| Some((p.op, self.held(p.left)?, self.held(p.right)?)))
-            .collect();
-        let sides = sides.unwrap_or_default();
-        let feeds: Vec<(BinaryOp, Feed<'_>, Feed<'_>)> = sides
-            .iter()
-            .map(|(op, l, r)| (*op, l.feed(&shape), r.feed(&shape)))
-            .collect();
-        let truth = condition.feed(&shape);
-        let mut least = f64::INFINITY;
-        for at in 0..shape.conditions() {
-            count_condition(&mut result, judged(&feeds, truth.value(at), at));
-            for (part, (op, left, right)) in feeds.iter().enumerate() {
-                let (left, right) = (left.value(at), right.value(at));
-                let ratio = relative_reserve(*op, left, right);
-                if ratio < least {
-                    least = ratio;
-                    result.worst = Some(WorstCondition {
-                        part,
-                        condition: at,
-                        left,
-                        right,
-                    });
-                }
-            }
-        }
-        result.met = match (result.not_met, result.without_value) {
-            (0, 0) => Some(true),
-            (0, _) => None,
-            _ => Some(false),
-        };
-        result
-    }
-
-    fn freebody(&mut self, body: &Freebody) -> FreebodyValues {
+    fn freebody(&mut self, at: usize) -> FreebodyValues {
+        let body = &self.program.freebodies[at];
         let shape = Shape::of(body.axes, &self.plan.lengths);
-        let mut result = FreebodyValues {
-            shape: shape.clone(),
-            ..FreebodyValues::default()
-        };
-        if body.items.is_empty() {
-            return result;
-        }
-        let Some(items) = self.loaded(body) else {
-            return result;
-        };
-        let items = reads(&items, &shape);
-        result.known = true;
-        result.closes = true;
-        let mut open: Vec<usize> = Vec::new();
-        let mut farthest = -1.0;
-        let mut worst_sums = Sums::default();
-        for at in 0..shape.conditions() {
-            let sums = sums(&items, at);
-            let Some(sums) = sums else {
-                result.without_value += 1;
-                continue;
+        let Some(look) = self.found.freebodies[at].take() else {
+            return FreebodyValues {
+                shape,
+                ..FreebodyValues::default()
             };
-            let parts = [ratio(sums.force), ratio(sums.axial), ratio(sums.moment)];
-            result.force_residual = result.force_residual.max(parts[0]);
-            result.axial_residual = result.axial_residual.max(parts[1]);
-            result.moment_residual = result.moment_residual.max(parts[2]);
-            let far = parts.iter().copied().fold(0.0, f64::max);
-            if far > farthest {
-                farthest = far;
-                result.worst = Some(at);
-                worst_sums = sums;
-            }
-            if far > CLOSE {
-                result.closes = false;
-                result.open.count += 1;
-                if open.len() < 5 {
-                    open.push(at);
-                }
-            }
-        }
+        };
+        let mut result = look.result;
         result.closes &= result.without_value == 0;
-        result.open = conditions(self.program, &shape, result.open.count, &open);
+        result.open = conditions(self.program, &shape, result.open.count, &look.open);
         if result.open.count > 0 {
-            self.report_open(body, &result, &worst_sums);
+            self.report_open(body, &result, &look.worst_sums);
         }
         if result.closes {
             result.taken_up_by = self.taken_up_by(body, &shape);
@@ -302,7 +201,14 @@ impl Machine<'_> {
             return false;
         };
         let items = reads(&items, shape);
-        (0..shape.conditions()).all(|at| sums(&items, at).is_some_and(|s| ratio(s.force) <= CLOSE))
+        let at = |condition: usize| {
+            let each = items.iter().map(|item| {
+                let at = item.at.as_ref().map_or(0.0, |at| at.value(condition));
+                (item.kind, item.value.value(condition), at)
+            });
+            sums(each).is_some_and(|s| ratio(s.force) <= CLOSE)
+        };
+        (0..shape.conditions()).all(at)
     }
 }
 
@@ -327,115 +233,4 @@ fn reads<'a>(items: &'a [Loaded], shape: &Shape) -> Vec<Read<'a>> {
         at: item.at.as_ref().map(|at| at.feed(shape)),
     };
     items.iter().map(read).collect()
-}
-
-/// Sums and sums of magnitudes.
-#[derive(Clone, Copy, Default)]
-struct Sums {
-    force: (f64, f64),
-    axial: (f64, f64),
-    moment: (f64, f64),
-}
-
-fn add(sum: &mut (f64, f64), value: f64) {
-    sum.0 += value;
-    sum.1 += value.abs();
-}
-
-fn ratio(sum: (f64, f64)) -> f64 {
-    if sum.1 == 0.0 {
-        0.0
-    } else {
-        sum.0.abs() / sum.1
-    }
-}
-
-/// The sums in one condition, moments about the first station and height; `None` where a value is missing.
-fn sums(items: &[Read<'_>], condition: usize) -> Option<Sums> {
-    let mut sums = Sums::default();
-    let (mut first_station, mut first_height) = (None, None);
-    for item in items {
-        let value = item.value.value(condition);
-        let at = item.at.as_ref().map_or(0.0, |at| at.value(condition));
-        if value.is_nan() || at.is_nan() {
-            return None;
-        }
-        match item.kind {
-            EntryKind::Force => {
-                add(&mut sums.force, value);
-                add(
-                    &mut sums.moment,
-                    -value * (at - *first_station.get_or_insert(at)),
-                );
-            }
-            EntryKind::Axial => {
-                add(&mut sums.axial, value);
-                add(
-                    &mut sums.moment,
-                    value * (at - *first_height.get_or_insert(at)),
-                );
-            }
-            EntryKind::Couple => add(&mut sums.moment, value),
-        }
-    }
-    Some(sums)
-}
-
-/// What one condition of a requirement comes to; a requirement `=` has a wider tolerance than a comparison.
-fn judged(feeds: &[(BinaryOp, Feed<'_>, Feed<'_>)], truth: f64, at: usize) -> f64 {
-    if !feeds.iter().any(|(op, _, _)| *op == BinaryOp::Equal) {
-        return truth;
-    }
-    feeds.iter().fold(1.0, |all, (op, left, right)| {
-        let (left, right) = (left.value(at), right.value(at));
-        let part = if left.is_nan() || right.is_nan() {
-            if left.is_nan() && !is_excluded(left) {
-                left
-            } else if right.is_nan() {
-                right
-            } else {
-                left
-            }
-        } else if *op == BinaryOp::Equal {
-            f64::from(u8::from(
-                (left - right).abs() <= CLOSE * left.abs().max(right.abs()),
-            ))
-        } else {
-            scalar::binary(*op, left, right)
-        };
-        super::kernel::logical(BinaryOp::And, all, part)
-    })
-}
-
-fn count_condition(result: &mut RequirementValues, truth: f64) {
-    if truth.is_nan() {
-        if is_excluded(truth) {
-            result.excluded += 1;
-        } else {
-            result.without_value += 1;
-        }
-    } else if truth == 0.0 {
-        result.not_met += 1;
-    }
-}
-
-/// Distance to the limit, positive when met.
-#[must_use]
-pub(super) fn reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
-    match op {
-        BinaryOp::Less | BinaryOp::LessOrEqual => right - left,
-        BinaryOp::Greater | BinaryOp::GreaterOrEqual => left - right,
-        BinaryOp::NotEqual => (left - right).abs(),
-        _ => -(left - right).abs(),
-    }
-}
-
-/// The reserve over the sum of both sides' magnitudes, by which conditions are ranked.
-pub(super) fn relative_reserve(op: BinaryOp, left: f64, right: f64) -> f64 {
-    let size = left.abs() + right.abs();
-    if size == 0.0 {
-        0.0
-    } else {
-        reserve(op, left, right) / size
-    }
 }

@@ -3,22 +3,59 @@
 use super::feed::Feed;
 use super::missing::{lost, of_operands};
 use crate::axes::{AxisId, Shape};
+use crate::plan::Work;
 use crate::problem::Cause;
 use crate::program::{Axis, PickMode};
 use std::collections::HashMap;
+use std::rc::Rc;
 
 /// A position within this part of an axis's span of a point is that point.
 const ON_POINT: f64 = 1e-9;
 
-/// One selection, ready to be used for every condition.
+/// One selection with the positions of every condition.
 struct Selector<'a> {
-    mode: PickMode,
+    points: Points,
     position: Feed<'a>,
     /// How far apart neighbours along the axis stand in the base.
     stride: usize,
+}
+
+/// The points of an axis, ready to be picked from.
+struct Points {
+    mode: PickMode,
     labels: HashMap<u64, usize>,
     /// The values of the axis in rising order, each with its index.
-    points: Vec<(f64, usize)>,
+    values: Vec<(f64, usize)>,
+}
+
+/// A line of values along one axis, from which a position picks.
+pub(super) struct Table<'a> {
+    points: Points,
+    values: &'a [f64],
+}
+
+impl<'a> Table<'a> {
+    /// The table of a pick whose base varies over the picked axis alone.
+    pub(super) fn of(
+        work: &Work,
+        base: Option<&'a (Rc<Vec<f64>>, Shape)>,
+        axes: &[Axis],
+    ) -> Option<Self> {
+        let (Work::Pick { selections }, Some((values, _))) = (work, base) else {
+            return None;
+        };
+        let (axis, mode) = selections.first()?;
+        Some(Table {
+            points: Points::new(axes, *axis, *mode),
+            values,
+        })
+    }
+
+    /// The value at a position.
+    pub(super) fn value(&self, position: f64) -> f64 {
+        let at = |index: usize| self.values.get(index).copied().unwrap_or(f64::NAN);
+        self.points.value(position, at)
+    }
 }
 
 /// Picks from a base for every condition of `out_shape`.
@@ -69,6 +106,16 @@ impl<'a> Selector<'a> {
             .and_then(|p| strides.get(p))
             .copied()
             .unwrap_or(0);
+        Selector {
+            points: Points::new(axes, axis, mode),
+            position,
+            stride,
+        }
+    }
+}
+
+impl Points {
+    fn new(axes: &[Axis], axis: AxisId, mode: PickMode) -> Self {
         let axis = axes.get(axis.0 as usize);
         let labels = axis.map(|a| &a.label_texts[..]).unwrap_or_default();
         let labels = labels
@@ -77,15 +124,27 @@ impl<'a> Selector<'a> {
             .map(|(i, t)| (u64::from(t.0), i))
             .collect();
         let values = axis.and_then(|a| a.values.as_deref()).unwrap_or_default();
-        let mut points: Vec<(f64, usize)> = values.iter().copied().zip(0..).collect();
-        points.sort_by(|a, b| a.0.total_cmp(&b.0));
-        Selector {
+        let mut values: Vec<(f64, usize)> = values.iter().copied().zip(0..).collect();
+        values.sort_by(|a, b| a.0.total_cmp(&b.0));
+        Points {
             mode,
-            position,
-            stride,
             labels,
-            points,
+            values,
         }
+    }
+
+    /// The value at a position, each point's value being given by its index.
+    fn value(&self, position: f64, at: impl Fn(usize) -> f64) -> f64 {
+        if position.is_nan() {
+            return of_operands(std::iter::once(position)).unwrap_or(position);
+        }
+        if self.mode == PickMode::Label {
+            return match self.labels.get(&(position as u64)) {
+                Some(index) => at(*index),
+                None => lost(Cause::NoSuchLabel),
+            };
+        }
+        along(self, position, at)
     }
 }
 
@@ -94,22 +153,13 @@ fn value(base: &[f64], offset: usize, selectors: &[Selector<'_>], condition: usi
         return base.get(offset).copied().unwrap_or(f64::NAN);
     };
     let position = selector.position.value(condition);
-    if position.is_nan() {
-        return of_operands(std::iter::once(position)).unwrap_or(position);
-    }
     let at = |index: usize| value(base, offset + index * selector.stride, rest, condition);
-    if selector.mode == PickMode::Label {
-        return match selector.labels.get(&(position as u64)) {
-            Some(index) => at(*index),
-            None => lost(Cause::NoSuchLabel),
-        };
-    }
-    along(selector, position, at)
+    selector.points.value(position, at)
 }
 
 /// The value at a position along an axis of numbers.
-fn along(selector: &Selector<'_>, position: f64, at: impl Fn(usize) -> f64) -> f64 {
-    let points = &selector.points;
+fn along(along: &Points, position: f64, at: impl Fn(usize) -> f64) -> f64 {
+    let points = &along.values;
     let (Some(first), Some(last)) = (points.first(), points.last()) else {
         return lost(Cause::BeyondEnd);
     };
@@ -128,13 +178,13 @@ fn along(selector: &Selector<'_>, position: f64, at: impl Fn(usize) -> f64) -> f
     }
     if above == 0 || above == points.len() {
         let end = if above == 0 { first } else { last };
-        return match selector.mode {
+        return match along.mode {
             PickMode::Held | PickMode::Nearest => at(end.1),
             _ => lost(Cause::BeyondEnd),
         };
     }
     let (low, high) = (points[above - 1], points[above]);
-    match selector.mode {
+    match along.mode {
         PickMode::Nearest => at(if position - low.0 <= high.0 - position {
             low.1
         } else {

@@ -16,44 +16,99 @@ struct Gathered {
     place: usize,
 }
 
-/// Reduces a column over some of its axes.
-#[must_use]
-pub(super) fn run(
+/// A reduction that takes its values in condition order.
+pub(super) struct Reducer<'a> {
     how: Reduction,
-    values: &[f64],
-    shape: &Shape,
-    over: AxisSet,
-    out_shape: &Shape,
-    axes: &[Axis],
-) -> Vec<f64> {
-    let empty = Gathered {
-        sum: Sum::default(),
-        count: 0,
-        excluded: 0,
-        missing: 0,
-        best: f64::NAN,
-        place: 0,
-    };
-    let mut gathered = vec![empty; out_shape.conditions()];
-    let strides = shape.strides_of(out_shape);
-    let along = over.iter().next().and_then(|a| shape.position(a));
-    let mut indices = vec![0usize; shape.lengths.len()];
-    let mut place = 0;
-    for value in values {
-        if let Some(result) = gathered.get_mut(place) {
-            gather(result, how, *value, along.map_or(0, |a| indices[a]));
-        }
-        for at in (0..indices.len()).rev() {
-            indices[at] += 1;
-            place += strides[at];
-            if indices[at] < shape.lengths[at] {
-                break;
-            }
-            place -= strides[at] * indices[at];
-            indices[at] = 0;
+    gathered: Vec<Gathered>,
+    walk: Walk,
+    along: Option<usize>,
+    axes: &'a [Axis],
+}
+
+/// A walk over conditions that knows the condition of fewer axes to which each belongs.
+pub(super) struct Walk {
+    lengths: Vec<usize>,
+    strides: Vec<usize>,
+    indices: Vec<usize>,
+    place: usize,
+}
+
+impl Walk {
+    pub(super) fn new(shape: &Shape, inner: &Shape) -> Self {
+        Walk {
+            lengths: shape.lengths.clone(),
+            strides: shape.strides_of(inner),
+            indices: vec![0; shape.lengths.len()],
+            place: 0,
         }
     }
-    gathered.iter().map(|g| settle(g, how, axes)).collect()
+
+    /// The condition of fewer axes to which the condition in hand belongs.
+    pub(super) fn place(&self) -> usize {
+        self.place
+    }
+
+    /// Goes on to the next condition.
+    pub(super) fn step(&mut self) {
+        for at in (0..self.indices.len()).rev() {
+            self.indices[at] += 1;
+            self.place += self.strides[at];
+            if self.indices[at] < self.lengths[at] {
+                break;
+            }
+            self.place -= self.strides[at] * self.indices[at];
+            self.indices[at] = 0;
+        }
+    }
+}
+
+impl<'a> Reducer<'a> {
+    pub(super) fn new(
+        how: Reduction,
+        shape: &Shape,
+        over: AxisSet,
+        out_shape: &Shape,
+        axes: &'a [Axis],
+    ) -> Self {
+        let empty = Gathered {
+            sum: Sum::default(),
+            count: 0,
+            excluded: 0,
+            missing: 0,
+            best: f64::NAN,
+            place: 0,
+        };
+        Reducer {
+            how,
+            gathered: vec![empty; out_shape.conditions()],
+            walk: Walk::new(shape, out_shape),
+            along: over.iter().next().and_then(|a| shape.position(a)),
+            axes,
+        }
+    }
+
+    /// Takes the next values.
+    pub(super) fn take(&mut self, values: impl Iterator<Item = f64>) {
+        for value in values {
+            if let Some(result) = self.gathered.get_mut(self.walk.place()) {
+                gather(
+                    result,
+                    self.how,
+                    value,
+                    self.along.map_or(0, |a| self.walk.indices[a]),
+                );
+            }
+            self.walk.step();
+        }
+    }
+
+    /// The results.
+    pub(super) fn finish(&self) -> Vec<f64> {
+        self.gathered
+            .iter()
+            .map(|g| settle(g, self.how, self.axes))
+            .collect()
+    }
 }
 
 fn gather(result: &mut Gathered, how: Reduction, value: f64, along: usize) {

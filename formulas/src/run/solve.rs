@@ -79,12 +79,14 @@ impl Machine<'_> {
             .chain(solve.out.iter().copied())
             .map(|slot| (slot, self.columns[slot.0 as usize].take()))
             .collect();
+        let trying = std::mem::replace(&mut self.trying, true);
         let mut whole = true;
         while whole && searches.iter().any(|s| !s.is_done()) {
             whole = self
                 .try_all(solve, &shape, &mut searches, &mut gaps)
                 .is_some();
         }
+        self.trying = trying;
         for (slot, column) in before {
             self.columns[slot.0 as usize] = column;
         }
@@ -145,13 +147,8 @@ impl Machine<'_> {
             let trial = searches.iter().map(|s| s.trial(symbol)).collect();
             self.columns[slot.0 as usize] = Some(Rc::new(trial));
         }
-        let plan = self.plan;
-        for step in &solve.steps {
-            let step = plan.steps.get(*step)?;
-            let columns = self.evaluate(step)?;
-            for (out, column) in step.out.iter().zip(columns) {
-                self.columns[out.0 as usize] = Some(Rc::new(column));
-            }
+        for group in &solve.groups {
+            self.run_group(group, &|_| true)?;
         }
         let held = |slot: SlotId| Some((self.column(slot)?.clone(), self.shape(slot)));
         let sides: Option<Vec<_>> = solve

@@ -1,7 +1,7 @@
 //! Tolerances: everything worked out again with each input at its ends, the inputs ranked by what they move, and what
 //! the worst corner of all comes to.
 
-use super::outputs::{relative_reserve, reserve};
+use super::look::{relative_reserve, reserve};
 use super::{Machine, summary_of};
 use crate::axes::Shape;
 use crate::plan::SlotId;
