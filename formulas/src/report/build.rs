@@ -326,7 +326,9 @@ mod tests {
         if let Kind::Number(number) = &mut sheet.program.quantities[1].kind {
             number.absolute = false;
         }
-        sheet.values.quantities[1].column.as_mut().unwrap().values[0] = 5.0;
+        std::rc::Rc::<Vec<f64>>::make_mut(
+            &mut sheet.values.quantities[1].column.as_mut().unwrap().values,
+        )[0] = 5.0;
         let report = sheet.report();
         assert_eq!(
             report.quantities[1].values,
@@ -366,7 +368,7 @@ mod tests {
         sheet.program.axes[0].labels = (0..10_001).map(|i| i.to_string()).collect();
         let shape = Shape::of(crate::axes::AxisSet::of(AxisId(0)), &[10_001, 2]);
         sheet.values.quantities[0].shape = shape.clone();
-        sheet.values.quantities[0].column.as_mut().unwrap().values = vec![0.0; 10_001];
+        sheet.values.quantities[0].column.as_mut().unwrap().values = vec![0.0; 10_001].into();
         assert_eq!(sheet.report().quantities[0].values, None);
         let asked = ["W".to_owned()];
         let report = build(&Input {

@@ -316,7 +316,10 @@ fn column(set: AxisSet, values: Vec<f64>, summary: Summary) -> QuantityValues {
     let shape = Shape::of(set, &[2, 2]);
     QuantityValues {
         shape: shape.clone(),
-        column: Some(Column { shape, values }),
+        column: Some(Column {
+            shape,
+            values: values.into(),
+        }),
         known: true,
         summary,
         worst: None,
