@@ -20,6 +20,7 @@ pub mod print;
 pub mod problem;
 pub mod program;
 pub mod reading;
+pub mod reference;
 pub mod report;
 pub mod run;
 mod setting;

@@ -1,13 +1,16 @@
 //! The front door: a sheet with everything that was found out about it. The only holder of state.
 
+use crate::assist::complete::{self, Completions};
+use crate::assist::desk::Desk;
+use crate::assist::hover::{self, Hover};
 use crate::assist::trail::{self, Followed, Trail, TrailError};
-use crate::diagnostics::{self, Finding};
+use crate::diagnostics::{self, Finding, Fix};
 use crate::graph::Order;
 use crate::names::Names;
 use crate::plan;
 use crate::problem::Located;
 use crate::program::Program;
-use crate::reading::{Lookup, Reader, of_this_sheet};
+use crate::reading::{Checked, Lookup, Reader, of_this_sheet};
 use crate::report::{self, Report};
 use crate::run::{self, Limits};
 use crate::syntax::Tree;
@@ -115,24 +118,42 @@ impl Sheet {
     #[must_use]
     pub fn open_around(text: &str, around: &Around<'_>) -> Self {
         let mut reader = Reader::new(around.sheets, around.limits);
-        let checked = reader.read(around.name, text);
-        let mut problems = checked.problems;
+        let mut checked = reader.read(around.name, text);
         let plan = plan::plan(&checked.program);
         let (values, found) = run::run(&checked.program, &plan, around.limits, around.asked);
-        problems.extend(of_this_sheet(&checked.tree, found));
+        let found = of_this_sheet(&checked.tree, found);
+        checked.problems.extend(found);
+        Self::of(checked, values, text, around, reader.known)
+    }
+
+    /// Reads and checks only: for what needs no values, such as completion and the form. Its report has none.
+    #[must_use]
+    pub fn open_unrun(text: &str, around: &Around<'_>) -> Self {
+        let mut reader = Reader::new(around.sheets, around.limits);
+        let checked = reader.read(around.name, text);
+        Self::of(checked, Values::default(), text, around, reader.known)
+    }
+
+    fn of(
+        checked: Checked,
+        values: Values,
+        text: &str,
+        around: &Around<'_>,
+        used: BTreeMap<String, Rc<UsedSheet>>,
+    ) -> Self {
         Sheet {
             name: around.name.map(str::to_string),
             text: text.to_string(),
             asked: around.asked.to_vec(),
             tree: checked.tree,
             names: checked.names,
-            program: checked.program,
-            values,
-            problems,
-            limits: around.limits,
             order: checked.order,
             uses: checked.used,
-            used: reader.known,
+            program: checked.program,
+            values,
+            problems: checked.problems,
+            limits: around.limits,
+            used,
         }
     }
 
@@ -228,6 +249,39 @@ impl Sheet {
             other: &other,
         };
         trail::follow(&followed, symbol, condition)
+    }
+
+    /// What could stand at a place, line and column counted from 1, the column in Unicode characters.
+    #[must_use]
+    pub fn complete(&self, line: u32, column: u32) -> Completions {
+        let desk = self.desk();
+        complete::complete(&desk, desk.byte(line, column))
+    }
+
+    /// What stands at a place; `None` where there is nothing to say.
+    #[must_use]
+    pub fn hover(&self, line: u32, column: u32) -> Option<Hover> {
+        let desk = self.desk();
+        hover::hover(&desk, desk.byte(line, column))
+    }
+
+    /// The text with a fix of one of its findings applied; `None` where the fix is not of this text.
+    #[must_use]
+    pub fn fixed(&self, fix: &Fix) -> Option<String> {
+        crate::assist::fix::applied(&self.text, fix)
+    }
+
+    /// What an editor's questions are answered from.
+    #[must_use]
+    pub fn desk(&self) -> Desk<'_> {
+        Desk {
+            text: &self.text,
+            tree: &self.tree,
+            names: &self.names,
+            program: &self.program,
+            values: &self.values,
+            used: &self.uses,
+        }
     }
 
     /// A condition as another sheet calls it: axes agree in place and value, but show numbers in units of their own.

@@ -179,7 +179,7 @@ fn stages_use_only_earlier_ones() {
         &["program", "used"],
         &["names", "graph", "check", "plan", "run"],
         &["diagnostics"],
-        &["report", "assist"],
+        &["report", "reference", "assist"],
         &["setting", "reading", "sheet", "bin"],
     ];
     let rank = |name: &str| order.iter().position(|stage| stage.contains(&name));

@@ -2,12 +2,14 @@
 //! nothing is kept between two calls, so an instance that broke off is replaced without loss.
 
 mod answer;
+mod assist;
 mod marks;
 mod panic;
 mod sheets;
 mod trail;
 
 pub use answer::evaluate;
+pub use assist::{complete, fix, hover};
 pub use marks::{kinds, marks};
 pub use panic::last_panic;
 pub use trail::trail;

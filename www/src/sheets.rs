@@ -1,19 +1,27 @@
 //! Sheets among the texts that JavaScript hands over.
 
-use formulas::Sheet;
+use formulas::sheet::{Around, Sheet};
 use js_sys::{Array, Object, Reflect};
 
 /// Opens a text; `sheets` holds the texts of other sheets by their names.
 pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
-    let beside = |name: &str| {
-        let sheets = sheets?;
-        // An object of JavaScript answers to the names of its prototype too; only its own entries are sheets.
-        if !Object::has_own(sheets, &name.into()) {
-            return None;
-        }
-        Reflect::get(sheets, &name.into()).ok()?.as_string()
+    Sheet::open_with(text, &|name| beside(sheets, name))
+}
+
+/// Reads and checks a text only.
+pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
+    let around = Around {
+        sheets: &|name| beside(sheets, name),
+        ..Around::default()
     };
-    Sheet::open_with(text, &beside)
+    Sheet::open_unrun(text, &around)
+}
+
+/// The text of another sheet. An object of JavaScript answers to the names of its prototype too; only its own entries are
+/// sheets.
+fn beside(sheets: Option<&Object>, name: &str) -> Option<String> {
+    let sheets = sheets.filter(|sheets| Object::has_own(sheets, &name.into()))?;
+    Reflect::get(sheets, &name.into()).ok()?.as_string()
 }
 
 /// The texts of an object by their names, in its order.

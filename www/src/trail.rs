@@ -21,7 +21,7 @@ pub fn trail(
     sheets: Option<Object>,
 ) -> Result<JsValue, JsValue> {
     panic::listen();
-    let sheet = sheets::open(text, sheets.as_ref());
+    let sheet = sheets::read(text, sheets.as_ref());
     let condition = condition.map(|c| sheets::entries(&c)).unwrap_or_default();
     let trail = sheet
         .trail(symbol, &condition)

@@ -36,6 +36,7 @@ use engine::quantity::{Dimension, SpeedKind, System, constants};
 use std::collections::HashMap;
 use std::rc::Rc;
 
+pub(crate) use shown::usual_units;
 pub use trace::{Part, Seen, Trace};
 
 /// Most operators with own functions written out.

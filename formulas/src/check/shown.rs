@@ -70,6 +70,12 @@ const USUAL: &[Usual] = &[
     usual(Dimension::MASS_FLOW, "kg/s", "slug/s", [0, 0, 0]),
 ];
 
+/// The usual units of each dimension, metric and US.
+pub(crate) fn usual_units() -> impl Iterator<Item = (Dimension, &'static str)> {
+    let both = |row: &'static Usual| [row.metric, row.us].map(|text| (row.dimension, text));
+    USUAL.iter().flat_map(both)
+}
+
 fn unit_dimension(quantity: &Typed) -> Dimension {
     quantity
         .unit

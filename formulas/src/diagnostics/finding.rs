@@ -1,7 +1,7 @@
 //! What a person sees of a problem: plain public structs, ready for every report.
 
-use serde::Serialize;
 use serde::ser::{SerializeMap, Serializer};
+use serde::{Deserialize, Serialize};
 
 /// How much a finding matters.
 #[derive(Clone, Copy, PartialEq, Eq, Debug, PartialOrd, Ord, Serialize)]
@@ -58,7 +58,7 @@ pub struct FoundConditions {
 }
 
 /// A change of the text that would mend the problem.
-#[derive(Clone, PartialEq, Eq, Debug, Serialize)]
+#[derive(Clone, PartialEq, Eq, Debug, Serialize, Deserialize)]
 pub struct Fix {
     /// What it does, in a few words.
     pub title: String,
@@ -69,7 +69,7 @@ pub struct Fix {
 }
 
 /// Replace a stretch of the text. Lengths count on through line ends, each of which counts its own characters.
-#[derive(Clone, PartialEq, Eq, Debug, Serialize)]
+#[derive(Clone, PartialEq, Eq, Debug, Serialize, Deserialize)]
 #[allow(missing_docs)]
 pub struct Edit {
     pub line: u32,

@@ -2,8 +2,9 @@
 
 use super::columns::At;
 use super::look::{Said, Walk};
-use super::numbers::{Render, joined};
+use super::numbers::Render;
 use super::{Step, StepKind};
+use crate::assist::joined;
 use crate::program::{Kind, Quantity};
 use crate::span::Span;
 use crate::syntax::{

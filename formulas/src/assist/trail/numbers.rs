@@ -3,6 +3,7 @@
 
 use super::columns::At;
 use super::look::{Said, Walk};
+use crate::assist::joined;
 use crate::axes::{AxisId, AxisSet};
 use crate::catalogue;
 use crate::check::{Part, Seen};
@@ -21,28 +22,6 @@ pub(super) struct Render<'w, 's> {
     at: At,
     edits: Vec<(Span, String)>,
     said: &'s mut Said,
-}
-
-/// Code of several lines in one, remarks left off.
-pub(super) fn joined(text: &str) -> String {
-    if !text.contains(['\n', '\r']) {
-        return text.trim().to_string();
-    }
-    let lines = text.lines().map(|line| without_remark(line).trim());
-    let lines: Vec<&str> = lines.filter(|line| !line.is_empty()).collect();
-    lines.join(" ")
-}
-
-fn without_remark(line: &str) -> &str {
-    let mut quoted = false;
-    for (at, c) in line.char_indices() {
-        match c {
-            '"' => quoted = !quoted,
-            ';' if !quoted => return line.get(..at).unwrap_or(line),
-            _ => {}
-        }
-    }
-    line
 }
 
 impl<'w, 's> Render<'w, 's> {

@@ -1,13 +1,13 @@
 //! The catalogue and the unit list.
 
 use crate::outcome::Outcome;
-use engine::quantity::{Dimension, SpeedKind, Unit, UnitRow, units as table};
-use formulas::catalogue::{self, Entry, Field, Gives, Parameter, Wants};
+use engine::quantity::units as table;
+use formulas::catalogue::{self, Entry};
 use formulas::diagnostics::{Finding, Severity, findings};
 use formulas::parse;
 use formulas::problem::{Located, Problem};
-use formulas::report::json::plain_number;
-use formulas::syntax::{Tree, UnitText};
+use formulas::reference::{self, signature};
+use formulas::syntax::Tree;
 
 /// All functions by group, or everything about one.
 pub(crate) fn functions(name: Option<&str>) -> Outcome {
@@ -34,16 +34,13 @@ fn all_functions() -> String {
     out
 }
 
-/// `dynamic_pressure(V, rho)`.
-fn signature(entry: &Entry) -> String {
-    let names: Vec<&str> = entry.parameters.iter().map(|p| p.name).collect();
-    format!("{}({})", entry.name, names.join(", "))
-}
-
 fn function(entry: &Entry) -> String {
     let mut out = format!("{}\n{}\n", signature(entry), entry.what);
-    let arguments = entry.parameters.iter().map(parameter_line);
-    let fields = entry.fields.iter().map(|field| field_line(entry, field));
+    let arguments = entry.parameters.iter().map(reference::parameter);
+    let fields = entry
+        .fields
+        .iter()
+        .map(|field| reference::field(entry, field));
     listed(&mut out, "arguments", arguments);
     listed(&mut out, "gives", fields);
     let facts = [
@@ -71,73 +68,15 @@ fn listed(out: &mut String, heading: &str, lines: impl Iterator<Item = String>) 
     lines.iter().for_each(|line| *out += &format!("  {line}\n"));
 }
 
-fn parameter_line(parameter: &Parameter) -> String {
-    let mut line = format!("{}: {}", parameter.name, wanted(parameter.wants));
-    if let Some(kind) = parameter.speed {
-        line += &format!(" ({})", kind.name());
-    }
-    if parameter.difference {
-        line += ", a difference";
-    }
-    if parameter.line {
-        line += ", a whole line of values";
-    }
-    match parameter.default {
-        Some(value) if value.is_nan() => line += ", may be left out",
-        Some(value) => line += &format!(", {} in SI where left out", plain_number(value)),
-        None => {}
-    }
-    line
-}
-
-fn wanted(wants: Wants) -> String {
-    match wants {
-        Wants::Dimension(dimension) => dimension_text(dimension),
-        Wants::ForceOrMass | Wants::MassOrWeight => "force or mass".to_owned(),
-        Wants::Text => "text".to_owned(),
-        Wants::Any => "any dimension".to_owned(),
-        Wants::Condition => "condition".to_owned(),
-    }
-}
-
-fn field_line(entry: &Entry, field: &Field) -> String {
-    let dimension = match field.gives {
-        Gives::Dimension(dimension) => dimension_text(dimension),
-        Gives::Argument(index, factor) => {
-            let argument = entry.parameters.get(index).map_or("argument", |p| p.name);
-            if factor == Dimension::NONE {
-                format!("dimension of {argument}")
-            } else {
-                format!("dimension of {argument} times {}", dimension_text(factor))
-            }
-        }
-    };
-    let head = if field.name.is_empty() {
-        dimension
-    } else {
-        format!("{}: {dimension}", field.name)
-    };
-    let kind = field.speed.map(SpeedKind::name);
-    let kind = kind.map_or_else(String::new, |kind| format!(" ({kind})"));
-    let what = if field.what.is_empty() {
-        String::new()
-    } else {
-        format!(", {}", field.what)
-    };
-    format!("{head}{kind}{what}")
-}
-
-fn dimension_text(dimension: Dimension) -> String {
-    match dimension.name() {
-        Some(name) => name.to_owned(),
-        None => dimension.symbols(),
-    }
-}
-
 /// All units, or what a unit expression means.
 pub(crate) fn units(text: Option<&str>) -> Outcome {
     let Some(text) = text else {
-        return Outcome::results(table::rows().iter().map(unit_row).collect());
+        return Outcome::results(
+            table::rows()
+                .iter()
+                .map(|row| format!("{}\n", reference::unit_row(row)))
+                .collect(),
+        );
     };
     let (typed, problems) = parse::unit(text);
     let said = said(text, problems);
@@ -145,10 +84,10 @@ pub(crate) fn units(text: Option<&str>) -> Outcome {
         return Outcome::usage(&error.message);
     }
     let advice = said.iter().map(|finding| format!("{}\n", finding.message));
-    match meaning(&typed) {
+    match reference::unit_meaning(&typed) {
         Ok(line) => Outcome {
             diagnostics: advice.collect(),
-            ..Outcome::results(line)
+            ..Outcome::results(line + "\n")
         },
         Err(message) => Outcome::usage(&message),
     }
@@ -162,77 +101,6 @@ fn said(text: &str, problems: Vec<Problem>) -> Vec<Finding> {
     });
     let located: Vec<Located> = located.collect();
     findings(&located, &Tree::default(), text)
-}
-
-fn unit_row(row: &UnitRow) -> String {
-    let prefixes = if row.prefixes {
-        "; takes SI prefixes"
-    } else {
-        ""
-    };
-    let unit = Unit::of_row(row);
-    format!(
-        "{}: {}, {}{prefixes}; {}\n",
-        row.symbols.join(" "),
-        row.name,
-        value_text(unit),
-        row.source
-    )
-}
-
-fn meaning(typed: &UnitText) -> Result<String, String> {
-    let unit = composed(typed)?;
-    Ok(format!(
-        "1 {} is {}; {}\n",
-        typed.text,
-        value_text(unit),
-        dimension_text(unit.dimension)
-    ))
-}
-
-/// The unit that the factors make.
-fn composed(typed: &UnitText) -> Result<Unit, String> {
-    let mut whole: Option<Unit> = None;
-    for factor in &typed.factors {
-        let name = &factor.name.text;
-        let unit = Unit::named(name).ok_or_else(|| format!("there is no unit `{name}`"))?;
-        let unit = if factor.power == 1 {
-            Some(unit)
-        } else {
-            unit.power(factor.power)
-        };
-        whole = match (whole, unit) {
-            (None, unit) => unit,
-            (Some(whole), Some(unit)) => whole.times(unit),
-            (Some(_), None) => None,
-        };
-        if whole.is_none() {
-            return Err(format!("the powers in `{}` are too large", typed.text));
-        }
-    }
-    let whole = whole.unwrap_or(Unit::ONE);
-    match &typed.kind {
-        None => Ok(whole),
-        Some(word) => SpeedKind::of_word(&word.text)
-            .map(|kind| whole.of_kind(kind))
-            .ok_or_else(|| format!("`{}` is no kind of airspeed", word.text)),
-    }
-}
-
-/// `4.4482216152605 kg.m/s^2`, with the zero of a temperature scale and the kind of a speed.
-fn value_text(unit: Unit) -> String {
-    let mut text = format!(
-        "{} {}",
-        plain_number(unit.factor.value()),
-        unit.dimension.symbols()
-    );
-    if unit.absolute {
-        text += &format!(", its zero at {} K", plain_number(unit.to_si(0.0)));
-    }
-    if let Some(kind) = unit.speed_kind {
-        text += &format!(" ({})", kind.name());
-    }
-    text
 }
 
 #[cfg(test)]

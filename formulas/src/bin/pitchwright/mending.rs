@@ -1,7 +1,9 @@
 //! Applies the fixes of a sheet that are marked safe.
 
-use formulas::diagnostics::{Edit, Finding};
+use formulas::assist::fix::bytes;
+use formulas::diagnostics::Finding;
 use formulas::sheet::{Around, Sheet};
+use formulas::source::Source;
 
 /// Most rounds of reading a sheet again after its mending.
 const ROUNDS_MOST: usize = 20;
@@ -41,7 +43,7 @@ pub(crate) fn apply_safe(text: &str, around: &Around<'_>) -> Mended {
 }
 
 fn round(text: &str, findings: &[Finding]) -> (String, Vec<Applied>) {
-    let starts = line_starts(text);
+    let source = Source::new(text);
     let mut next = text.to_owned();
     let mut applied = Vec::new();
     let mut free_end = text.len();
@@ -51,24 +53,20 @@ fn round(text: &str, findings: &[Finding]) -> (String, Vec<Applied>) {
         let Some(fix) = finding.fixes.iter().find(|fix| fix.safe) else {
             continue;
         };
-        let spans = fix.edits.iter().map(|edit| span(text, &starts, edit));
+        let edits = fix.edits.iter();
+        let spans = edits.map(|edit| Some((bytes(&source, edit)?, edit.text.as_str())));
         let Some(mut edits) = spans.collect::<Option<Vec<_>>>() else {
             continue;
         };
-        edits.sort_by_key(|(start, ..)| std::cmp::Reverse(*start));
-        if edits.iter().any(|(_, end, _)| *end > free_end) {
+        edits.sort_by_key(|(range, _)| std::cmp::Reverse(range.start));
+        if edits.iter().any(|(range, _)| range.end > free_end) {
             continue;
         }
-        for (start, end, by) in &edits {
-            next.replace_range(start..end, by);
+        for (range, by) in &edits {
+            next.replace_range(range.clone(), by);
         }
-        let first = edits.last().map_or(free_end, |(start, ..)| *start);
-        let line = starts.partition_point(|start| *start <= first);
-        free_end = line
-            .checked_sub(1)
-            .and_then(|i| starts.get(i))
-            .copied()
-            .unwrap_or(0);
+        let first = edits.last().map_or(free_end, |(range, _)| range.start);
+        free_end = source.byte(source.place(first).line, 1);
         applied.push(Applied {
             line: finding.line,
             column: finding.column,
@@ -80,30 +78,10 @@ fn round(text: &str, findings: &[Finding]) -> (String, Vec<Applied>) {
     (next, applied)
 }
 
-fn line_starts(text: &str) -> Vec<usize> {
-    let ends = text.match_indices('\n').map(|(at, _)| at + 1);
-    std::iter::once(0).chain(ends).collect()
-}
-
-/// First byte, end and new text of an edit.
-fn span<'a>(text: &str, starts: &[usize], edit: &'a Edit) -> Option<(usize, usize, &'a str)> {
-    let line = *starts.get((edit.line as usize).checked_sub(1)?)?;
-    let start = ahead(text, line, edit.column.checked_sub(1)?)?;
-    let end = ahead(text, start, edit.length)?;
-    Some((start, end, edit.text.as_str()))
-}
-
-/// The byte so many characters behind another.
-fn ahead(text: &str, from: usize, characters: u32) -> Option<usize> {
-    let rest = text.get(from..)?;
-    let ends = rest.char_indices().map(|(at, _)| at).chain([rest.len()]);
-    ends.map(|at| from + at).nth(characters as usize)
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
-    use formulas::diagnostics::{Fix, Severity};
+    use formulas::diagnostics::{Edit, Fix, Severity};
 
     fn finding(line: u32, column: u32, length: u32, by: &str, safe: bool) -> Finding {
         let edit = Edit {
