@@ -397,7 +397,10 @@ fn units_for(wanted: Option<Dimension>) -> Vec<Completion> {
             ));
         }
     }
-    items.sort_by_key(|(fits, item)| (!fits, item.label.contains(['/', '.', '^'])));
+    // Of those that fit, the usual ones stand first; of the others those of one name.
+    items.sort_by_key(|(fits, item)| (!fits, !fits && item.label.contains(['/', '.', '^'])));
+    let mut known = std::collections::HashSet::new();
+    items.retain(|(_, item)| known.insert(item.label.clone()));
     items.into_iter().map(|(_, item)| item).collect()
 }
 
