@@ -273,14 +273,13 @@ impl Offered<'_> {
             }));
         }
         items.extend(self.symbols());
-        let words = words
-            .iter()
-            .chain(&["if", "and", "or", "not", "none", "excluded"]);
+        items.extend(words.iter().map(|word| expression_word(word)));
         let constants = constants::rows().iter();
         items.extend(constants.map(|c| item(c.name, CompletionKind::Constant, constant(c))));
         items.extend(self.own_functions());
         items.extend(catalogue::entries().map(function));
-        items.extend(words.map(|word| expression_word(word)));
+        let anywhere = ["if", "and", "or", "not", "none", "excluded"];
+        items.extend(anywhere.map(expression_word));
         items
     }
 
