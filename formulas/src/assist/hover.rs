@@ -277,14 +277,9 @@ impl Known<'_> {
 
 fn function_facts(entry: &Entry) -> Vec<Fact> {
     let parameters: Vec<String> = entry.parameters.iter().map(reference::parameter).collect();
-    let fields: Vec<String> = entry
-        .fields
-        .iter()
-        .map(|field| reference::field(entry, field))
-        .collect();
     [
         fact("arguments", parameters.join("\n")),
-        fact("gives", fields.join("\n")),
+        fact("gives", reference::results(entry).join("\n")),
         fact("method", entry.method),
         fact("holds", entry.holds),
         fact("source", entry.source),

@@ -35,6 +35,7 @@ fn carry_out(command: Command) -> Outcome {
         Command::Trail { sheet, symbol, at } => commands::trail(&sheet, &symbol, &at),
         Command::Compare { old, new } => commands::compare(&old, &new),
         Command::Functions(name) => lists::functions(name.as_deref()),
+        Command::Reference => Outcome::results(formulas::reference::write()),
         Command::Units(text) => lists::units(text.as_deref()),
         Command::Unsupported(what) => Outcome::usage(&format!("this version does not do `{what}`")),
     }

@@ -1,9 +1,9 @@
 //! The functions that run along an axis or over several. The language works them out itself; their rows are for readers.
 
+use super::AXES as GROUP;
 use super::macros::{Argument, language};
 use super::row::{Compute, Entry, Parameter, Wants};
 
-const GROUP: &str = "Along and over axes";
 const DEFINITION: &str = "definition";
 const EVERYWHERE: &str = "Everywhere.";
 const LEAST_SQUARES: &str = "least squares";

@@ -21,6 +21,9 @@ use std::sync::OnceLock;
 /// The group of general mathematics.
 pub const GENERAL: &str = "General mathematics";
 
+/// The group of the functions that run along an axis or over several.
+pub const AXES: &str = "Along and over axes";
+
 /// Every group of functions, in reading order.
 static GROUPS: &[&[Entry]] = &[
     air::ROWS,

@@ -1,6 +1,6 @@
 //! Functions of the catalogue in words.
 
-use crate::catalogue::{Entry, Field, Gives, Parameter, Wants};
+use crate::catalogue::{Compute, Entry, Field, Gives, Parameter, Wants};
 use crate::report::json::plain_number;
 use engine::quantity::{Dimension, SpeedKind};
 
@@ -8,7 +8,8 @@ use engine::quantity::{Dimension, SpeedKind};
 #[must_use]
 pub fn signature(entry: &Entry) -> String {
     let names: Vec<&str> = entry.parameters.iter().map(|p| p.name).collect();
-    let over = if entry.takes_lines() && !names.is_empty() {
+    let axes = entry.group == crate::catalogue::AXES;
+    let over = if (entry.takes_lines() || axes) && !names.is_empty() {
         " over axis"
     } else {
         ""
@@ -58,6 +59,33 @@ pub fn wanted(parameter: &Parameter) -> String {
         Wants::Text => "text".to_owned(),
         Wants::Any => "any dimension".to_owned(),
         Wants::Condition => "condition".to_owned(),
+    }
+}
+
+/// What a function gives, a line for each field.
+#[must_use]
+pub fn results(entry: &Entry) -> Vec<String> {
+    if matches!(entry.compute, Compute::Language) {
+        return vec![language_result(entry.name).to_owned()];
+    }
+    entry.fields.iter().map(|f| field(entry, f)).collect()
+}
+
+/// What the functions give whose dimensions the language itself works out.
+fn language_result(name: &str) -> &'static str {
+    match name {
+        "sqrt" => "the square root of the dimension of x",
+        "cbrt" => "the cube root of the dimension of x",
+        "asin" | "acos" | "atan" | "atan2" => "angle, shown in deg",
+        "has_value" | "all" | "any" => "condition",
+        "where_max" | "where_min" => "the label, or the value of an axis of numbers",
+        "integral" | "running_integral" => "the dimension of f times that of y",
+        "slope" => "the dimension of y over that of x",
+        "intercept" => "the dimension of y",
+        "difference" => "the dimension of f",
+        "abs" | "sum" | "mean" | "rms" => "the dimension of its argument",
+        "min" | "max" | "clamp" | "hypot" => "the dimension that its arguments share",
+        _ => "pure number",
     }
 }
 

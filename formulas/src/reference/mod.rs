@@ -5,11 +5,13 @@ mod expressions;
 mod functions;
 mod statements;
 mod units;
+mod write;
 
 pub use expressions::EXPRESSIONS;
-pub use functions::{dimension_name, field, parameter, signature, wanted};
+pub use functions::{dimension_name, field, parameter, results, signature, wanted};
 pub use statements::STATEMENTS;
 pub use units::{unit_meaning, unit_row, unit_value};
+pub use write::write;
 
 /// A statement, a sign, or a word of an expression.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]

@@ -11,6 +11,7 @@ usage: pitchwright run SHEET [--text|--json|--csv] [--set SYMBOL=EXPR]... [--qua
        pitchwright compare OLD NEW
        pitchwright functions [NAME]
        pitchwright units [TEXT]
+       pitchwright reference
 
 SHEET may be - for standard input. --csv has the columns symbol, one for each axis, value, unit.
 Exit status: 0 all well, 1 a requirement is not met or not shown, 2 the sheet has an error,
@@ -39,6 +40,8 @@ pub(crate) enum Command {
     },
     Functions(Option<String>),
     Units(Option<String>),
+    /// The whole language as one text.
+    Reference,
     /// Named in the language's documents, not done by this version.
     Unsupported(String),
 }
@@ -91,6 +94,10 @@ pub(crate) fn read(arguments: impl Iterator<Item = OsString>) -> Result<Command,
             Ok(Command::Compare { old, new })
         }
         "functions" => Ok(Command::Functions(words.at_most_one("functions")?)),
+        "reference" => {
+            let [] = words.exactly("reference", "nothing more")?;
+            Ok(Command::Reference)
+        }
         "units" => Ok(Command::Units(words.at_most_one("units")?)),
         "trail" => trail(words),
         _ => Err(format!("unknown command `{word}`")),

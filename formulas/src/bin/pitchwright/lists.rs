@@ -42,7 +42,7 @@ fn function(entry: &Entry) -> String {
         .iter()
         .map(|field| reference::field(entry, field));
     listed(&mut out, "arguments", arguments);
-    listed(&mut out, "gives", fields);
+    listed(&mut out, "gives", reference::results(entry).into_iter());
     let facts = [
         ("method", entry.method),
         ("holds", entry.holds),
