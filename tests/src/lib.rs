@@ -2,3 +2,4 @@
 
 pub mod golden;
 pub mod random;
+pub mod schema;

@@ -108,3 +108,95 @@ fn every_value_has_a_trail_down_to_inputs() {
         }
     }
 }
+
+#[test]
+fn every_report_fits_the_schema_and_itself() {
+    let schema: serde_json::Value =
+        serde_json::from_str(formulas::report::json::SCHEMA).expect("the schema is JSON");
+    assert_eq!(
+        schema["properties"]["format"]["const"],
+        formulas::report::FORMAT
+    );
+    let mut seen = BTreeSet::new();
+    for file in files() {
+        let text = std::fs::read_to_string(&file).expect("a case file");
+        for case in cases(&text) {
+            let report = case.opened(&case.sheet).report(&[]);
+            let json = formulas::report::json::write(&report).expect("JSON");
+            let value: serde_json::Value = serde_json::from_str(&json).expect("JSON");
+            let faults = tests::schema::faults(&schema, &value);
+            assert!(faults.is_empty(), "{}: {faults:#?}", case.name);
+            fits_itself(&case.name, &report);
+            let full = |(name, part): (&String, &serde_json::Value)| {
+                part.as_array()
+                    .is_some_and(|list| !list.is_empty())
+                    .then(|| name.clone())
+            };
+            seen.extend(value.as_object().into_iter().flatten().filter_map(full));
+        }
+    }
+    for part in [
+        "axes",
+        "quantities",
+        "governing",
+        "requirements",
+        "freebodies",
+        "findings",
+    ] {
+        assert!(seen.contains(part), "no case has {part}");
+    }
+}
+
+#[test]
+fn a_report_that_does_not_fit_is_told() {
+    let schema: serde_json::Value =
+        serde_json::from_str(formulas::report::json::SCHEMA).expect("the schema is JSON");
+    let report = formulas::Sheet::open("x = 2\ny = x*z\n").report(&[]);
+    let value = serde_json::to_value(&report).expect("JSON");
+    let changes: [(&str, serde_json::Value); 5] = [
+        ("/format", 2.into()),
+        ("/quantities/0/line", 0.into()),
+        ("/quantities/0/kind", "integer".into()),
+        ("/findings/0/message", serde_json::Value::Null),
+        ("/quantities/0/values", "2".into()),
+    ];
+    for (place, other) in changes {
+        let mut changed = value.clone();
+        *changed.pointer_mut(place).expect("a place") = other;
+        assert_eq!(tests::schema::faults(&schema, &changed).len(), 1, "{place}");
+    }
+    let mut changed = value.clone();
+    changed["quantities"][0]["colour"] = "red".into();
+    assert_eq!(tests::schema::faults(&schema, &changed).len(), 1);
+    let axis = changed["quantities"][0].as_object_mut().expect("an object");
+    axis.remove("unit");
+    assert_eq!(tests::schema::faults(&schema, &changed).len(), 2);
+}
+
+/// What a schema cannot say: lists are as long as their axes make them, findings stand in order.
+fn fits_itself(name: &str, report: &formulas::report::Report) {
+    let length = |axis: &String| {
+        let axis = report.axes.iter().find(|a| a.name == *axis);
+        axis.map(|a| a.labels.len())
+    };
+    for quantity in &report.quantities {
+        let lengths: Option<Vec<usize>> = quantity.axes.iter().map(length).collect();
+        let conditions = lengths.map(|l| l.iter().product::<usize>());
+        assert_eq!(
+            conditions,
+            Some(quantity.conditions),
+            "{name}: {}",
+            quantity.symbol
+        );
+        if let Some(values) = &quantity.values {
+            assert_eq!(
+                values.len(),
+                quantity.conditions,
+                "{name}: {}",
+                quantity.symbol
+            );
+        }
+    }
+    let order = |f: &formulas::diagnostics::Finding| (f.line, f.column, f.code);
+    assert!(report.findings.is_sorted_by_key(order), "{name}");
+}

@@ -3,6 +3,9 @@
 use super::Report;
 use serde::Serialize;
 
+/// What the JSON of a report holds, as a JSON Schema (draft 2020-12).
+pub const SCHEMA: &str = include_str!("format.schema.json");
+
 /// The report as JSON, on one line without a line end. Numbers are the shortest decimals that give the double back.
 ///
 /// # Errors

@@ -12,6 +12,7 @@ usage: pitchwright run SHEET [--text|--json|--csv] [--set SYMBOL=EXPR]... [--qua
        pitchwright functions [NAME]
        pitchwright units [TEXT]
        pitchwright reference
+       pitchwright schema
 
 SHEET may be - for standard input. --csv has the columns symbol, one for each axis, value, unit.
 Exit status: 0 all well, 1 a requirement is not met or not shown, 2 the sheet has an error,
@@ -42,6 +43,8 @@ pub(crate) enum Command {
     Units(Option<String>),
     /// The whole language as one text.
     Reference,
+    /// The JSON Schema of `run --json`.
+    Schema,
     /// Named in the language's documents, not done by this version.
     Unsupported(String),
 }
@@ -97,6 +100,10 @@ pub(crate) fn read(arguments: impl Iterator<Item = OsString>) -> Result<Command,
         "reference" => {
             let [] = words.exactly("reference", "nothing more")?;
             Ok(Command::Reference)
+        }
+        "schema" => {
+            let [] = words.exactly("schema", "nothing more")?;
+            Ok(Command::Schema)
         }
         "units" => Ok(Command::Units(words.at_most_one("units")?)),
         "trail" => trail(words),
