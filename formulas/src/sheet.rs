@@ -12,7 +12,7 @@ use crate::problem::Located;
 use crate::program::Program;
 use crate::reading::{Checked, Lookup, Reader, of_this_sheet};
 use crate::report::{self, Report};
-use crate::run::{self, Limits};
+use crate::run::{self, Limits, Memo};
 use crate::syntax::Tree;
 use crate::used::{UsedSheet, UsedSheets};
 use crate::values::Values;
@@ -43,6 +43,8 @@ pub struct Sheet {
     order: Order,
     uses: UsedSheets,
     used: BTreeMap<String, Rc<UsedSheet>>,
+    memo: Option<Memo>,
+    ran: Vec<usize>,
 }
 
 /// Beside what, and within what limits, a sheet is worked out.
@@ -56,6 +58,8 @@ pub struct Around<'a> {
     pub limits: Limits,
     /// Quantities whose values are kept however many they are.
     pub asked: &'a [String],
+    /// Whether edits are to follow: what is worked out is kept for them.
+    pub editing: bool,
 }
 
 impl Default for Around<'_> {
@@ -65,6 +69,7 @@ impl Default for Around<'_> {
             sheets: &|_| None,
             limits: Limits::default(),
             asked: &[],
+            editing: false,
         }
     }
 }
@@ -117,13 +122,32 @@ impl Sheet {
     /// The same with everything that can be said about its surroundings.
     #[must_use]
     pub fn open_around(text: &str, around: &Around<'_>) -> Self {
+        Self::read(text, around, around.editing.then(Memo::default))
+    }
+
+    fn read(text: &str, around: &Around<'_>, mut memo: Option<Memo>) -> Self {
         let mut reader = Reader::new(around.sheets, around.limits);
         let mut checked = reader.read(around.name, text);
         let plan = plan::plan(&checked.program);
-        let (values, found) = run::run(&checked.program, &plan, around.limits, around.asked);
+        let (values, found, ran) = match &mut memo {
+            None => {
+                let (values, found) =
+                    run::run(&checked.program, &plan, around.limits, around.asked);
+                (values, found, Vec::new())
+            }
+            Some(memo) => {
+                let program = &checked.program;
+                let outcome = run::run_again(program, &plan, around.limits, around.asked, memo);
+                (outcome.values, outcome.problems, outcome.ran)
+            }
+        };
         let found = of_this_sheet(&checked.tree, found);
         checked.problems.extend(found);
-        Self::of(checked, values, text, around, reader.known)
+        Sheet {
+            memo,
+            ran,
+            ..Self::of(checked, values, text, around, reader.known)
+        }
     }
 
     /// Reads and checks only: for what needs no values, such as completion and the form. Its report has none.
@@ -154,7 +178,45 @@ impl Sheet {
             problems: checked.problems,
             limits: around.limits,
             used,
+            memo: None,
+            ran: Vec::new(),
         }
+    }
+
+    /// Takes the text after an edit: only lines that the edit changes, or whose values it changes, are worked out
+    /// again. The result is that of opening the text, bit for bit.
+    ///
+    /// # Example
+    /// ```
+    /// use formulas::sheet::{Around, Sheet};
+    /// let editing = Around { editing: true, ..Around::default() };
+    /// let mut sheet = Sheet::open_around("a = 2\nb = 3*a\nc = 5\nd = 2*c\n", &editing);
+    /// sheet.update("a = 2\nb = 3*a\nc = 6\nd = 2*c\n");
+    /// assert_eq!(sheet.ran(), ["d"]);
+    /// ```
+    pub fn update(&mut self, text: &str) {
+        let memo = self.memo.take().unwrap_or_default();
+        *self = self.again(text, Some(memo));
+    }
+
+    /// The text read beside the same sheets.
+    fn again(&self, text: &str, memo: Option<Memo>) -> Sheet {
+        let around = Around {
+            name: self.name.as_deref(),
+            sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
+            limits: self.limits,
+            asked: &self.asked,
+            editing: true,
+        };
+        Self::read(text, &around, memo)
+    }
+
+    /// The quantities that the last edit made work out again, in the order of the sheet; all of them after the first
+    /// reading. Numbers typed are no work.
+    #[must_use]
+    pub fn ran(&self) -> Vec<&str> {
+        let symbol = |at: &usize| self.program.quantities.get(*at).map(|q| q.symbol.as_str());
+        self.ran.iter().filter_map(symbol).collect()
     }
 
     /// The text that was read.
@@ -233,7 +295,7 @@ impl Sheet {
                 name: Some(sheet),
                 sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
                 limits: self.limits,
-                asked: &[],
+                ..Around::default()
             };
             let opened = Sheet::open_around(&used.text, &around);
             opened.trail(symbol, &condition).ok()
@@ -306,15 +368,8 @@ impl Sheet {
     pub fn set(&mut self, symbol: &str, expression: &str) -> Result<(), String> {
         let text =
             crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
-        let other = Self::open_around(
-            &text,
-            &Around {
-                name: self.name.as_deref(),
-                sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
-                limits: self.limits,
-                asked: &self.asked,
-            },
-        );
+        let memo = self.memo.take().unwrap_or_default();
+        let mut other = self.again(&text, Some(memo));
         let errors = |s: &Sheet| {
             s.findings()
                 .into_iter()
@@ -322,6 +377,7 @@ impl Sheet {
         };
         let known: Vec<String> = errors(self).map(|f| f.message).collect();
         if let Some(finding) = errors(&other).find(|f| !known.contains(&f.message)) {
+            self.memo = other.memo.take();
             return Err(finding.message);
         }
         *self = other;

@@ -320,3 +320,43 @@ fn limits_answer_with_a_finding() {
         assert_eq!(kept, serde_json::json!([3.0]), "{code} hides another value");
     }
 }
+
+#[test]
+fn a_warm_run_equals_a_cold_one() {
+    let editing = formulas::sheet::Around {
+        editing: true,
+        ..formulas::sheet::Around::default()
+    };
+    let json = |s: &Sheet| serde_json::to_string(&s.report(&[])).expect("a report");
+    for seed in 0..SHEETS / 5 {
+        let random = &mut Random::new(seed + 1);
+        let (declared, mut lines) = generated(random, &mut Random::new(seed));
+        lines.push("governing x11, f11".to_owned());
+        lines.push("require x11 < f11*1 m/1 N".to_owned());
+        lines.push("unknown u between -50 and 50 such that u*x4 = x5 + u*x6/3".to_owned());
+        let mut sheet = Sheet::open_around(&joined(&declared, &lines), &editing);
+        for _ in 0..8 {
+            edit(&mut lines, random);
+            let text = joined(&declared, &lines);
+            sheet.update(&text);
+            assert_eq!(json(&sheet), json(&Sheet::open(&text)), "{text}");
+        }
+    }
+}
+
+/// Changes a line as somebody who types does: another number, a line away, two in another order, a slip.
+fn edit(lines: &mut Vec<String>, random: &mut Random) {
+    let at = random.below(lines.len());
+    match random.below(6) {
+        0 | 1 => lines[at] = lines[at].replacen('3', "4", 1).replacen("x1", "x2", 1),
+        2 => lines[at] += " + 0*x0",
+        3 => {
+            let other = random.below(lines.len());
+            lines.swap(at, other);
+        }
+        4 => lines[at] = lines[at].replacen('=', "= 2*", 1),
+        _ => {
+            lines.remove(at);
+        }
+    }
+}

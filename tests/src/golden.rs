@@ -4,11 +4,13 @@
 //! begins with `//` is a note on the sheet line above: `//= symbol = value unit over axes` for every quantity of that
 //! line, `// ^^^ severity[code]: message` for a finding at those columns, `// | fix(grade): title` for its fixes. The
 //! notes of a case are whole: what is not noted is not there. Behind the sheet a line `+++ name +++` begins another one
-//! that it may use; what stands there carries no notes.
+//! that it may use; what stands there carries no notes. A line `>>> old => new` behind the sheet is an edit: the first
+//! such text is replaced, and the note says which quantities were worked out again for it.
 
 use formulas::Sheet;
 use formulas::diagnostics::{Edit, Finding, Severity};
 use formulas::report::{Quantity, Report, ValueList};
+use formulas::sheet::Around;
 use std::fmt::Write as _;
 use std::path::{Path, PathBuf};
 
@@ -24,17 +26,44 @@ pub struct Case {
     pub stored: String,
     /// The other sheets by their names, in the order of the file.
     pub others: Vec<(String, String)>,
+    /// Edits one after another: a text of the sheet, and what takes its place.
+    pub edits: Vec<(String, String)>,
 }
 
 impl Case {
     /// A text among the other sheets of the case.
     #[must_use]
     pub fn opened(&self, text: &str) -> Sheet {
+        self.opened_for(text, false)
+    }
+
+    fn opened_for(&self, text: &str, editing: bool) -> Sheet {
         let text_of = |name: &str| {
             let other = self.others.iter().find(|(other, _)| other == name);
             other.map(|(_, text)| text.clone())
         };
-        Sheet::open_with(text, &text_of)
+        let around = Around {
+            sheets: &text_of,
+            editing,
+            ..Around::default()
+        };
+        Sheet::open_around(text, &around)
+    }
+
+    /// Makes the edits one after another: for each the text, what ran again for it, and whether the result is that of
+    /// opening the text.
+    #[must_use]
+    pub fn edited(&self) -> Vec<(String, String, bool)> {
+        let mut text = self.sheet.clone();
+        let mut sheet = self.opened_for(&text, true);
+        let each = self.edits.iter().map(|(old, new)| {
+            text = text.replacen(old, new, 1);
+            sheet.update(&text);
+            let json = |s: &Sheet| serde_json::to_string(&s.report(&[])).unwrap_or_default();
+            let ran = sheet.ran().join(", ");
+            (text.clone(), ran, json(&sheet) == json(&self.opened(&text)))
+        });
+        each.collect()
     }
 }
 
@@ -68,6 +97,7 @@ pub fn cases(text: &str) -> Vec<Case> {
                 sheet: String::new(),
                 stored: String::new(),
                 others: Vec::new(),
+                edits: Vec::new(),
             });
             in_prose = true;
             continue;
@@ -83,6 +113,10 @@ pub fn cases(text: &str) -> Vec<Case> {
         }
         case.stored.push_str(line);
         case.stored.push('\n');
+        if let Some((old, new)) = line.strip_prefix(">>> ").and_then(|l| l.split_once(" => ")) {
+            case.edits.push((old.to_owned(), new.to_owned()));
+            continue;
+        }
         let other = line
             .strip_prefix("+++ ")
             .and_then(|l| l.strip_suffix(" +++"));
@@ -135,6 +169,13 @@ pub fn noted(case: &Case) -> String {
     }
     for (name, text) in &case.others {
         let _ = write!(out, "+++ {name} +++\n{text}");
+    }
+    for ((old, new), (_, ran, same)) in case.edits.iter().zip(case.edited()) {
+        let _ = writeln!(out, ">>> {old} => {new}");
+        let _ = writeln!(out, "//= ran: {ran}");
+        if !same {
+            let _ = writeln!(out, "//= NOT what opening the text gives");
+        }
     }
     out
 }

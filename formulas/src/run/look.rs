@@ -79,6 +79,14 @@ impl<'a> Look<'a> {
     }
 }
 
+/// What a look at an output comes to.
+#[derive(Clone, Debug)]
+pub(super) enum LookResult {
+    Groups(Vec<Summary>),
+    Requirement(RequirementValues),
+    Freebody(Box<FreebodyLook>),
+}
+
 /// Counts and extremes for each condition of fewer axes.
 pub(super) struct Groups {
     walk: Walk,
@@ -152,6 +160,7 @@ impl RequirementLook {
 }
 
 /// A free body, added up condition by condition.
+#[derive(Clone, Debug)]
 pub(super) struct FreebodyLook {
     /// What each entry is, and whether it has a station.
     entries: Vec<(EntryKind, bool)>,
@@ -214,7 +223,7 @@ impl FreebodyLook {
 }
 
 /// Sums and sums of magnitudes.
-#[derive(Clone, Copy, Default)]
+#[derive(Clone, Copy, Debug, Default)]
 pub(super) struct Sums {
     pub(super) force: (f64, f64),
     pub(super) axial: (f64, f64),

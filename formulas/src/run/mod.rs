@@ -6,6 +6,7 @@ mod feed;
 mod kernel;
 mod lines;
 mod look;
+mod memo;
 pub mod missing;
 mod outputs;
 mod overlay;
@@ -31,6 +32,8 @@ use feed::Feed;
 use reduce::Reducer;
 use std::collections::HashMap;
 use std::rc::Rc;
+
+pub use memo::{Memo, Outcome, run_again};
 
 /// Most operations in a recalculation: counted, not timed, so that every machine stops at the same place.
 pub const OPERATIONS_MOST: f64 = 2e10;
@@ -69,6 +72,8 @@ pub(crate) struct Machine<'a> {
     found: Found,
     /// The quantities of each column.
     lines: Vec<Vec<u32>>,
+    /// What lines came to, where it is to be kept.
+    recorded: Option<HashMap<SlotId, (Summary, block::Losses)>>,
     /// Groups of steps by the columns whose change makes them run again.
     again: HashMap<Vec<SlotId>, Rc<Again>>,
 }
@@ -143,14 +148,20 @@ impl<'a> Machine<'a> {
                 freebodies: program.freebodies.iter().map(|_| None).collect(),
             },
             lines,
+            recorded: None,
             again: HashMap::new(),
         }
     }
 
     fn run_all(&mut self, asked: &[String]) {
         let plan = self.plan;
+        self.run_groups(&plan.groups, asked);
+    }
+
+    /// Runs groups; long columns are kept only where one is asked for or read by another group.
+    fn run_groups(&mut self, groups: &[Group], asked: &[String]) {
+        let plan = self.plan;
         let wanted = self.wanted(asked);
-        let groups = &plan.groups;
         let (read, last) = reads_of(plan, groups);
         let stored = |slot: SlotId| {
             let at = slot.0 as usize;
@@ -275,6 +286,9 @@ impl<'a> Machine<'a> {
             });
         }
         self.lines[ending.slot.0 as usize] = lines;
+        if let Some(recorded) = &mut self.recorded {
+            recorded.insert(ending.slot, (ending.summary, ending.losses.clone()));
+        }
     }
 
     /// The columns of a step that takes whole columns.

@@ -1,11 +1,11 @@
 //! Governing conditions, requirements, free bodies.
 
 use super::feed::Feed;
-use super::look::{CLOSE, Look, Sums, ratio, sums};
+use super::look::{CLOSE, Look, LookResult, Sums, ratio, sums};
 use super::{Machine, conditions};
 use crate::axes::Shape;
 use crate::names::located;
-use crate::plan::SlotId;
+use crate::plan::{Judged, SlotId};
 use crate::problem::Fault;
 use crate::program::{EntryKind, Freebody, FreebodyEntry, NodeId, QuantityId};
 use crate::span::Span;
@@ -59,6 +59,35 @@ impl Machine<'_> {
             Look::Requirement(at, look) => self.found.requirements[at] = look.finish(),
             Look::Freebody(at, look) => self.found.freebodies[at] = Some(look),
         }
+    }
+
+    /// Takes over what a look has found before.
+    pub(super) fn take_look(&mut self, what: Judged, result: LookResult) {
+        match (what, result) {
+            (Judged::Governing(at), LookResult::Groups(groups)) => {
+                self.found.groups[at] = Some(groups);
+            }
+            (Judged::Requirement(at), LookResult::Requirement(result)) => {
+                self.found.requirements[at] = result;
+            }
+            (Judged::Freebody(at), LookResult::Freebody(look)) => {
+                self.found.freebodies[at] = Some(*look);
+            }
+            _ => {}
+        }
+    }
+
+    /// What a look has found.
+    pub(super) fn look_of(&self, what: Judged) -> Option<LookResult> {
+        Some(match what {
+            Judged::Governing(at) => LookResult::Groups(self.found.groups.get(at)?.clone()?),
+            Judged::Requirement(at) => {
+                LookResult::Requirement(self.found.requirements.get(at)?.clone())
+            }
+            Judged::Freebody(at) => {
+                LookResult::Freebody(Box::new(self.found.freebodies.get(at)?.clone()?))
+            }
+        })
     }
 
     fn governing(&mut self, at: usize, values: &Values) -> GoverningValues {

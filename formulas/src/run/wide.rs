@@ -104,6 +104,12 @@ pub(super) fn singles(a: Source<'_>, out: &mut [f64], f: impl Fn(f64) -> f64 + C
     }
 }
 
+/// 0 of a finite number; of anything else no number, which stays so in a sum.
+#[inline(always)]
+fn nothing_of(value: f64) -> f64 {
+    value * 0.0
+}
+
 /// Whether all values are finite numbers.
 pub(super) fn finite(values: Source<'_>) -> bool {
     match values {
@@ -111,12 +117,11 @@ pub(super) fn finite(values: Source<'_>) -> bool {
         Source::Block(values) => widest(
             #[inline(always)]
             || {
-                // A finite number less itself is 0, anything else is no number and stays so in the sum.
                 let mut lanes = [0.0f64; 8];
                 let (chunks, rest) = values.as_chunks::<8>();
                 for chunk in chunks {
                     for i in 0..8 {
-                        lanes[i] += chunk[i] - chunk[i];
+                        lanes[i] += nothing_of(chunk[i]);
                     }
                 }
                 let mut sum = 0.0;
@@ -124,7 +129,7 @@ pub(super) fn finite(values: Source<'_>) -> bool {
                     sum += lane;
                 }
                 for value in rest {
-                    sum += value - value;
+                    sum += nothing_of(*value);
                 }
                 sum == 0.0
             },
@@ -143,7 +148,7 @@ pub(super) fn settle(values: &mut [f64]) -> bool {
                 for i in 0..8 {
                     let value = chunk[i] + 0.0;
                     chunk[i] = value;
-                    lanes[i] += value - value;
+                    lanes[i] += nothing_of(value);
                 }
             }
             let mut sum = 0.0;
@@ -152,7 +157,7 @@ pub(super) fn settle(values: &mut [f64]) -> bool {
             }
             for value in rest {
                 *value += 0.0;
-                sum += *value - *value;
+                sum += nothing_of(*value);
             }
             sum == 0.0
         },
