@@ -27,7 +27,7 @@ test("native and wasm give the same bits for the whole suite", async () => {
   engine.initSync({ module: readFileSync(join(root, "www/page/generated/engine_bg.wasm")) });
   let compared = 0;
   for (const sheet of sheets) {
-    const report = engine.evaluate(sheet.text);
+    const report = engine.evaluate(sheet.text, sheet.sheets);
     assert.deepEqual(report.quantities.map((q) => q.symbol), sheet.quantities.map((q) => q.symbol), sheet.name);
     for (const [at, quantity] of report.quantities.entries()) {
       const values = quantity.values === null ? [] : [...quantity.values];

@@ -4,10 +4,12 @@ use super::desk::{Desk, Spot, Stretch, dimension_of, tokens_before, what_it_is};
 use super::place::{Place, place};
 use crate::catalogue::{self, Entry};
 use crate::names::Role;
+use crate::program::Quantity;
 use crate::reference::{STATEMENTS, dimension_name, wanted};
 use crate::syntax::{StatementKind, TitleWord};
 use engine::quantity::{Dimension, constants, units};
 use serde::Serialize;
+use std::collections::HashMap;
 
 /// What could stand at a place.
 #[derive(Clone, Debug, PartialEq, Eq, Serialize)]
@@ -155,12 +157,16 @@ impl Offered<'_> {
     }
 
     fn symbols(&self) -> Vec<Completion> {
+        let quantities = self.desk.program.quantities.iter().filter(|q| q.listed);
+        let quantities: HashMap<&str, &Quantity> =
+            quantities.map(|q| (q.symbol.as_str(), q)).collect();
         let symbols = self.desk.names.symbols.iter();
-        symbols.map(|symbol| self.symbol(symbol)).collect()
+        symbols
+            .map(|symbol| self.symbol(symbol, quantities.get(symbol.name.as_str()).copied()))
+            .collect()
     }
 
-    fn symbol(&self, symbol: &crate::names::Symbol) -> Completion {
-        let quantity = self.desk.quantity(&symbol.name).map(|(_, q)| q);
+    fn symbol(&self, symbol: &crate::names::Symbol, quantity: Option<&Quantity>) -> Completion {
         let (kind, detail) = match symbol.role {
             Role::Sheet => {
                 let sheet = self.desk.sheet(&symbol.name);
@@ -198,7 +204,7 @@ impl Offered<'_> {
         }
         let record = path.join(".");
         let quantities = self.desk.program.quantities.iter();
-        let field = |q: &crate::program::Quantity| {
+        let field = |q: &Quantity| {
             let name = q.symbol.strip_prefix(record.as_str())?.strip_prefix('.')?;
             Some(item(name, CompletionKind::Field, detail(q)))
         };
@@ -209,7 +215,7 @@ impl Offered<'_> {
         let symbols = self.desk.names.symbols.iter();
         let axes = symbols.filter(|s| matches!(s.role, Role::Axis | Role::Key(_)));
         axes.map(|symbol| {
-            let item = self.symbol(symbol);
+            let item = self.symbol(symbol, None);
             if selects {
                 Completion {
                     insert: format!("{}: ", item.label),
@@ -334,7 +340,7 @@ fn opens(word: &str) -> bool {
         || crate::lex::words::TITLE_WORDS.contains(&word)
 }
 
-fn detail(quantity: &crate::program::Quantity) -> String {
+fn detail(quantity: &Quantity) -> String {
     let unit = quantity.unit.as_ref().map(|u| &*u.text);
     let what = what_it_is(quantity.kind, unit);
     match &quantity.remark {

@@ -44,7 +44,17 @@ fn write_bits(file: &str) -> Result<(), Box<dyn std::error::Error>> {
                 .iter()
                 .map(|q| serde_json::json!({ "symbol": q.symbol, "bits": bits(&serde_json::to_value(&q.values).unwrap_or_default()) }))
                 .collect();
-            all.push(serde_json::json!({ "name": case.name, "text": case.sheet, "quantities": quantities }));
+            let others: serde_json::Map<String, serde_json::Value> = case
+                .others
+                .iter()
+                .map(|(name, text)| (name.clone(), text.clone().into()))
+                .collect();
+            all.push(serde_json::json!({
+                "name": case.name,
+                "text": case.sheet,
+                "sheets": others,
+                "quantities": quantities,
+            }));
         }
     }
     std::fs::write(file, serde_json::to_string(&all)?)?;

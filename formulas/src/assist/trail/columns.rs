@@ -130,36 +130,33 @@ impl Columns {
     }
 
     /// The conditions that differ from one only along some axes, in order; none where they are too many to look at.
-    pub(super) fn along(&self, axes: AxisSet, at: &At) -> Vec<At> {
+    pub(super) fn along<'c>(&'c self, axes: AxisSet, at: &'c At) -> impl Iterator<Item = At> + 'c {
         let shape = Shape::of(axes, &self.lengths);
-        if shape.conditions_f64() > PARTS_MOST {
-            return Vec::new();
-        }
-        let place = |condition| {
-            let mut place = at.clone();
-            for (axis, label) in shape.axes.iter().zip(shape.indices(condition)) {
-                if let Some(slot) = place.get_mut(axis.0 as usize) {
-                    *slot = label;
-                }
-            }
-            place
+        let count = if shape.conditions_f64() > PARTS_MOST {
+            0
+        } else {
+            shape.conditions()
         };
-        (0..shape.conditions()).map(place).collect()
+        (0..count).map(move |condition| put(at, &shape, condition))
     }
 
     /// Where a quantity is looked at: the labels that are fixed, along other axes its largest magnitude.
     pub(super) fn place(&self, id: QuantityId, fixed: &[(AxisId, usize)]) -> At {
         let mut at: At = vec![0; self.lengths.len()];
         let mut free = self.quantity(id).map_or(AxisSet::NONE, |q| q.axes);
+        let all = free;
         for (axis, label) in fixed {
             if let Some(slot) = at.get_mut(axis.0 as usize) {
                 *slot = *label;
             }
             free = free.without(AxisSet::of(*axis));
         }
-        let number = |id| matches!(self.quantity(id).map(|q| q.kind), Some(Kind::Number(_)));
-        if !number(id) {
+        let number = matches!(self.quantity(id).map(|q| q.kind), Some(Kind::Number(_)));
+        if !number {
             return at;
+        }
+        if free == all {
+            return self.extreme(id, &at).unwrap_or(at);
         }
         let mut best: Option<(f64, At)> = None;
         for place in self.along(free, &at) {
@@ -169,6 +166,20 @@ impl Columns {
             }
         }
         best.map_or(at, |(_, place)| place)
+    }
+
+    /// The condition of the largest magnitude of all, as the run found it.
+    fn extreme(&self, id: QuantityId, at: &At) -> Option<At> {
+        let found = self.values.quantities.get(id.0 as usize)?;
+        let (high, low) = (found.summary.largest?, found.summary.smallest?);
+        let (larger, smaller) = (high.value.abs(), low.value.abs());
+        let first = high.condition <= low.condition;
+        let most = if larger > smaller || larger == smaller && first {
+            high
+        } else {
+            low
+        };
+        Some(put(at, &found.shape, most.condition))
     }
 
     /// A value as shown, with its unit.
@@ -216,6 +227,17 @@ impl Columns {
             }
         }
     }
+}
+
+/// A condition of a shape, the labels of other axes as they are.
+fn put(at: &At, shape: &Shape, condition: usize) -> At {
+    let mut place = at.clone();
+    for (axis, label) in shape.axes.iter().zip(shape.indices(condition)) {
+        if let Some(slot) = place.get_mut(axis.0 as usize) {
+            *slot = label;
+        }
+    }
+    place
 }
 
 fn index(shape: &Shape, at: &At) -> usize {

@@ -309,16 +309,15 @@ impl<'w, 's> Render<'w, 's> {
         argument: &Expr,
     ) {
         let walk = self.walk;
-        let places = walk.columns.along(over, &self.at);
-        let values: Vec<f64> = places
-            .iter()
-            .map(|at| walk.columns.of_node(value, at).unwrap_or(f64::NAN))
+        let places = || walk.columns.along(over, &self.at);
+        let values: Vec<f64> = places()
+            .map(|at| walk.columns.of_node(value, &at).unwrap_or(f64::NAN))
             .collect();
         let result = self.value(seen).unwrap_or(f64::NAN);
         let Some(chosen) = chosen(how, &values, result) else {
             return;
         };
-        let Some(at) = places.get(chosen).cloned() else {
+        let Some(at) = places().nth(chosen) else {
             return;
         };
         let labels = walk.columns.labels_text(over, &at);
@@ -382,7 +381,7 @@ impl<'w, 's> Render<'w, 's> {
     ) {
         let walk = self.walk;
         let over = AxisSet::of(axis);
-        let places = walk.columns.along(over, &self.at);
+        let places: Vec<At> = walk.columns.along(over, &self.at).collect();
         let name = walk.columns.program.axes.get(axis.0 as usize);
         let name = name.map_or("", |a| a.name.as_str());
         let note = format!("{} is {}, along {name}", self.typed(span), self.shown(seen));

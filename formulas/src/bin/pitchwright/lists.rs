@@ -37,10 +37,6 @@ fn all_functions() -> String {
 fn function(entry: &Entry) -> String {
     let mut out = format!("{}\n{}\n", signature(entry), entry.what);
     let arguments = entry.parameters.iter().map(reference::parameter);
-    let fields = entry
-        .fields
-        .iter()
-        .map(|field| reference::field(entry, field));
     listed(&mut out, "arguments", arguments);
     listed(&mut out, "gives", reference::results(entry).into_iter());
     let facts = [
