@@ -7,7 +7,7 @@ use crate::problem::Located;
 use crate::program::Program;
 use crate::run::Limits;
 use crate::syntax::{StatementKind, Tree};
-use crate::used::{DEPTH_MOST, Used, UsedSheet, UsedSheets};
+use crate::used::{self, DEPTH_MOST, Used, UsedSheet, UsedSheets};
 use crate::{check, graph, parse, plan, run};
 use std::collections::BTreeMap;
 use std::rc::Rc;
@@ -36,7 +36,7 @@ pub(crate) struct Reader<'a> {
     /// The sheets being read, outermost first: name, where it is known, and text.
     open: Vec<(Option<String>, String)>,
     /// Those that were read.
-    pub(crate) known: BTreeMap<String, Rc<UsedSheet>>,
+    known: BTreeMap<String, Rc<UsedSheet>>,
     /// Every text that a value of a sheet read so far may take, each once.
     texts: Vec<String>,
 }
@@ -50,6 +50,55 @@ impl<'a> Reader<'a> {
             known: BTreeMap::new(),
             texts: Vec::new(),
         }
+    }
+
+    /// The same, with sheets that were read before: those whose texts, and all that they use, are as they were need not
+    /// be read again.
+    pub(crate) fn again(
+        lookup: Lookup<'a>,
+        limits: Limits,
+        before: &BTreeMap<String, Rc<UsedSheet>>,
+    ) -> Self {
+        let mut reader = Reader::new(lookup, limits);
+        let same = |(name, sheet): &(&String, &Rc<UsedSheet>)| {
+            sheet.circles.is_empty() && lookup(name).as_deref() == Some(sheet.text.as_str())
+        };
+        let kept = before.iter().filter(same);
+        let mut kept: BTreeMap<String, Rc<UsedSheet>> = kept
+            .map(|(name, sheet)| (name.clone(), sheet.clone()))
+            .collect();
+        loop {
+            let whole = |sheet: &Rc<UsedSheet>| sheet.uses().all(|name| kept.contains_key(name));
+            let gone: Vec<String> = kept
+                .iter()
+                .filter(|(_, sheet)| !whole(sheet))
+                .map(|(name, _)| name.clone())
+                .collect();
+            if gone.is_empty() {
+                break;
+            }
+            kept.retain(|name, _| !gone.contains(name));
+        }
+        // Texts were numbered one sheet after the other, so the longest list begins with every other one.
+        let longest = before.values().map(|sheet| &sheet.program.texts);
+        let longest = longest.max_by_key(|texts| texts.len());
+        reader.texts = longest.cloned().unwrap_or_default();
+        reader.known = kept;
+        reader
+    }
+
+    /// The sheets that a tree uses, and those that they use.
+    pub(crate) fn used_by(&self, tree: &Tree) -> BTreeMap<String, Rc<UsedSheet>> {
+        let mut found = BTreeMap::new();
+        let mut open: Vec<&str> = used::uses(tree).collect();
+        while let Some(name) = open.pop() {
+            if let Some(sheet) = self.known.get(name)
+                && found.insert(name.to_string(), sheet.clone()).is_none()
+            {
+                open.extend(sheet.uses());
+            }
+        }
+        found
     }
 
     /// Reads and checks a text; the name is that by which others use it, where it is known.
@@ -241,6 +290,40 @@ mod tests {
         let codes: Vec<&str> = report.findings.iter().map(|f| f.code).collect();
         assert_eq!(codes, ["sheet-findings"]);
         assert_eq!(report.quantity("z").map(|q| q.without_value), Some(0));
+    }
+
+    #[test]
+    fn a_sheet_is_read_again_only_where_it_or_one_that_it_uses_has_changed() {
+        let text_of = |b: &'static str| {
+            move |name: &str| match name {
+                "a" => Some("use \"b\" as b\nx = b.x\nt = \"one\"\n".to_string()),
+                "b" => Some(b.to_string()),
+                "c" => Some("x = 3\nt = \"two\"\n".to_string()),
+                _ => None,
+            }
+        };
+        let text =
+            "use \"a\" as a\nuse \"c\" as c\ny = a.x + c.x\nz = if a.t = c.t then 1 else 2\n";
+        let first = text_of("x = 1\n");
+        let second = text_of("x = 2\n");
+        let mut reader = Reader::new(&first, Limits::default());
+        let tree = reader.read(None, text).tree;
+        let before = reader.used_by(&tree);
+        assert_eq!(before.len(), 3);
+        let mut again = Reader::again(&second, Limits::default(), &before);
+        let tree = again.read(None, text).tree;
+        let after = again.used_by(&tree);
+        let same = |name: &str| Rc::ptr_eq(&before[name], &after[name]);
+        assert_eq!([same("a"), same("b"), same("c")], [false, false, true]);
+        let mut sheet = Sheet::open_with(text, &first);
+        sheet.update_with(text, &second);
+        let value = |symbol: &str| {
+            let report = sheet.report(&[]);
+            report
+                .quantity(symbol)
+                .and_then(|q| Some(q.largest.as_ref()?.value))
+        };
+        assert_eq!((value("y"), value("z")), (Some(5.0), Some(2.0)));
     }
 
     #[test]

@@ -122,11 +122,16 @@ impl Sheet {
     /// The same with everything that can be said about its surroundings.
     #[must_use]
     pub fn open_around(text: &str, around: &Around<'_>) -> Self {
-        Self::read(text, around, around.editing.then(Memo::default))
+        let reader = Reader::new(around.sheets, around.limits);
+        Self::read(text, around, reader, around.editing.then(Memo::default))
     }
 
-    fn read(text: &str, around: &Around<'_>, mut memo: Option<Memo>) -> Self {
-        let mut reader = Reader::new(around.sheets, around.limits);
+    fn read(
+        text: &str,
+        around: &Around<'_>,
+        mut reader: Reader<'_>,
+        mut memo: Option<Memo>,
+    ) -> Self {
         let mut checked = reader.read(around.name, text);
         let plan = plan::plan(&checked.program);
         let (values, found, ran) = match &mut memo {
@@ -143,10 +148,11 @@ impl Sheet {
         };
         let found = of_this_sheet(&checked.tree, found);
         checked.problems.extend(found);
+        let used = reader.used_by(&checked.tree);
         Sheet {
             memo,
             ran,
-            ..Self::of(checked, values, text, around, reader.known)
+            ..Self::of(checked, values, text, around, used)
         }
     }
 
@@ -155,7 +161,8 @@ impl Sheet {
     pub fn open_unrun(text: &str, around: &Around<'_>) -> Self {
         let mut reader = Reader::new(around.sheets, around.limits);
         let checked = reader.read(around.name, text);
-        Self::of(checked, Values::default(), text, around, reader.known)
+        let used = reader.used_by(&checked.tree);
+        Self::of(checked, Values::default(), text, around, used)
     }
 
     fn of(
@@ -196,19 +203,30 @@ impl Sheet {
     /// ```
     pub fn update(&mut self, text: &str) {
         let memo = self.memo.take().unwrap_or_default();
-        *self = self.again(text, Some(memo));
+        *self = self.again(text, &|name| self.text_of(name), Some(memo));
     }
 
-    /// The text read beside the same sheets.
-    fn again(&self, text: &str, memo: Option<Memo>) -> Sheet {
+    /// The same where other sheets may have changed, or others may be used.
+    pub fn update_with(&mut self, text: &str, sheets: Lookup<'_>) {
+        let memo = self.memo.take().unwrap_or_default();
+        *self = self.again(text, sheets, Some(memo));
+    }
+
+    /// The text of another sheet, as it was read.
+    fn text_of(&self, sheet: &str) -> Option<String> {
+        self.used.get(sheet).map(|sheet| sheet.text.clone())
+    }
+
+    fn again(&self, text: &str, sheets: Lookup<'_>, memo: Option<Memo>) -> Sheet {
         let around = Around {
             name: self.name.as_deref(),
-            sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
+            sheets,
             limits: self.limits,
             asked: &self.asked,
             editing: true,
         };
-        Self::read(text, &around, memo)
+        let reader = Reader::again(sheets, self.limits, &self.used);
+        Self::read(text, &around, reader, memo)
     }
 
     /// The quantities that the last edit made work out again, in the order of the sheet; all of them after the first
@@ -293,7 +311,7 @@ impl Sheet {
             let condition = self.labels_in(used, condition);
             let around = Around {
                 name: Some(sheet),
-                sheets: &|name| self.used.get(name).map(|sheet| sheet.text.clone()),
+                sheets: &|name| self.text_of(name),
                 limits: self.limits,
                 ..Around::default()
             };
@@ -369,7 +387,7 @@ impl Sheet {
         let text =
             crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
         let memo = self.memo.take().unwrap_or_default();
-        let mut other = self.again(&text, Some(memo));
+        let mut other = self.again(&text, &|name| self.text_of(name), Some(memo));
         let errors = |s: &Sheet| {
             s.findings()
                 .into_iter()

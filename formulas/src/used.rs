@@ -1,7 +1,7 @@
 //! Other sheets that a sheet uses: read and checked before it, each once however many lines and sheets name it.
 
 use crate::program::{Program, QuantityId};
-use crate::syntax::Tree;
+use crate::syntax::{StatementKind, Tree};
 use std::collections::{BTreeMap, HashMap};
 use std::rc::Rc;
 
@@ -80,6 +80,11 @@ impl UsedSheet {
         own.map(|q| q.symbol.as_str())
     }
 
+    /// The names of the sheets that it uses itself.
+    pub fn uses(&self) -> impl Iterator<Item = &str> {
+        uses(&self.tree)
+    }
+
     /// The fields of a record.
     #[must_use]
     pub fn fields(&self, record: &str) -> Vec<String> {
@@ -89,6 +94,14 @@ impl UsedSheet {
         };
         self.symbols().filter_map(field).collect()
     }
+}
+
+/// The names of the sheets that a tree uses.
+pub fn uses(tree: &Tree) -> impl Iterator<Item = &str> {
+    tree.statements.iter().filter_map(|s| match &s.kind {
+        StatementKind::Use { sheet, .. } => Some(sheet.text.as_str()),
+        _ => None,
+    })
 }
 
 /// What became of a `use` statement.
