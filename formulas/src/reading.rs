@@ -317,8 +317,11 @@ mod tests {
         assert_eq!([same("a"), same("b"), same("c")], [false, false, true]);
         let mut sheet = Sheet::open_with(text, &first);
         sheet.update_with(text, &second);
+        let report = sheet.report(&[]);
+        let names: Vec<&str> = report.sheets.iter().map(|s| s.name.as_str()).collect();
+        assert_eq!(names, ["a", "b", "c"]);
+        assert_ne!(report.sheets[0].digest, report.sheets[1].digest);
         let value = |symbol: &str| {
-            let report = sheet.report(&[]);
             report
                 .quantity(symbol)
                 .and_then(|q| Some(q.largest.as_ref()?.value))

@@ -288,6 +288,11 @@ impl Sheet {
             tree: &self.tree,
             program: &self.program,
             values: &self.values,
+            others: self
+                .used
+                .iter()
+                .map(|(name, sheet)| (name.as_str(), sheet.text.as_str()))
+                .collect(),
             findings,
             asked,
         };

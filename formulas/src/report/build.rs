@@ -4,8 +4,8 @@ use super::convert::{Scale, condition, extreme};
 use super::requirement::{freebodies, requirements};
 use super::sensitivity;
 use super::{
-    Axis, FORMAT, Governing, GoverningGroup, Quantity, QuantityKind, Report, Spread, TitleBlock,
-    ValueList, WRITTEN_MOST,
+    Axis, FORMAT, Governing, GoverningGroup, OtherSheet, Quantity, QuantityKind, Report, Spread,
+    TitleBlock, ValueList, WRITTEN_MOST,
 };
 use crate::axes::{AxisId, Shape};
 use crate::diagnostics::Finding;
@@ -25,6 +25,8 @@ pub struct Input<'a> {
     pub program: &'a Program,
     /// What was worked out.
     pub values: &'a Values,
+    /// The names and texts of the other sheets that it rests on.
+    pub others: Vec<(&'a str, &'a str)>,
     /// What is to be said about it.
     pub findings: Vec<Finding>,
     /// Symbols whose values are written however many there are; a record stands for all its fields.
@@ -45,6 +47,7 @@ pub fn build(input: &Input) -> Report {
         engine: env!("CARGO_PKG_VERSION"),
         digest: digest(input.text),
         sheet: title_block(tree),
+        sheets: input.others.iter().map(other_sheet).collect(),
         axes: program.axes.iter().filter(|a| a.listed).map(axis).collect(),
         quantities: quantities(input),
         governing: governing(input.tree, program, values),
@@ -64,6 +67,13 @@ pub fn build(input: &Input) -> Report {
 pub(super) fn digest(text: &str) -> String {
     let hash = Sha256::digest(text.as_bytes());
     hash.iter().map(|byte| format!("{byte:02x}")).collect()
+}
+
+fn other_sheet((name, text): &(&str, &str)) -> OtherSheet {
+    OtherSheet {
+        name: (*name).to_string(),
+        digest: digest(text),
+    }
 }
 
 /// The lines of the title block; of a line given twice the first stands.
@@ -376,6 +386,7 @@ mod tests {
             tree: &sheet.tree,
             program: &sheet.program,
             values: &sheet.values,
+            others: Vec::new(),
             findings: Vec::new(),
             asked: &asked,
         });

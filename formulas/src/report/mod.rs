@@ -37,6 +37,8 @@ pub struct Report {
     pub digest: String,
     /// The title block.
     pub sheet: TitleBlock,
+    /// The other sheets that this one rests on, by their names: the digest of this one says nothing of them.
+    pub sheets: Vec<OtherSheet>,
     /// The axes in the order of the sheet.
     pub axes: Vec<Axis>,
     /// Everything with a name and a value, in the order of the sheet.
@@ -74,6 +76,15 @@ impl Report {
     pub fn all_met(&self) -> bool {
         self.requirements.iter().all(|r| r.met == Some(true))
     }
+}
+
+/// Another sheet as it was when this one was worked out.
+#[derive(Clone, Debug, PartialEq, Eq, serde::Serialize)]
+pub struct OtherSheet {
+    /// Its name.
+    pub name: String,
+    /// SHA-256 of its text.
+    pub digest: String,
 }
 
 /// The lines of the title block that the sheet has, as typed.

@@ -52,6 +52,7 @@ impl Sample {
             tree: &self.tree,
             program: &self.program,
             values: &self.values,
+            others: Vec::new(),
             findings: Vec::new(),
             asked: &[],
         })

@@ -42,6 +42,11 @@ fn title_block(page: &mut Page, report: &Report) {
             page.paragraph(&padded(word, 10, false), text);
         }
     }
+    for other in &report.sheets {
+        let digest = other.digest.get(..16).unwrap_or(&other.digest);
+        let text = format!("{}, digest {digest}", other.name);
+        page.paragraph(&padded("rests on", 10, false), &text);
+    }
     if shows_pounds(report) {
         page.line(POUND_IS_FORCE);
     }
