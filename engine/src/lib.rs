@@ -51,6 +51,10 @@ pub mod quantity;
 pub mod air;
 pub mod mass;
 pub mod moment;
+pub mod planform;
+
+pub mod body;
+pub mod wing;
 
 pub mod balance;
 pub mod control;

@@ -5,6 +5,7 @@
     reason = "arguments carry the symbols of the trade: CL, S"
 )]
 
+use crate::elementary;
 use crate::quantity::constants::{G0, PI};
 use crate::quantity::{Angle, Area, Length, PerAngle, TrueAirspeed, Typed};
 
@@ -28,6 +29,44 @@ use crate::quantity::{Angle, Area, Length, PerAngle, TrueAirspeed, Typed};
 /// ```
 pub fn downwash_angle(CL: f64, aspect_ratio: f64) -> Angle {
     Angle::from_si(2.0 * CL / (PI * aspect_ratio))
+}
+
+/// Downwash slope at the tail, d(epsilon)/d(alpha), 4.44 [K_A K_l K_H sqrt(cos(sweep))]^1.19.
+///
+/// - `aspect_ratio`, `taper`, `span`, `sweep_quarter`: of the wing; the sweep that of its quarter-chord line.
+/// - `tail_arm`: from the quarter point of the wing's mean aerodynamic chord to that of the tail, along the datum line.
+/// - `tail_height`: of the tail above (or below) the wing's root chord plane.
+///
+/// K_A = 1/A - 1/(1 + A^1.7), K_l = (10 - 3 taper)/7, K_H = (1 - |h/b|)/(2 l/b)^(1/3). Low speed; a tail aft of the wing,
+/// not a canard. No value for an arm, span or aspect ratio that is not positive.
+///
+/// Source: USAF Stability and Control Datcom, 4.4.1.
+///
+/// # Example
+/// ```
+/// use engine::quantity::{Angle, Length, Typed};
+/// use engine::tail::downwash_slope;
+/// let m = Length::from_si;
+/// let slope = downwash_slope(6.0, 1.0, m(9.0), Angle::from_si(0.0), m(4.0), m(0.0));
+/// assert!(slope > 0.3 && slope < 0.6);
+/// ```
+pub fn downwash_slope(
+    aspect_ratio: f64,
+    taper: f64,
+    span: Length,
+    sweep_quarter: Angle,
+    tail_arm: Length,
+    tail_height: Length,
+) -> f64 {
+    let (b, l, h) = (span.si(), tail_arm.si(), tail_height.si());
+    if !(aspect_ratio > 0.0 && b > 0.0 && l > 0.0) {
+        return f64::NAN;
+    }
+    let k_a = 1.0 / aspect_ratio - 1.0 / (1.0 + elementary::power(aspect_ratio, 1.7));
+    let k_l = (10.0 - 3.0 * taper) / 7.0;
+    let k_h = (1.0 - (h / b).abs()) / elementary::cbrt(2.0 * l / b);
+    let cosine = elementary::cos(sweep_quarter.si());
+    4.44 * elementary::power(k_a * k_l * k_h * cosine.sqrt(), 1.19)
 }
 
 /// The steady manoeuvre that a pitch rate belongs to.
