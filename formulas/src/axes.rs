@@ -139,6 +139,29 @@ impl Shape {
         self.axes.iter().position(|a| *a == axis)
     }
 
+    /// The shape without an axis.
+    #[must_use]
+    pub fn without(&self, axis: Option<AxisId>) -> Self {
+        let left = self
+            .axes
+            .iter()
+            .zip(&self.lengths)
+            .filter(|(a, _)| Some(**a) != axis);
+        let (axes, lengths) = left.map(|(a, n)| (*a, *n)).unzip();
+        Shape { axes, lengths }
+    }
+
+    /// How far apart neighbours along an axis stand where it is put in its place among these.
+    #[must_use]
+    pub fn stride_before(&self, axis: AxisId) -> usize {
+        let behind = self
+            .axes
+            .iter()
+            .zip(&self.lengths)
+            .filter(|(a, _)| **a > axis);
+        behind.map(|(_, n)| n).product()
+    }
+
     /// The labels of a condition: the index along each axis.
     #[must_use]
     pub fn indices(&self, mut condition: usize) -> Vec<usize> {

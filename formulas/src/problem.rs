@@ -511,6 +511,15 @@ pub enum Fault {
         unknowns: usize,
         equations: usize,
     },
+    /// A function that makes an axis, elsewhere than alone as a right side.
+    MadeAxisPlace {
+        function: String,
+    },
+    /// An argument whose texts name the labels of an axis, and that is no column or list of texts typed.
+    MadeAxisTexts {
+        function: String,
+        argument: String,
+    },
     /// More unknowns in a statement than can be solved for together.
     UnknownLimit {
         found: usize,

@@ -169,6 +169,8 @@ pub enum Op {
         entry: &'static Entry,
         arguments: Vec<Option<NodeId>>,
         over: Option<AxisId>,
+        /// The axis that it makes.
+        made: Option<AxisId>,
     },
     /// A field of a record, by its index in the entry.
     Field(NodeId, usize),

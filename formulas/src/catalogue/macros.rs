@@ -143,8 +143,49 @@ pub(super) const fn field_of<T: Typed>(name: &'static str, what: &'static str) -
         absolute: temperature && !T::DIFFERENCE,
         shown: if angle { Some("deg") } else { None },
         line: false,
+        made: false,
         what,
     }
+}
+
+/// Marks a result that varies along the consumed axis.
+pub(super) const fn along(field: Field) -> Field {
+    Field {
+        line: true,
+        ..field
+    }
+}
+
+/// Marks a result that varies along the axis that the function makes.
+pub(super) const fn made(field: Field) -> Field {
+    Field {
+        made: true,
+        ..field
+    }
+}
+
+/// A whole line as quantities.
+pub(super) fn line<T: Typed>(given: &[Line<'_>], index: usize) -> Vec<T> {
+    let values = given.get(index).copied().unwrap_or_default();
+    values.iter().map(|value| T::from_si(*value)).collect()
+}
+
+/// The one value of what is no line.
+pub(super) fn one<T: Typed>(given: &[Line<'_>], index: usize) -> T {
+    let values = given.get(index).copied().unwrap_or_default();
+    T::from_si(at(values, 0))
+}
+
+/// Puts results along the stations in their places.
+pub(super) fn put_along(out: &mut [Vec<f64>], lines: impl IntoIterator<Item = Vec<f64>>) {
+    out.iter_mut()
+        .zip(lines)
+        .for_each(|(out, line)| *out = line);
+}
+
+/// The numbers of quantities.
+pub(super) fn numbers<T: Typed>(line: Vec<T>) -> Vec<f64> {
+    line.into_iter().map(Typed::si).collect()
 }
 
 /// The row with the range where its method holds.
@@ -225,6 +266,7 @@ macro_rules! entry {
             parameters: const { $parameters },
             fields: const { $fields },
             compute: $compute,
+            makes: None,
             validity: None,
             what: $what,
             method: $method,

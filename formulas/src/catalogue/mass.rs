@@ -2,7 +2,7 @@
 
 use super::macros::{Argument, each, points, positive, within};
 use super::row::{Compute, Entry, Parameter};
-use engine::quantity::{Area, Force, Length, Mass, MomentOfInertia, Torque, Typed};
+use engine::quantity::{Angle, Area, Force, Length, Mass, MomentOfInertia, Torque, Typed};
 
 const GROUP: &str = "Geometry and mass";
 const HANDBOOK: &str = "FAA-H-8083-1, Weight and Balance Handbook (definition)";
@@ -11,6 +11,30 @@ const LEFT_OUT: &str =
     "An item with an excluded value is left out; the total weight is not to be 0.";
 
 pub(super) static ROWS: &[Entry] = &[
+    points!(GROUP, planform::planform(y: [Length], chord: [Length], x_le: [Length]) -> {
+            area: Area = "area of both halves",
+            span: Length = "from tip to tip",
+            aspect_ratio: f64 = "span squared over area",
+            taper: f64 = "chord at the last station over that at the first",
+            mean_chord: Length = "area over span",
+            mac: Length = "mean aerodynamic chord",
+            y_mac: Length = "its distance from the plane of symmetry",
+            x_le_mac: Length = "station of its leading edge",
+            x_quarter_mac: Length = "station of its quarter point",
+            sweep_quarter: Angle = "sweep of the quarter-chord line from the first station to the last, positive aft",
+        };
+        "Area, span, aspect ratio and mean aerodynamic chord of a wing or tail.",
+        "Straight lines between stations, integrals exact; for the whole wing: mac = 2/S Int c^2 dy; y_mac, x_le_mac and \
+         x_quarter_mac are means weighted by the chord. y, chord and x_le are whole lines from root to tip.",
+        "Stations that run outward from the plane of symmetry; of a first station off it the part inside is not counted.",
+        "definition of the mean aerodynamic chord, as in every handbook",
+        "table station | y [ft] | c [ft] | x [ft] ; drawing of the wing\n\
+         1 | 0 | 5.0 | 4.9\n\
+         2 | 6 | 5.0 | 4.9\n\
+         3 | 14 | 3.6 | 5.3\n\
+         end\n\
+         wing = planform(y, c, x over station)\n\
+         S [ft^2] = wing.area\n"),
     within(
         |given| positive(given, [2, 3]),
         "the method holds for a wing area above 0 m^2 and a mean aerodynamic chord above 0 m",

@@ -13,8 +13,9 @@ mod moment;
 mod row;
 mod structure;
 mod tail;
+mod wing;
 
-pub use row::{Compute, Entry, Field, Gives, Line, Parameter, Validity, Wants};
+pub use row::{Compute, Entry, Field, Gives, Line, Makes, Parameter, Prepared, Validity, Wants};
 use std::collections::HashMap;
 use std::sync::OnceLock;
 
@@ -29,6 +30,7 @@ static GROUPS: &[&[Entry]] = &[
     air::ROWS,
     mass::ROWS,
     moment::ROWS,
+    wing::ROWS,
     tail::ROWS,
     control::ROWS,
     balance::ROWS,

@@ -14,6 +14,8 @@ pub struct Entry {
     pub fields: &'static [Field],
     /// How it is worked out.
     pub compute: Compute,
+    /// The axis that it makes, named as the result.
+    pub makes: Option<Makes>,
     /// Where the method holds, if that can be told from the arguments.
     pub validity: Option<Validity>,
     /// What it computes, in a sentence.
@@ -111,6 +113,8 @@ pub struct Field {
     pub shown: Option<&'static str>,
     /// Whether it varies along the consumed axis.
     pub line: bool,
+    /// Whether it varies along the axis that the function makes.
+    pub made: bool,
     /// What it is, in a few words.
     pub what: &'static str,
 }
@@ -124,6 +128,15 @@ pub enum Gives {
     Argument(usize, Dimension),
 }
 
+/// The labels of an axis that a function makes. They are known before anything is worked out.
+#[derive(Clone, Copy, PartialEq, Eq, Debug)]
+pub enum Makes {
+    /// 1, 2, ... up to the argument of this index, a number typed.
+    Count(usize),
+    /// The texts of the argument of this index, a column or list of texts, each once.
+    Texts(usize),
+}
+
 /// A whole line of values along the consumed axis.
 pub type Line<'a> = &'a [f64];
 
@@ -135,8 +148,22 @@ pub enum Compute {
     /// Whole lines: every argument as a line (an argument that is no line has one value); each result is filled with
     /// one value, or with one for each label.
     Lines(fn(&[Line<'_>], &[&str], &mut [Vec<f64>])),
+    /// Whole lines, of which the part that does not depend on the swept arguments is done once for all conditions that
+    /// share it.
+    Prepared(Prepared),
     /// By the language itself: general mathematics and the functions of axes.
     Language,
+}
+
+/// A function of whole lines in two parts.
+#[derive(Clone, Copy)]
+pub struct Prepared {
+    /// The arguments that only the second part needs, by index.
+    pub swept: &'static [usize],
+    /// The first part: given all arguments, of which it looks at no swept one.
+    pub prepare: fn(&[Line<'_>], &[&str]) -> Box<dyn std::any::Any>,
+    /// The second part: what the first made, all arguments, and the results.
+    pub apply: fn(&dyn std::any::Any, &[Line<'_>], &mut [Vec<f64>]),
 }
 
 /// Where a method holds.

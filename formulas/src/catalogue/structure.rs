@@ -1,45 +1,15 @@
 //! Structure and test: sums from the tip, chordwise loads, bags.
 
-use super::macros::{Argument, at, entry, field, parameter, put, within};
-use super::row::{Compute, Entry, Field, Line, Parameter, Wants};
+use super::macros::{
+    Argument, along, at, entry, field, line, numbers, one, parameter, put, put_along, within,
+};
+use super::row::{Compute, Entry, Parameter, Wants};
 use engine::quantity::{Force, ForcePerLength, Length, Pressure, Torque, Typed};
 use engine::structure::{self, Shape};
 
 const GROUP: &str = "Structure and test";
 const STATICS: &str = "statics";
 const OUTWARD: &str = "Stations from root to tip, the load straight between them; two stations at one place hold a jump.";
-
-/// A result that varies along the stations.
-const fn along(field: Field) -> Field {
-    Field {
-        line: true,
-        ..field
-    }
-}
-
-/// A whole line as quantities.
-fn line<T: Typed>(given: &[Line<'_>], index: usize) -> Vec<T> {
-    let values = given.get(index).copied().unwrap_or_default();
-    values.iter().map(|value| T::from_si(*value)).collect()
-}
-
-/// The one value of what is no line.
-fn one<T: Typed>(given: &[Line<'_>], index: usize) -> T {
-    let values = given.get(index).copied().unwrap_or_default();
-    T::from_si(at(values, 0))
-}
-
-/// Puts results along the stations in their places.
-fn put_along(out: &mut [Vec<f64>], lines: impl IntoIterator<Item = Vec<f64>>) {
-    out.iter_mut()
-        .zip(lines)
-        .for_each(|(out, line)| *out = line);
-}
-
-/// The numbers of quantities.
-fn numbers<T: Typed>(line: Vec<T>) -> Vec<f64> {
-    line.into_iter().map(Typed::si).collect()
-}
 
 const SHAPE: Parameter = Parameter {
     name: "shape",

@@ -18,6 +18,18 @@ const MANEUVER: Parameter = Parameter {
 
 pub(super) static ROWS: &[Entry] = &[
     within(
+        |given| (2.0..=12.0).contains(&at(given, 0)) && positive(given, [2, 4]),
+        "holds for a tail aft of a wing of an aspect ratio from 2 to 12",
+        each!(GROUP, tail::downwash_slope(aspect_ratio: f64, taper: f64, span: Length, sweep_quarter: Angle,
+                tail_arm: Length, tail_height: Length) -> f64;
+            "Downwash slope at the tail, d(epsilon)/d(alpha).",
+            "4.44 [K_A K_l K_H sqrt(cos(sweep))]^1.19, K_A = 1/A - 1/(1 + A^1.7), K_l = (10 - 3 taper)/7, \
+             K_H = (1 - |h/b|)/(2 l/b)^(1/3); tail_arm from the quarter point of the wing's mean chord to that of the tail.",
+            "Low speed, a tail aft of the wing, not a canard.",
+            "USAF Stability and Control Datcom, 4.4.1",
+            "de = downwash_slope(6.2, 0.7, 29 ft, 0 deg, 11.2 ft, 1.5 ft)\n"),
+    ),
+    within(
         |given| positive(given, [1]),
         "the method holds for aspect ratios above 0",
         each!(GROUP, tail::downwash_angle(CL: f64, aspect_ratio: f64) -> Angle;

@@ -31,10 +31,22 @@ impl Checker<'_> {
                     self.declare(&vary.name.text, vary.name.span, Role::Axis, points);
                 }
                 StatementKind::Table(table) => self.declare_keys(table),
+                StatementKind::Definition(definition) => self.declare_made(definition),
                 StatementKind::Use { name, .. } => self.declare_used_axes(name),
                 _ => {}
             }
         }
+    }
+
+    /// Declares an axis of labels.
+    pub(super) fn declare_labels(
+        &mut self,
+        name: &str,
+        span: Span,
+        role: Role,
+        labels: Option<Vec<String>>,
+    ) {
+        self.declare(name, span, role, labels.map(Points::Labels));
     }
 
     fn declare(&mut self, name: &str, span: Span, role: Role, points: Option<Points>) {
@@ -138,7 +150,7 @@ impl Checker<'_> {
         }
     }
 
-    fn within_labels(&mut self, axis: &str, span: Span, found: f64) -> Option<()> {
+    pub(super) fn within_labels(&mut self, axis: &str, span: Span, found: f64) -> Option<()> {
         if found <= LABELS_MOST as f64 {
             return Some(());
         }
@@ -169,7 +181,12 @@ impl Checker<'_> {
     }
 
     /// A number of an axis: numbers and units only.
-    fn fixed(&mut self, expr: &Expr, bracket: Option<&Bracket>, axis: &str) -> Option<f64> {
+    pub(super) fn fixed(
+        &mut self,
+        expr: &Expr,
+        bracket: Option<&Bracket>,
+        axis: &str,
+    ) -> Option<f64> {
         let mut symbols = false;
         crate::names::uses(expr, &mut |_| symbols = true);
         let typed = if symbols {

@@ -158,6 +158,7 @@ impl Checker<'_> {
         }
         self.airspeed_arguments(entry, &typed)?;
         let axis = self.consumed_axis(entry, function, &typed, over, span)?;
+        let made = self.made_axis(entry, span)?;
         let nodes: Vec<Option<NodeId>> = typed.iter().map(|t| t.as_ref().map(|t| t.node)).collect();
         let given: Vec<NodeId> = nodes.iter().copied().flatten().collect();
         let mut axes = self.axes_of_all(&given);
@@ -173,6 +174,7 @@ impl Checker<'_> {
                 entry,
                 arguments: nodes,
                 over: axis,
+                made,
             },
             axes,
         );
@@ -492,12 +494,12 @@ impl Checker<'_> {
                 .times(factor)?,
         };
         let mut axes = self.axes_of(call);
-        if field.line
-            && let Some(Op::Call {
-                over: Some(axis), ..
-            }) = self.program.nodes.get(call.0 as usize).map(|n| &n.op)
+        if let Some(Op::Call { over, made, .. }) =
+            self.program.nodes.get(call.0 as usize).map(|n| &n.op)
         {
-            axes = axes.with(AxisSet::of(*axis));
+            let along = over.filter(|_| field.line).into_iter();
+            let along = along.chain(made.filter(|_| field.made));
+            axes = along.fold(axes, |axes, axis| axes.with(AxisSet::of(axis)));
         }
         let node = self.node(Op::Field(call, at), axes);
         let kind = NumberKind {

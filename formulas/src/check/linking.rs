@@ -419,10 +419,12 @@ fn map_over_axes(op: &Op, to: &mut dyn Visit) -> Op {
             entry,
             arguments,
             over,
+            made,
         } => Op::Call {
             entry,
             arguments: arguments.iter().map(|n| n.map(|n| to.node(n))).collect(),
             over: over.map(|a| to.axis(a)),
+            made: made.map(|a| to.axis(a)),
         },
         Op::Pick { base, selections } => Op::Pick {
             base: to.node(*base),

@@ -11,6 +11,7 @@ mod definition;
 mod expression;
 mod general;
 mod linking;
+mod made;
 mod operand;
 mod outputs;
 mod pick;
@@ -152,6 +153,8 @@ pub(crate) struct Checker<'a> {
     pub(crate) statement: usize,
     pub(crate) meanings: Vec<Meaning>,
     pub(crate) axis_of_symbol: HashMap<String, AxisId>,
+    /// The axis that the line in hand makes, and the place of the call that makes it.
+    making: Option<(Span, AxisId)>,
     pub(crate) frames: Vec<Frame>,
     pub(crate) written_out: u32,
     pub(crate) prefer: Vec<ShownUnit>,
@@ -263,6 +266,7 @@ impl<'a> Checker<'a> {
             statement: 0,
             meanings: vec![Meaning::Unknown; names.symbols.len()],
             axis_of_symbol: HashMap::new(),
+            making: None,
             frames: Vec::new(),
             written_out: 0,
             prefer: Vec::new(),

@@ -2,7 +2,7 @@
 
 use super::fuse::fuse;
 use super::{Instruction, Judged, Plan, SlotId, Solve, Step, Work};
-use crate::axes::AxisSet;
+use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Compute;
 use crate::program::{Axis, NodeId, Op, Program, QuantityId};
 use crate::values::{EXCLUDED, NONE};
@@ -292,12 +292,7 @@ impl Lowering<'_> {
         }
     }
 
-    fn list(
-        &mut self,
-        axis: crate::axes::AxisId,
-        items: &[NodeId],
-        axes: AxisSet,
-    ) -> Option<SlotId> {
+    fn list(&mut self, axis: AxisId, items: &[NodeId], axes: AxisSet) -> Option<SlotId> {
         let constants: Option<Vec<f64>> = items.iter().map(|n| self.known(*n)).collect();
         if let Some(values) = constants {
             return Some(self.step(axes, Vec::new(), Work::Values(Rc::new(values))));
@@ -306,12 +301,7 @@ impl Lowering<'_> {
         Some(self.step(axes, reads, Work::List { axis }))
     }
 
-    fn grid(
-        &mut self,
-        keys: &[crate::axes::AxisId],
-        items: &[Option<NodeId>],
-        axes: AxisSet,
-    ) -> Option<SlotId> {
+    fn grid(&mut self, keys: &[AxisId], items: &[Option<NodeId>], axes: AxisSet) -> Option<SlotId> {
         let mut reads = Vec::new();
         let mut places = Vec::with_capacity(items.len());
         for item in items {
@@ -351,6 +341,7 @@ impl Lowering<'_> {
             entry,
             arguments,
             over,
+            made,
         } = &node.op
         else {
             return None;
@@ -374,7 +365,8 @@ impl Lowering<'_> {
                 .fields
                 .iter()
                 .map(|f| {
-                    let along = over.filter(|_| f.line).map_or(AxisSet::NONE, AxisSet::of);
+                    let of = |axis: Option<AxisId>| axis.map_or(AxisSet::NONE, AxisSet::of);
+                    let along = of(over.filter(|_| f.line)).with(of(made.filter(|_| f.made)));
                     self.new_slot(node.axes.with(along))
                 })
                 .collect();
@@ -382,6 +374,7 @@ impl Lowering<'_> {
                 entry,
                 arguments: places,
                 over: *over,
+                made: *made,
             };
             let quantity = self.quantity;
             self.plan.steps.push(Step {
@@ -474,6 +467,7 @@ impl Lowering<'_> {
                     entry,
                     arguments,
                     over: None,
+                    made: None,
                 } = &self.program.nodes.get(call.0 as usize)?.op
                 else {
                     return None;

@@ -113,6 +113,7 @@ pub enum Work {
         entry: &'static Entry,
         arguments: Vec<Option<usize>>,
         over: Option<AxisId>,
+        made: Option<AxisId>,
     },
 }
 

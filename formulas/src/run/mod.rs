@@ -18,6 +18,7 @@ mod tolerance;
 mod wide;
 
 use crate::axes::{AxisSet, Shape};
+use crate::catalogue::Compute;
 use crate::names::located;
 use crate::plan::fuse::{Group, STORED_MOST};
 use crate::plan::{Plan, SlotId, Step, Work};
@@ -325,18 +326,29 @@ impl<'a> Machine<'a> {
                 entry,
                 arguments,
                 over,
+                made,
             } => {
                 let texts = &self.program.texts;
-                Some(match over {
-                    None => {
-                        let feeds = read.along(shape);
-                        lines::each(entry, arguments, &feeds, shape.conditions(), texts)
-                    }
-                    Some(axis) => {
-                        let full = self.widened(&step.reads, *axis);
-                        lines::along(entry, arguments, &read.along(&full), *axis, &full, texts)
-                    }
-                })
+                if let Compute::Each(compute) = entry.compute {
+                    let feeds = read.along(shape);
+                    let n = shape.conditions();
+                    return Some(lines::each((entry, compute), arguments, &feeds, n, texts));
+                }
+                let full = self.widened(&step.reads, *over);
+                let lines = self.widened(&step.reads, *over).without(*over);
+                let made = made.map(|axis| {
+                    let length = self.plan.lengths.get(axis.0 as usize).copied().unwrap_or(1);
+                    (lines.stride_before(axis), length)
+                });
+                let consumed = over.and_then(|axis| full.position(axis));
+                Some(lines::along(
+                    entry,
+                    arguments,
+                    &read.along(&full),
+                    (consumed, &full),
+                    made,
+                    texts,
+                ))
             }
             work => self
                 .across(work, step, &read, shape)
@@ -370,7 +382,7 @@ impl<'a> Machine<'a> {
                 pick::run(base?, base_shape?, selections, positions, shape, axes)
             }
             Work::Along { how, axis, has_x } => {
-                let full = self.widened(&step.reads, *axis);
+                let full = self.widened(&step.reads, Some(*axis));
                 let feeds = read.along(&full);
                 let x = if *has_x { feeds.get(1) } else { None };
                 along::run(*how, feeds.first()?, x, *axis, &full)
@@ -380,11 +392,12 @@ impl<'a> Machine<'a> {
     }
 
     /// The shape of all reads together, with an axis that is consumed.
-    fn widened(&self, reads: &[SlotId], axis: crate::axes::AxisId) -> Shape {
+    fn widened(&self, reads: &[SlotId], axis: Option<crate::axes::AxisId>) -> Shape {
         let all = reads.iter().fold(AxisSet::NONE, |set, s| {
             set.with(self.plan.slots[s.0 as usize])
         });
-        Shape::of(all.with(AxisSet::of(axis)), &self.plan.lengths)
+        let axis = axis.map_or(AxisSet::NONE, AxisSet::of);
+        Shape::of(all.with(axis), &self.plan.lengths)
     }
 
     /// Counts the operations of steps, and stops the run where there are too many.

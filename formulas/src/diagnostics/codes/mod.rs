@@ -50,6 +50,8 @@ mod label_missing;
 mod label_twice;
 mod likely_other_unit;
 mod load_factor_unit;
+mod made_axis_place;
+mod made_axis_texts;
 mod mass_for_force;
 mod memory_limit;
 mod missing_sheet;
@@ -205,6 +207,8 @@ pub const CODES: &[&Code] = &[
     &further_solutions::ROW,
     &equation_count::ROW,
     &equations_mixed::ROW,
+    &made_axis_place::ROW,
+    &made_axis_texts::ROW,
     &unknown_limit::ROW,
     &figure_axes::ROW,
     &memory_limit::ROW,
@@ -332,6 +336,8 @@ told_by! {
     RulesMixed { rules, basis } => rules_mixed::draft(rules, basis),
     FurtherSolutions { symbol, conditions } => further_solutions::draft(symbol, conditions),
     EquationCount { unknowns, equations } => equation_count::draft(*unknowns, *equations),
+    MadeAxisPlace { function } => made_axis_place::draft(function),
+    MadeAxisTexts { function, argument } => made_axis_texts::draft(function, argument),
     UnknownLimit { found, limit } => unknown_limit::draft(*found, *limit),
     UnknownCoupled { symbol } => equations_mixed::draft(symbol),
     FigureAxes { symbol, axes } => figure_axes::draft(site, symbol, axes),
