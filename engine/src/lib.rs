@@ -54,6 +54,7 @@ pub mod moment;
 pub mod planform;
 
 pub mod body;
+pub mod section;
 pub mod wing;
 
 pub mod balance;

@@ -69,6 +69,16 @@ pub enum Cause {
     NoValue,
     /// An unknown without a solution in its bounds.
     NoSolution,
+    /// A text that is no designation of a section.
+    Designation,
+    /// A contour of too few points.
+    ContourPoints,
+    /// A contour with two points at one place.
+    ContourRepeated,
+    /// A contour that crosses itself.
+    ContourCrossing,
+    /// A contour whose ends are apart.
+    ContourOpen,
     /// Something that a set of rules does not have, or that is not coded.
     NotCoded,
 }

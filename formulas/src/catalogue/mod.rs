@@ -12,6 +12,7 @@ mod mass;
 mod moment;
 mod row;
 mod structure;
+mod section;
 mod tail;
 mod wing;
 
@@ -30,6 +31,7 @@ static GROUPS: &[&[Entry]] = &[
     air::ROWS,
     mass::ROWS,
     moment::ROWS,
+    section::ROWS,
     wing::ROWS,
     tail::ROWS,
     control::ROWS,

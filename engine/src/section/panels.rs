@@ -1,0 +1,412 @@
+//! Vortex panels of linear strength around a section.
+
+use crate::elementary;
+use crate::numeric::{Factorised, Sum};
+use crate::quantity::constants::PI;
+use crate::quantity::{Angle, Typed};
+
+/// A trailing edge may be open by this part of the chord.
+const OPEN_MOST: f64 = 0.02;
+/// Points closer than this part of the chord are the same.
+const SAME: f64 = 1e-9;
+
+/// Why a contour cannot be worked out.
+#[derive(Clone, Copy, PartialEq, Eq, Debug)]
+pub enum Trouble {
+    /// Fewer than five points, or a coordinate that is no number.
+    TooFew,
+    /// Two points at one place, other than the ends.
+    Repeated,
+    /// It crosses itself.
+    Crossing,
+    /// It does not come back to where it began.
+    Open,
+}
+
+/// A section with its panels solved for any angle of attack.
+#[derive(Clone, Debug)]
+pub struct Panels {
+    x: Vec<f64>,
+    z: Vec<f64>,
+    chord: f64,
+    quarter: (f64, f64),
+    /// Speed along the contour at each point, over that of the flow, for flow along the x axis and across it.
+    along: Vec<f64>,
+    across: Vec<f64>,
+    /// 1 where the points run over the lower side first, else -1.
+    turn: f64,
+}
+
+/// What the panels come to at an angle of attack.
+#[derive(Clone, PartialEq, Debug)]
+pub struct PanelResult {
+    /// Lift coefficient.
+    pub cl: f64,
+    /// Moment coefficient about the quarter chord, positive nose up.
+    pub cm_quarter: f64,
+    /// Where the line of the resultant cuts the chord axis, in the unit of x; no value without lift.
+    pub x_cp: f64,
+    /// The lowest pressure coefficient at a point.
+    pub cp_min: f64,
+    /// Where it stands.
+    pub x_cp_min: f64,
+    /// Pressure coefficient at each point.
+    pub cp: Vec<f64>,
+}
+
+impl Panels {
+    /// Sets panels up through the points of a contour and solves them.
+    ///
+    /// - `x`, `z`: points from the trailing edge over the upper side to the leading edge and back under the lower side, in
+    ///   any unit of length; the other way round is found out. The trailing edge may be closed, or open by a little.
+    ///
+    /// The stream function is the same at all points, and the flow leaves the trailing edge smoothly (Kutta); at a closed
+    /// edge, where two points are one, the strength of the mean line runs on straight. The chord runs from the trailing edge
+    /// to the point farthest from it; angles are from the x axis. Incompressible and without viscosity: lift and moment of
+    /// real sections are some per cent smaller in magnitude. Within 0.1 % of exact solutions at 200 panels, 0.5 % with a
+    /// cusped trailing edge; the error falls with the square of the number of panels.
+    ///
+    /// Source: vortex panels of linear strength with a stream function, as in J. Moran, An Introduction to Theoretical and
+    /// Computational Aerodynamics.
+    ///
+    /// # Errors
+    /// Says what is wrong with the contour.
+    ///
+    /// # Example
+    /// ```
+    /// use engine::quantity::{Angle, Typed};
+    /// use engine::section::{Panels, section_points};
+    /// let points = section_points("0012", 161);
+    /// let panels = Panels::new(&points.x, &points.z).unwrap();
+    /// let at = panels.at(Angle::from_si(0.1));
+    /// assert!(at.cl > 0.65 && at.cl < 0.72 && at.cm_quarter.abs() < 0.02);
+    /// ```
+    pub fn new(x: &[f64], z: &[f64]) -> Result<Self, Trouble> {
+        let chord = check(x, z)?;
+        let count = x.len();
+        let size = count + 1;
+        let closed = elementary::hypot(x[0] - x[count - 1], z[0] - z[count - 1]) <= SAME * chord;
+        let mut rows = vec![0.0; size * size];
+        let (mut along, mut across) = (vec![0.0; size], vec![0.0; size]);
+        for i in 0..count {
+            let row = &mut rows[i * size..(i + 1) * size];
+            for j in 0..count - 1 {
+                let [first, second] =
+                    influence((x[i], z[i]), (x[j], z[j]), (x[j + 1], z[j + 1]), chord);
+                row[j] += first;
+                row[j + 1] += second;
+            }
+            row[count] = -1.0;
+            (along[i], across[i]) = (-z[i] / chord, x[i] / chord);
+        }
+        if closed {
+            let row = &mut rows[(count - 1) * size..count * size];
+            row.fill(0.0);
+            for (at, factor) in [(0, 1.0), (1, -2.0), (2, 1.0)] {
+                row[at] += factor;
+                row[count - 1 - at] -= factor;
+            }
+            (along[count - 1], across[count - 1]) = (0.0, 0.0);
+        }
+        let kutta = &mut rows[count * size..];
+        (kutta[0], kutta[count - 1]) = (1.0, 1.0);
+        let matrix = Factorised::new(rows, size).ok_or(Trouble::Repeated)?;
+        let strength = |right: &[f64]| {
+            let mut strength = matrix.solve(right);
+            strength.truncate(count);
+            strength
+        };
+        let edge = ((x[0] + x[count - 1]) / 2.0, (z[0] + z[count - 1]) / 2.0);
+        let nose = farthest(x, z, edge);
+        let quarter = (
+            nose.0 + (edge.0 - nose.0) / 4.0,
+            nose.1 + (edge.1 - nose.1) / 4.0,
+        );
+        // Twice the area, positive where the points run over the upper side first.
+        let area: f64 = (1..count).map(|i| x[i - 1] * z[i] - x[i] * z[i - 1]).sum();
+        Ok(Panels {
+            along: strength(&along),
+            across: strength(&across),
+            x: x.to_vec(),
+            z: z.to_vec(),
+            chord,
+            quarter,
+            turn: if area > 0.0 { -1.0 } else { 1.0 },
+        })
+    }
+
+    /// The section at an angle of attack of its x axis.
+    #[must_use]
+    pub fn at(&self, alpha: Angle) -> PanelResult {
+        let (sine, cosine) = (elementary::sin(alpha.si()), elementary::cos(alpha.si()));
+        let both = self.along.iter().zip(&self.across);
+        let speed: Vec<f64> = both.map(|(a, b)| a * cosine + b * sine).collect();
+        let (mut circulation, mut moment) = (Sum::default(), Sum::default());
+        let (mut up, mut aft) = (Sum::default(), Sum::default());
+        for i in 1..speed.len() {
+            let (dx, dz) = (self.x[i] - self.x[i - 1], self.z[i] - self.z[i - 1]);
+            let middle = (speed[i] + speed[i - 1]) / 2.0;
+            circulation.add(middle * elementary::hypot(dx, dz));
+            // The pressure pushes square to the panel, into the section.
+            let pressure = self.turn * (1.0 - middle * middle);
+            let (fx, fz) = (pressure * dz, -pressure * dx);
+            let x = (self.x[i] + self.x[i - 1]) / 2.0 - self.quarter.0;
+            let z = (self.z[i] + self.z[i - 1]) / 2.0 - self.quarter.1;
+            moment.add(z * fx - x * fz);
+            up.add(fz);
+            aft.add(fx);
+        }
+        let cm_quarter = moment.total() / (self.chord * self.chord);
+        let cp: Vec<f64> = speed.iter().map(|v| 1.0 - v * v).collect();
+        let lower =
+            |best: usize, (i, value): (usize, &f64)| if *value < cp[best] { i } else { best };
+        let lowest = cp.iter().enumerate().fold(0, lower);
+        PanelResult {
+            cl: 2.0 * circulation.total() / self.chord,
+            cm_quarter,
+            x_cp: self.quarter.0 - cm_quarter * self.chord / (up.total() / self.chord),
+            cp_min: cp[lowest],
+            x_cp_min: self.x[lowest],
+            cp,
+        }
+    }
+}
+
+/// The chord of a contour that can be worked out.
+fn check(x: &[f64], z: &[f64]) -> Result<f64, Trouble> {
+    let n = x.len();
+    if n < 5 || z.len() != n || x.iter().chain(z).any(|v| !v.is_finite()) {
+        return Err(Trouble::TooFew);
+    }
+    let edge = ((x[0] + x[n - 1]) / 2.0, (z[0] + z[n - 1]) / 2.0);
+    let nose = farthest(x, z, edge);
+    let chord = elementary::hypot(nose.0 - edge.0, nose.1 - edge.1);
+    let apart = |i: usize, j: usize| elementary::hypot(x[i] - x[j], z[i] - z[j]);
+    if !(chord > 0.0) || apart(0, n - 1) > OPEN_MOST * chord {
+        return Err(Trouble::Open);
+    }
+    if (1..n).any(|i| apart(i, i - 1) <= SAME * chord) {
+        return Err(Trouble::Repeated);
+    }
+    for i in 0..n - 1 {
+        for j in i + 2..n - 1 {
+            let ends = i == 0 && j == n - 2;
+            if !ends && crosses((x, z), i, j) {
+                return Err(Trouble::Crossing);
+            }
+        }
+    }
+    Ok(chord)
+}
+
+/// Whether two panels cross.
+fn crosses((x, z): (&[f64], &[f64]), i: usize, j: usize) -> bool {
+    let side = |a: usize, b: usize, p: usize| {
+        (x[b] - x[a]) * (z[p] - z[a]) - (z[b] - z[a]) * (x[p] - x[a])
+    };
+    let apart = |a: f64, b: f64| (a > 0.0 && b < 0.0) || (a < 0.0 && b > 0.0);
+    apart(side(i, i + 1, j), side(i, i + 1, j + 1))
+        && apart(side(j, j + 1, i), side(j, j + 1, i + 1))
+}
+
+fn farthest(x: &[f64], z: &[f64], from: (f64, f64)) -> (f64, f64) {
+    let away = |at: &(f64, f64)| elementary::hypot(at.0 - from.0, at.1 - from.1);
+    let points = x.iter().copied().zip(z.iter().copied());
+    points.fold(
+        from,
+        |best, at| if away(&at) > away(&best) { at } else { best },
+    )
+}
+
+/// Stream function at a point of a panel whose strength is 1 at its first end and 0 at its second, and the reverse.
+fn influence(at: (f64, f64), from: (f64, f64), to: (f64, f64), chord: f64) -> [f64; 2] {
+    let (dx, dz) = ((to.0 - from.0) / chord, (to.1 - from.1) / chord);
+    let (px, pz) = ((at.0 - from.0) / chord, (at.1 - from.1) / chord);
+    let length = elementary::hypot(dx, dz);
+    let (a, y) = ((px * dx + pz * dz) / length, (pz * dx - px * dz) / length);
+    let b = a - length;
+    // u ln r and r^2 (ln r - 1/2) go to 0 with r.
+    let parts = |u: f64| {
+        let square = u * u + y * y;
+        if square == 0.0 {
+            return (0.0, 0.0);
+        }
+        let log = elementary::ln(square) / 2.0;
+        (u * log, square * (log - 0.5))
+    };
+    let ((first, first_square), (second, second_square)) = (parts(a), parts(b));
+    let turn = if y == 0.0 {
+        0.0
+    } else {
+        y * (elementary::atan(a / y) - elementary::atan(b / y))
+    };
+    let plain = first - second - length + turn;
+    let rising = (a * plain - (first_square - second_square) / 2.0) / length;
+    [(plain - rising) / (2.0 * PI), rising / (2.0 * PI)]
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// Points of an exact section by the mapping z -> k ((1 + 1/z)^k + ...)/... of Karman and Trefftz; k = 2 is Joukowski's.
+    fn mapped(k: f64, mu: (f64, f64), count: usize) -> (Vec<f64>, Vec<f64>) {
+        let radius = elementary::hypot(1.0 - mu.0, mu.1);
+        let start = elementary::atan2(-mu.1, 1.0 - mu.0);
+        let point = |i: usize| {
+            let t = start + 2.0 * PI * i as f64 / (count - 1) as f64;
+            let zeta = (
+                mu.0 + radius * elementary::cos(t),
+                mu.1 + radius * elementary::sin(t),
+            );
+            if i == 0 || i == count - 1 {
+                return (k, 0.0);
+            }
+            // ((zeta - 1)/(zeta + 1))^k in polar form, then z = k (1 + w)/(1 - w).
+            let (up, down) = ((zeta.0 - 1.0, zeta.1), (zeta.0 + 1.0, zeta.1));
+            let size = elementary::hypot(up.0, up.1) / elementary::hypot(down.0, down.1);
+            // The circle goes around the point -1, so that the angle is 0 at the nose and never jumps.
+            let angle = elementary::atan2(up.1, up.0) - elementary::atan2(down.1, down.0);
+            let (size, angle) = (elementary::power(size, k), angle * k);
+            let w = (size * elementary::cos(angle), size * elementary::sin(angle));
+            let (a, b) = ((1.0 + w.0, w.1), (1.0 - w.0, -w.1));
+            let square = b.0 * b.0 + b.1 * b.1;
+            (
+                k * (a.0 * b.0 + a.1 * b.1) / square,
+                k * (a.1 * b.0 - a.0 * b.1) / square,
+            )
+        };
+        (0..count).map(point).unzip()
+    }
+
+    /// Lift of the mapped circle, 8 pi R sin(alpha + beta)/c (Kutta and Joukowski), chord 2 k where the nose is at -k.
+    fn exact_lift(mu: (f64, f64), chord: f64, alpha: f64) -> f64 {
+        let radius = elementary::hypot(1.0 - mu.0, mu.1);
+        8.0 * PI * radius * elementary::sin(alpha + elementary::asin(mu.1 / radius)) / chord
+    }
+
+    #[test]
+    fn exact_sections_are_met_and_the_error_falls_with_the_square_of_the_panels() {
+        let k = 2.0 - 10.0 / 180.0;
+        let mu = (-0.08, 0.08);
+        let mut errors = Vec::new();
+        for count in [101, 201, 401] {
+            let (x, z) = mapped(k, mu, count);
+            let panels = Panels::new(&x, &z).unwrap();
+            for alpha in [0.0, 6.0_f64.to_radians()] {
+                let found = panels.at(Angle::from_si(alpha));
+                let exact = exact_lift(mu, panels.chord, alpha);
+                errors.push((found.cl / exact - 1.0).abs());
+                if count == 201 {
+                    assert!(
+                        (found.cl / exact - 1.0).abs() < 1e-3,
+                        "{alpha} {} {exact}",
+                        found.cl
+                    );
+                }
+            }
+        }
+        assert!(
+            errors[0] / errors[2] > 2.8 && errors[2] / errors[4] > 2.8,
+            "{errors:?}"
+        );
+    }
+
+    #[test]
+    fn a_cusped_section_is_met_to_half_a_per_cent() {
+        let mu = (-0.1, 0.1);
+        let (x, z) = mapped(2.0, mu, 201);
+        let panels = Panels::new(&x, &z).unwrap();
+        let alpha = 5.0_f64.to_radians();
+        let exact = exact_lift(mu, panels.chord, alpha);
+        let found = panels.at(Angle::from_si(alpha));
+        assert!(
+            (found.cl / exact - 1.0).abs() < 5e-3,
+            "{} {exact}",
+            found.cl
+        );
+    }
+
+    /// Moment about (-k/2, 0) on the chord 2k by Blasius' theorem: -0.141610309 of the Joukowski section at 5 deg,
+    /// -0.126327506 of the Karman-Trefftz section (10 deg at the edge) at 6 deg.
+    #[test]
+    fn moments_of_exact_sections_are_met() {
+        for (k, mu, alpha, exact) in [
+            (2.0, (-0.1, 0.1), 5.0_f64, -0.141_610_309),
+            (2.0 - 10.0 / 180.0, (-0.08, 0.08), 6.0, -0.126_327_506),
+        ] {
+            let (x, z) = mapped(k, mu, 201);
+            let panels = Panels::new(&x, &z).unwrap();
+            let alpha = alpha.to_radians();
+            let found = panels.at(Angle::from_si(alpha));
+            let lift = found.cl * panels.chord;
+            let (fx, fz) = (
+                -lift * elementary::sin(alpha),
+                lift * elementary::cos(alpha),
+            );
+            let arm = (panels.quarter.0 + k / 2.0, panels.quarter.1);
+            let moment = found.cm_quarter * panels.chord * panels.chord + arm.1 * fx - arm.0 * fz;
+            let cm = moment / (4.0 * k * k);
+            let within = if k == 2.0 { 5e-3 } else { 1e-3 };
+            assert!((cm / exact - 1.0).abs() < within, "{cm} {exact}");
+        }
+    }
+
+    #[test]
+    fn the_other_way_round_gives_the_same() {
+        let points = super::super::section_points("4412", 101);
+        let one = Panels::new(&points.x, &points.z)
+            .unwrap()
+            .at(Angle::from_si(0.05));
+        let (x, z): (Vec<f64>, Vec<f64>) = points
+            .x
+            .iter()
+            .copied()
+            .zip(points.z.iter().copied())
+            .rev()
+            .unzip();
+        let other = Panels::new(&x, &z).unwrap().at(Angle::from_si(0.05));
+        assert!((one.cl - other.cl).abs() < 1e-9);
+        assert!((one.cp[10] - other.cp[90]).abs() < 1e-9);
+        assert!((one.cm_quarter - other.cm_quarter).abs() < 1e-9);
+    }
+
+    #[test]
+    fn bad_contours_are_named() {
+        let points = super::super::section_points("2412", 41);
+        let with = |change: fn(&mut Vec<f64>, &mut Vec<f64>)| {
+            let (mut x, mut z) = (points.x.clone(), points.z.clone());
+            change(&mut x, &mut z);
+            Panels::new(&x, &z).err()
+        };
+        assert_eq!(
+            with(|x, z| {
+                x[5] = x[4];
+                z[5] = z[4];
+            }),
+            Some(Trouble::Repeated)
+        );
+        assert_eq!(
+            with(|x, z| {
+                x.swap(5, 8);
+                z.swap(5, 8);
+            }),
+            Some(Trouble::Crossing)
+        );
+        assert_eq!(
+            with(|x, z| {
+                x.truncate(25);
+                z.truncate(25);
+            }),
+            Some(Trouble::Open)
+        );
+        assert_eq!(
+            with(|x, z| {
+                x.truncate(4);
+                z.truncate(4);
+            }),
+            Some(Trouble::TooFew)
+        );
+        assert_eq!(with(|x, _| x[3] = f64::NAN), Some(Trouble::TooFew));
+    }
+}
