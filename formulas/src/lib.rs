@@ -11,6 +11,7 @@ pub mod check;
 pub mod diagnostics;
 pub mod graph;
 pub mod lex;
+pub mod missing;
 pub mod names;
 mod nearest;
 pub mod numbers;

@@ -40,6 +40,8 @@ pub struct Program {
     pub freebodies: Vec<Freebody>,
     /// The `unknown` statements.
     pub unknowns: Vec<Unknown>,
+    /// Calls of functions that say where their method holds.
+    pub guards: Vec<Guard>,
     /// The inputs that carry a tolerance.
     pub tolerances: Vec<Tolerance>,
     /// Significant figures shown.
@@ -401,6 +403,21 @@ pub struct FreebodyEntry {
     pub at: Option<NodeId>,
     /// Unit of the station.
     pub at_unit: Option<ShownUnit>,
+}
+
+/// A call whose arguments are looked at: outside the range of its method there is advice.
+#[derive(Clone, Debug)]
+pub struct Guard {
+    /// The statement.
+    pub statement: usize,
+    /// The place of the call.
+    pub span: Span,
+    /// The function.
+    pub entry: &'static Entry,
+    /// Its arguments, with the units in which they are shown.
+    pub arguments: Vec<Option<(NodeId, Option<ShownUnit>)>>,
+    /// The axes of all of them.
+    pub axes: AxisSet,
 }
 
 /// An input with `+/-`.

@@ -175,7 +175,7 @@ fn stages_use_only_earlier_ones() {
         ][..],
         &["lex"],
         &["parse", "print"],
-        &["values", "catalogue"],
+        &["values", "missing", "catalogue"],
         &["program", "used"],
         &["names", "graph", "check", "plan", "run"],
         &["diagnostics"],

@@ -10,7 +10,7 @@ use crate::quantity::{Angle, PerAngle, Typed};
 /// Intervals of Simpson's rule over a smooth stretch of a designation's mean line.
 const STRETCH: usize = 2_000;
 /// The same between two points of a mean line.
-const BETWEEN: usize = 40;
+const BETWEEN: usize = 200;
 
 /// What thin-airfoil theory says of a mean line.
 #[derive(Clone, Copy, PartialEq, Debug)]

@@ -30,8 +30,7 @@ pub(super) static ROWS: &[Entry] = &[
         "definition of the mean aerodynamic chord, as in every handbook",
         "table station | y [ft] | c [ft] | x [ft] ; drawing of the wing\n\
          1 | 0 | 5.0 | 4.9\n\
-         2 | 6 | 5.0 | 4.9\n\
-         3 | 14 | 3.6 | 5.3\n\
+         2 | 14 | 3.6 | 5.3\n\
          end\n\
          wing = planform(y, c, x over station)\n\
          S [ft^2] = wing.area\n"),

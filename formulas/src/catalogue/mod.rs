@@ -11,8 +11,8 @@ mod macros;
 mod mass;
 mod moment;
 mod row;
-mod structure;
 mod section;
+mod structure;
 mod tail;
 mod wing;
 

@@ -1,20 +1,19 @@
 //! Sections: thin-airfoil theory, ordinates, flaps, vortex panels.
 
 use super::macros::{
-    Argument, along, at, each, entry, field, field_of, line, made, numbers, of_first, one, parameter, put_along, within,
+    Argument, along, at, each, entry, field, field_of, line, made, numbers, of_first, one,
+    parameter, put_along, within,
 };
 use super::row::{Compute, Entry, Field, Makes, Parameter, Prepared, Wants};
+use crate::missing::lost;
 use crate::problem::Cause;
-use crate::run::missing::lost;
 use engine::quantity::{Angle, PerAngle, Typed};
 use engine::section::{self, Designation, Panels, ThinSection, Trouble};
 
 const GROUP: &str = "Sections";
-const THIN: &str =
-    "Small camber, small angles, attached flow; measured moments differ by up to 0.01, and the measured lift slope is some \
+const THIN: &str = "Small camber, small angles, attached flow; measured moments differ by up to 0.01, and the measured lift slope is some \
      per cent below 2 pi.";
-const GLAUERT: &str =
-    "H. Glauert, The Elements of Aerofoil and Airscrew Theory, chapter VII; NACA Reports 460 and 537";
+const GLAUERT: &str = "H. Glauert, The Elements of Aerofoil and Airscrew Theory, chapter VII; NACA Reports 460 and 537";
 
 /// A coordinate: a length or a part of the chord, in one unit with its fellows.
 const fn coordinate(name: &'static str) -> Parameter {
@@ -35,8 +34,14 @@ const DESIGNATION: Parameter = Parameter {
 /// The results of thin-airfoil theory.
 const THIN_FIELDS: [Field; 5] = [
     field_of::<Angle>("alpha_zero_lift", "angle of no lift"),
-    field_of::<f64>("cm_quarter", "moment coefficient about the quarter chord, nose up"),
-    field_of::<f64>("cl_ideal", "lift coefficient at which the flow meets the leading edge smoothly"),
+    field_of::<f64>(
+        "cm_quarter",
+        "moment coefficient about the quarter chord, nose up",
+    ),
+    field_of::<f64>(
+        "cl_ideal",
+        "lift coefficient at which the flow meets the leading edge smoothly",
+    ),
     field_of::<Angle>("alpha_ideal", "angle of attack at which it does"),
     field_of::<PerAngle>("lift_slope", "2 pi"),
 ];
@@ -93,11 +98,9 @@ pub(super) static ROWS: &[Entry] = &[
         "table point | x | z ; camber line, drawing of the rib\n\
          1 | 0 | 0\n\
          2 | 0.3 | 0.021\n\
-         3 | 0.6 | 0.018\n\
-         4 | 1 | 0\n\
+         3 | 1 | 0\n\
          end\n\
-         s = thin_section_of(x, z over point)\n\
-         cm = s.cm_quarter\n"),
+         s = thin_section_of(x, z over point)\n"),
     Entry {
         makes: Some(Makes::Count(1)),
         ..entry!(GROUP, section_points,

@@ -1,17 +1,61 @@
 //! Wing and body: lift slopes, the lifting line, wing moments, spanwise loads, moments of bodies.
 
 use super::macros::{
-    Argument, along, at, each, entry, field, line, numbers, one, parameter, points, positive,
+    Argument, along, at, each, entry, field, line, made, numbers, one, parameter, points, positive,
     put_along, within,
 };
-use super::row::{Compute, Entry, Field, Parameter, Prepared};
+use super::row::{Compute, Entry, Field, Line, Makes, Parameter, Prepared, Wants};
 use engine::body;
 use engine::quantity::{Angle, Area, Force, ForcePerLength, Length, PerAngle, Typed};
-use engine::wing::{self, LiftingLine};
+use engine::wing::{self, LiftingLine, LiftingSurfaces, Stations};
 
 const GROUP: &str = "Wing and body";
 const TWO_PI: f64 = 2.0 * std::f64::consts::PI;
 const STATIONS: &str = "Stations of one half from root to tip, everything straight between them; two at one place hold a jump.";
+
+const LATTICE: &str = "J. J. Bertin and M. L. Smith, Aerodynamics for Engineers (vortex lattice)";
+
+/// The text by which stations are told apart.
+const SURFACE: Parameter = Parameter {
+    name: "surface",
+    wants: Wants::Text,
+    line: true,
+    ..<f64 as Argument>::PARAMETER
+};
+
+/// The stations of each surface, in the order of first appearance; texts are told apart by their numbers.
+fn by_surface(given: &[Line<'_>]) -> Vec<Stations> {
+    let marks = given.first().copied().unwrap_or_default();
+    let mut seen: Vec<f64> = Vec::new();
+    for mark in marks {
+        if !seen.contains(mark) {
+            seen.push(*mark);
+        }
+    }
+    let stations = |mark: &f64| {
+        let own = |index: usize| -> Vec<f64> {
+            let values: Vec<f64> = line(given, index);
+            values
+                .into_iter()
+                .zip(marks)
+                .filter(|(_, m)| *m == mark)
+                .map(|(v, _)| v)
+                .collect()
+        };
+        let lengths = |index: usize| own(index).into_iter().map(Length::from_si).collect();
+        let angles = |index: usize| own(index).into_iter().map(Angle::from_si).collect();
+        Stations {
+            y: lengths(1),
+            z: lengths(2),
+            chord: lengths(3),
+            x_le: lengths(4),
+            twist: angles(5),
+            zero_lift: angles(6),
+            cm: own(7),
+        }
+    };
+    seen.iter().map(stations).collect()
+}
 
 /// A result along the stations.
 const fn station_field<T: Typed>(name: &'static str, what: &'static str) -> Field {
@@ -41,7 +85,8 @@ pub(super) static ROWS: &[Entry] = &[
             "a0/(1 + a0/(pi A)).",
             "Unswept wings of an aspect ratio of 4 and more, incompressible, attached flow.",
             "Prandtl's lifting-line theory",
-            "a_w = elliptic_lift_slope(6.2)\n"),
+            "A = 6.2 ; drawing of the wing\n\
+             a_w = elliptic_lift_slope(A)\n"),
     ),
     entry!(GROUP, lifting_line,
         &[parameter!(y: [Length]), parameter!(chord: [Length]), parameter!(twist: [Angle]),
@@ -85,6 +130,103 @@ pub(super) static ROWS: &[Entry] = &[
          end\n\
          wing = lifting_line(y, c, eps, a0, 6.1 /rad, 4 deg over station)\n\
          CL_w = wing.CL\n"),
+    entry!(GROUP, lifting_surface,
+        &[parameter!(y: [Length]), parameter!(chord: [Length]), parameter!(x_le: [Length]), parameter!(twist: [Angle]),
+          parameter!(zero_lift: [Angle]), parameter!(cm: [f64]), parameter!(alpha: Angle), parameter!(x_ref: Length)],
+        &[
+            field!("area", Area, "area of both halves"),
+            field!("mac", Length, "mean aerodynamic chord"),
+            field!("CL", f64, "lift coefficient"),
+            field!("CL_alpha", PerAngle, "lift slope"),
+            field!("Cm", f64, "moment coefficient about x_ref, nose up"),
+            field!("Cm_alpha", PerAngle, "its slope"),
+            field!("x_ac", Length, "aerodynamic centre"),
+            field!("CDi", f64, "coefficient of induced drag"),
+            station_field::<f64>("cl", "section lift coefficient"),
+        ],
+        Compute::Prepared(Prepared {
+            swept: &[6, 7],
+            prepare: |given, _| {
+                let count = given.first().map_or(0, |y| y.len());
+                Box::new(LiftingSurfaces::new(&[Stations {
+                    y: line(given, 0),
+                    z: vec![Length::from_si(0.0); count],
+                    chord: line(given, 1),
+                    x_le: line(given, 2),
+                    twist: line(given, 3),
+                    zero_lift: line(given, 4),
+                    cm: line(given, 5),
+                }]))
+            },
+            apply: |wing, given, out| {
+                let wing = wing.downcast_ref::<Option<LiftingSurfaces>>().and_then(Option::as_ref);
+                let stations = given.first().map_or(0, |y| y.len());
+                let Some(found) = wing.map(|wing| wing.at(one(given, 6), one(given, 7))) else {
+                    return put_along(out, std::iter::repeat_n(vec![f64::NAN; stations.max(1)], 9));
+                };
+                let single = [found.area.si(), found.mac.si(), found.CL, found.CL_alpha.si(), found.Cm,
+                    found.Cm_alpha.si(), found.x_ac.si(), found.CDi];
+                put_along(out, single.map(|v| vec![v]).into_iter().chain(found.cl));
+            },
+        });
+        "Lift, moment and induced drag of a wing of any sweep, taper and twist.",
+        "Vortex lattice, six by 36 panels over the half span, section moments included; area and mean chord of the planform \
+         are the reference. Stations of one half from root to tip; alpha of the datum line, twist against it, zero_lift \
+         against the section's chord line; moments about x_ref, nose up.",
+        "Symmetrical, incompressible, attached flow at small angles, section slopes of 2 pi; lift slope within about 1 %, \
+         induced drag within about 2 %.",
+        LATTICE,
+        "table station | y [ft] | c [ft] | x [ft] | eps [deg] | a0 [deg] | cm ; drawing of the wing\n\
+         1 | 0 | 5.0 | 4.9 | 0 | -2.1 | -0.05\n\
+         2 | 14 | 3.6 | 6.8 | -2 | -2.1 | -0.05\n\
+         end\n\
+         w = lifting_surface(y, c, x, eps, a0, cm, 4 deg, 6 ft over station)\n\
+         CL_w = w.CL\n"),
+    Entry {
+        makes: Some(Makes::Texts(0)),
+        ..entry!(GROUP, lifting_surfaces,
+            &[SURFACE, parameter!(y: [Length]), parameter!(z: [Length]), parameter!(chord: [Length]),
+              parameter!(x_le: [Length]), parameter!(twist: [Angle]), parameter!(zero_lift: [Angle]), parameter!(cm: [f64]),
+              parameter!(alpha: Angle), parameter!(x_ref: Length)],
+            &[
+                field!("CL", f64, "lift coefficient of all, on the area of the largest surface"),
+                field!("Cm", f64, "moment coefficient about x_ref, nose up"),
+                field!("CL_alpha", PerAngle, "lift slope"),
+                field!("Cm_alpha", PerAngle, "slope of the moment"),
+                field!("x_np", Length, "neutral point"),
+                made(field!("CL_surface", f64, "lift coefficient of a surface on its own area")),
+                made(field!("downwash", Angle, "downwash at a surface from the others")),
+                made(field!("downwash_slope", f64, "its slope with the angle of attack")),
+            ],
+            Compute::Prepared(Prepared {
+                swept: &[8, 9],
+                prepare: |given, _| Box::new(LiftingSurfaces::new(&by_surface(given))),
+                apply: |wing, given, out| {
+                    let wing = wing.downcast_ref::<Option<LiftingSurfaces>>().and_then(Option::as_ref);
+                    let stations = given.first().map_or(0, |y| y.len());
+                    let Some(found) = wing.map(|wing| wing.at(one(given, 8), one(given, 9))) else {
+                        return put_along(out, std::iter::repeat_n(vec![f64::NAN; stations.max(1)], 8));
+                    };
+                    let single = [found.CL, found.Cm, found.CL_alpha.si(), found.Cm_alpha.si(), found.x_ac.si()];
+                    let made = [found.CL_surface, numbers(found.downwash), found.downwash_slope];
+                    put_along(out, single.map(|v| vec![v]).into_iter().chain(made));
+                },
+            });
+            "Lift, moment and neutral point of wing and tail or canard together.",
+            "Vortex lattice of all surfaces with their influence on each other; surface is a text along the stations, and the \
+             axis of its texts is named as the result. Area and mean chord of the largest surface are the reference; the \
+             downwash is the mean over a surface's quarter chord from the others, positive downward, upwash negative.",
+            "Symmetrical, incompressible, attached flow at small angles, straight wakes, no body; a tail close to the height of \
+             the wing's wake is less well met.",
+            LATTICE,
+            "table station | unit | y [ft] | z [ft] | c [ft] | x [ft] | i [deg] ; drawings\n\
+             1 | \"wing\" | 0 | 0 | 4.6 | 5 | 2\n\
+             2 | \"wing\" | 14 | 0.6 | 4.6 | 5 | 2\n\
+             3 | \"tail\" | 0 | 1 | 2.6 | 16.6 | -1\n\
+             4 | \"tail\" | 4.6 | 1 | 2.6 | 16.6 | -1\n\
+             end\n\
+             a = lifting_surfaces(unit, y, z, c, x, i, 0 deg, 0, 3 deg, 6 ft over station)\n")
+    },
     points!(GROUP, wing::wing_moment(y: [Length], chord: [Length], x_le: [Length], cm: [f64], cl_basic: [f64],
             cl_additional: [f64]) -> {
             Cm0: f64 = "moment coefficient about the aerodynamic centre, nose up, on S and mac of the planform",
@@ -121,7 +263,7 @@ pub(super) static ROWS: &[Entry] = &[
          w [lb/ft] = schrenk_load(y, c, 2100 lb over station)\n"),
     within(
         |given| (0.1..=0.7).contains(&at(given, 4)),
-        "has values of K_f only for a quarter chord of the wing root from 0.1 to 0.7 of the body's length",
+        "holds for a quarter chord of the wing root from 0.1 to 0.7 of the body's length",
         each!(GROUP, body::body_moment_slope(length: Length, width: Length, wing_area: Area, mac: Length,
                 root_quarter_fraction: f64) -> PerAngle;
             "Moment slope of a body, per radian of wing angle.",
@@ -129,7 +271,8 @@ pub(super) static ROWS: &[Entry] = &[
              at 0.1, 0.2, 0.3, 0.5 and 0.7 of the length.",
             "A quarter chord of the wing root from 0.1 to 0.7 of the body's length; read off a figure, good to about 5 %.",
             "R. R. Gilruth and M. D. White, NACA TR 711; the values of K_f from memory",
-            "Cm_b = body_moment_slope(19 ft, 2.6 ft, 142 ft^2, 4.6 ft, 0.3)\n"),
+            "w = 2.6 ft ; drawing of the fuselage\n\
+             Cm_b = body_moment_slope(19 ft, w, 142 ft^2, 4.6 ft, 0.3)\n"),
     ),
     entry!(GROUP, slender_body_moment_slope,
         &[parameter!(x: [Length]), parameter!(width: [Length]), parameter!(flow_slope: [f64]),
@@ -149,8 +292,7 @@ pub(super) static ROWS: &[Entry] = &[
         "table frame | x [ft] | w [ft] | f ; drawing of the fuselage\n\
          1 | 0 | 1.2 | 1.1\n\
          2 | 4 | 2.6 | 1.5\n\
-         3 | 10 | 1.9 | 0.3\n\
-         4 | 18 | 0.6 | 0.6\n\
+         3 | 18 | 0.6 | 0.6\n\
          end\n\
          Cm_b = slender_body_moment_slope(x, w, f, 142 ft^2, 4.6 ft over frame)\n"),
     entry!(GROUP, body_moment_zero,

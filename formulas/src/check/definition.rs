@@ -42,7 +42,7 @@ impl Checker<'_> {
             .is_some_and(|s| s.statement == self.statement);
         let input = self.is_input();
         self.making = self.making_of(definition).filter(|_| stands);
-        if self.making.is_some() {
+        if self.making.is_some_and(|(_, axis)| axis.is_some()) {
             self.define_axis(&symbol.text, symbol.span);
         }
         let value = match self.bracket(definition.unit.as_ref(), &symbol.text) {

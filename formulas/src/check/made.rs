@@ -129,7 +129,8 @@ impl Checker<'_> {
             return Some(None);
         }
         match self.making.take() {
-            Some((place, axis)) if place == span => Some(Some(axis)),
+            // Where the axis could not be declared, that was told there.
+            Some((place, axis)) if place == span => axis.map(Some),
             _ => {
                 let fault = Fault::MadeAxisPlace {
                     function: entry.name.to_string(),
@@ -141,7 +142,7 @@ impl Checker<'_> {
     }
 
     /// The axis that a definition makes, and the place of the call that makes it.
-    pub(super) fn making_of(&self, definition: &Definition) -> Option<(Span, AxisId)> {
+    pub(super) fn making_of(&self, definition: &Definition) -> Option<(Span, Option<AxisId>)> {
         let DefinitionValue::One(Toleranced { value, .. }) = &definition.value else {
             return None;
         };
@@ -149,7 +150,7 @@ impl Checker<'_> {
             return None;
         };
         self.row_that_makes(function)?;
-        let axis = *self.axis_of_symbol.get(&definition.symbol.text)?;
+        let axis = self.axis_of_symbol.get(&definition.symbol.text).copied();
         Some((value.span, axis))
     }
 }

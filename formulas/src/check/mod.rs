@@ -154,7 +154,7 @@ pub(crate) struct Checker<'a> {
     pub(crate) meanings: Vec<Meaning>,
     pub(crate) axis_of_symbol: HashMap<String, AxisId>,
     /// The axis that the line in hand makes, and the place of the call that makes it.
-    making: Option<(Span, AxisId)>,
+    making: Option<(Span, Option<AxisId>)>,
     pub(crate) frames: Vec<Frame>,
     pub(crate) written_out: u32,
     pub(crate) prefer: Vec<ShownUnit>,

@@ -30,6 +30,7 @@ pub fn plan(program: &Program) -> Plan {
     lowering.quantity = None;
     lowering.solves();
     lowering.judged();
+    lowering.guards();
     for tolerance in &program.tolerances {
         if let crate::program::ToleranceWidth::Node(node) = tolerance.width {
             lowering.slot(node);
@@ -153,6 +154,18 @@ impl Lowering<'_> {
                 && !body.items.is_empty()
             {
                 self.judge(Judged::Freebody(at), body.axes, slots);
+            }
+        }
+    }
+
+    /// Calls whose arguments are looked at.
+    fn guards(&mut self) {
+        let program = self.program;
+        for (at, guard) in program.guards.iter().enumerate() {
+            let nodes = guard.arguments.iter().flatten().map(|(node, _)| *node);
+            let slots: Vec<Option<SlotId>> = nodes.map(|n| self.slot(n)).collect();
+            if let Some(slots) = slots.into_iter().collect::<Option<Vec<_>>>() {
+                self.judge(Judged::Guard(at), guard.axes, slots);
             }
         }
     }

@@ -124,6 +124,8 @@ pub enum Judged {
     Governing(usize),
     Requirement(usize),
     Freebody(usize),
+    /// A call, by its index among the guards.
+    Guard(usize),
 }
 
 impl Plan {

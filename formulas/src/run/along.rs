@@ -1,8 +1,8 @@
 //! Methods along one axis: integrals by straight lines, differences, least squares.
 
 use super::feed::Feed;
-use super::missing::{lost, of_operands};
 use crate::axes::{AxisId, Shape};
+use crate::missing::{lost, of_operands};
 use crate::problem::Cause;
 use crate::program::Along;
 use crate::values::NONE;

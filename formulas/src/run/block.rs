@@ -4,12 +4,12 @@
 use super::feed::Feed;
 use super::kernel::{self, Arguments, Stack};
 use super::look::Look;
-use super::missing;
 use super::pick::Table;
 use super::wide::{self, Source};
 use super::{Machine, scalar};
 use crate::axes::{AxisSet, Shape};
 use crate::catalogue::Compute;
+use crate::missing;
 use crate::plan::code::{Fused, Op, Operand, Register, Scalar};
 use crate::plan::{Instruction, SlotId, Step, Work};
 use crate::problem::{Cause, Fault};

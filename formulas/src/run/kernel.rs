@@ -1,10 +1,10 @@
 //! A line value by value: what a block whose result holds anything but finite numbers is worked out with. Every
 //! operation knows what a missing operand makes of it, and a value lost here carries its cause.
 
-use super::missing::{lost, of_operands};
 use super::scalar;
 use super::wide::Source;
 use crate::catalogue::{Compute, Entry};
+use crate::missing::{lost, of_operands};
 use crate::plan::Instruction;
 use crate::problem::Cause;
 use crate::syntax::BinaryOp;
@@ -290,7 +290,10 @@ impl<'t> Arguments<'t> {
             None => {
                 compute(&self.numbers, &self.texts, &mut self.results);
                 for value in self.results.iter_mut() {
-                    *value = finite_or(*value + 0.0, self.cause);
+                    // What a function says of its own reason stands.
+                    if crate::missing::cause(*value).is_none() {
+                        *value = finite_or(*value + 0.0, self.cause);
+                    }
                 }
             }
         }

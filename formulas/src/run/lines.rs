@@ -2,9 +2,9 @@
 
 use super::feed::Feed;
 use super::kernel::Arguments;
-use super::missing::{lost, of_operands};
 use crate::axes::Shape;
 use crate::catalogue::{Compute, Entry, Field, Wants};
+use crate::missing::{lost, of_operands};
 use crate::problem::Cause;
 use crate::values::is_excluded;
 
@@ -184,7 +184,9 @@ impl<'t> Given<'t> {
             }
             Compute::Each(_) | Compute::Language => {}
         }
-        for value in results.iter_mut().flatten() {
+        // What a function says of its own reason stands.
+        let settled = |v: &&mut f64| crate::missing::cause(**v).is_none();
+        for value in results.iter_mut().flatten().filter(settled) {
             *value = if value.is_finite() {
                 *value + 0.0
             } else {

@@ -6,7 +6,7 @@ use super::wide::Source;
 use super::{scalar, take_value};
 use crate::axes::Shape;
 use crate::plan::{Judged, Plan, SlotId, Step, Work};
-use crate::program::{EntryKind, Program};
+use crate::program::{EntryKind, Guard, Program};
 use crate::syntax::BinaryOp;
 use crate::values::{FreebodyValues, RequirementValues, Summary, WorstCondition, is_excluded};
 
@@ -19,6 +19,7 @@ pub(super) enum Look<'a> {
     Groups(usize, Groups),
     Requirement(usize, RequirementLook),
     Freebody(usize, FreebodyLook),
+    Guard(usize, GuardLook),
 }
 
 impl<'a> Look<'a> {
@@ -53,6 +54,10 @@ impl<'a> Look<'a> {
                     let ops = line.parts.iter().map(|p| p.op).collect();
                     Some(Look::Requirement(*at, RequirementLook::new(shape, ops)))
                 }
+                Judged::Guard(at) => {
+                    let guard = program.guards.get(*at)?;
+                    Some(Look::Guard(*at, GuardLook::new(guard)))
+                }
                 Judged::Freebody(at) => {
                     let items = &program.freebodies.get(*at)?.items;
                     let kinds = items.iter().map(|e| (e.kind, e.at.is_some())).collect();
@@ -72,6 +77,9 @@ impl<'a> Look<'a> {
             Look::Requirement(_, look) => {
                 (0..n).for_each(|i| look.take(start + i, |read| reads[read].at(i)));
             }
+            Look::Guard(_, look) => {
+                (0..n).for_each(|i| look.take(start + i, |read| reads[read].at(i)));
+            }
             Look::Freebody(_, look) => {
                 (0..n).for_each(|i| look.take(start + i, |read| reads[read].at(i)));
             }
@@ -85,6 +93,65 @@ pub(super) enum LookResult {
     Groups(Vec<Summary>),
     Requirement(RequirementValues),
     Freebody(Box<FreebodyLook>),
+    Guard(Outside),
+}
+
+/// Conditions in which a call is outside the range of its method.
+#[derive(Clone, Debug, Default)]
+pub(super) struct Outside {
+    pub(super) count: u64,
+    pub(super) first: Vec<usize>,
+    /// The arguments in the first of them.
+    pub(super) numbers: Vec<f64>,
+}
+
+/// A call whose arguments are looked at.
+pub(super) struct GuardLook {
+    holds: fn(&[f64]) -> bool,
+    /// For each argument whether it is given, and what it is otherwise.
+    given: Vec<(bool, f64)>,
+    numbers: Vec<f64>,
+    pub(super) outside: Outside,
+}
+
+impl GuardLook {
+    fn new(guard: &Guard) -> Self {
+        let pairs = guard.entry.parameters.iter().zip(&guard.arguments);
+        let given = pairs
+            .map(|(p, a)| (a.is_some(), p.default.unwrap_or(f64::NAN)))
+            .collect();
+        GuardLook {
+            holds: guard.entry.validity.map_or(|_| true, |v| v.holds),
+            given,
+            numbers: vec![0.0; guard.entry.parameters.len()],
+            outside: Outside::default(),
+        }
+    }
+
+    fn take(&mut self, condition: usize, read: impl Fn(usize) -> f64) {
+        let mut next = 0;
+        for (number, (given, default)) in self.numbers.iter_mut().zip(&self.given) {
+            *number = *default;
+            if *given {
+                *number = read(next);
+                next += 1;
+                // An argument without a value has no result, and is told of there.
+                if number.is_nan() {
+                    return;
+                }
+            }
+        }
+        if (self.holds)(&self.numbers) {
+            return;
+        }
+        self.outside.count += 1;
+        if self.outside.first.is_empty() {
+            self.outside.numbers.clone_from(&self.numbers);
+        }
+        if self.outside.first.len() < 5 {
+            self.outside.first.push(condition);
+        }
+    }
 }
 
 /// Counts and extremes for each condition of fewer axes.

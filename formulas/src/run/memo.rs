@@ -524,6 +524,13 @@ impl Machine<'_> {
                 let parts = self.program.requirements.get(at).map(|r| &r.parts);
                 words.extend(parts.into_iter().flatten().map(|p| p.op as u64));
             }
+            Judged::Guard(at) => {
+                words.push(3);
+                let guard = self.program.guards.get(at);
+                words.extend(guard.map(|g| std::ptr::from_ref(g.entry).addr() as u64));
+                let given = guard.into_iter().flat_map(|g| &g.arguments);
+                words.extend(given.map(|a| u64::from(a.is_some())));
+            }
             Judged::Freebody(at) => {
                 words.push(2);
                 let items = self.program.freebodies.get(at).map(|b| &b.items);

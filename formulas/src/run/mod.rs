@@ -7,7 +7,6 @@ mod kernel;
 mod lines;
 mod look;
 mod memo;
-pub mod missing;
 mod outputs;
 mod overlay;
 mod pick;
@@ -95,6 +94,7 @@ struct Found {
     groups: Vec<Option<Vec<Summary>>>,
     requirements: Vec<RequirementValues>,
     freebodies: Vec<Option<look::FreebodyLook>>,
+    guards: Vec<look::Outside>,
 }
 
 /// Runs a plan from the start.
@@ -147,6 +147,7 @@ impl<'a> Machine<'a> {
                 groups: vec![None; program.governing.len()],
                 requirements: program.requirements.iter().map(not_judged).collect(),
                 freebodies: program.freebodies.iter().map(|_| None).collect(),
+                guards: vec![look::Outside::default(); program.guards.len()],
             },
             lines,
             recorded: None,

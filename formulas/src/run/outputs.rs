@@ -1,7 +1,7 @@
 //! Governing conditions, requirements, free bodies.
 
 use super::feed::Feed;
-use super::look::{CLOSE, Look, LookResult, Sums, ratio, sums};
+use super::look::{CLOSE, Look, LookResult, Outside, Sums, ratio, sums};
 use super::{Machine, conditions};
 use crate::axes::Shape;
 use crate::names::located;
@@ -55,10 +55,46 @@ impl Machine<'_> {
     pub(super) fn finish_look(&mut self, look: Look<'_>) {
         match look {
             Look::Reduce(slot, reducer) => self.finish_small(slot, reducer.finish()),
+            Look::Guard(at, look) => {
+                self.outside(at, &look.outside);
+                self.found.guards[at] = look.outside;
+            }
             Look::Groups(at, groups) => self.found.groups[at] = Some(groups.summaries),
             Look::Requirement(at, look) => self.found.requirements[at] = look.finish(),
             Look::Freebody(at, look) => self.found.freebodies[at] = Some(look),
         }
+    }
+
+    /// Advice on a call outside the range of its method, with the arguments of the first condition concerned.
+    fn outside(&mut self, at: usize, outside: &Outside) {
+        let Some(guard) = self.program.guards.get(at).filter(|_| outside.count > 0) else {
+            return;
+        };
+        let shape = Shape::of(guard.axes, &self.plan.lengths);
+        let arguments = guard.entry.parameters.iter().zip(&guard.arguments);
+        let named: Vec<String> = arguments
+            .zip(&outside.numbers)
+            .filter_map(|((parameter, argument), value)| {
+                let (_, unit) = argument.as_ref()?;
+                if parameter.wants == crate::catalogue::Wants::Text {
+                    return None;
+                }
+                let shown = unit.as_ref().map_or(*value, |u| u.unit.from_si(*value));
+                let unit = unit
+                    .as_ref()
+                    .map_or(String::new(), |u| format!(" {}", u.text));
+                let number = crate::numbers::shown(shown, self.program.digits);
+                Some(format!("{} {number}{unit}", parameter.name))
+            })
+            .collect();
+        let advice = guard.entry.validity.map_or("", |v| v.advice);
+        let fault = Fault::Validity {
+            function: guard.entry.name.to_string(),
+            text: format!("{advice} (here {})", named.join(", ")),
+            conditions: conditions(self.program, &shape, outside.count, &outside.first),
+        };
+        self.problems
+            .push(located(guard.statement, guard.span, fault));
     }
 
     /// Takes over what a look has found before.
@@ -69,6 +105,10 @@ impl Machine<'_> {
             }
             (Judged::Requirement(at), LookResult::Requirement(result)) => {
                 self.found.requirements[at] = result;
+            }
+            (Judged::Guard(at), LookResult::Guard(outside)) => {
+                self.outside(at, &outside);
+                self.found.guards[at] = outside;
             }
             (Judged::Freebody(at), LookResult::Freebody(look)) => {
                 self.found.freebodies[at] = Some(*look);
@@ -84,6 +124,7 @@ impl Machine<'_> {
             Judged::Requirement(at) => {
                 LookResult::Requirement(self.found.requirements.get(at)?.clone())
             }
+            Judged::Guard(at) => LookResult::Guard(self.found.guards.get(at)?.clone()),
             Judged::Freebody(at) => {
                 LookResult::Freebody(Box::new(self.found.freebodies.get(at)?.clone()?))
             }

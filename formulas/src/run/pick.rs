@@ -1,8 +1,8 @@
 //! Picking values at positions of axes: by label, nearest, along straight lines, or along a smooth curve.
 
 use super::feed::Feed;
-use super::missing::{lost, of_operands};
 use crate::axes::{AxisId, Shape};
+use crate::missing::{lost, of_operands};
 use crate::plan::Work;
 use crate::problem::Cause;
 use crate::program::{Axis, PickMode};

@@ -168,7 +168,7 @@ fn settle(g: &Gathered, how: Reduction, axes: &[Axis]) -> f64 {
     if result.is_finite() {
         result + 0.0
     } else {
-        super::missing::lost(crate::problem::Cause::Overflow)
+        crate::missing::lost(crate::problem::Cause::Overflow)
     }
 }
 

@@ -2,9 +2,9 @@
 //! of one trial. No search depends on another condition or on an earlier evaluation.
 
 use super::feed::Feed;
-use super::missing::lost;
 use super::{Machine, conditions};
 use crate::axes::Shape;
+use crate::missing::lost;
 use crate::names::located;
 use crate::plan::{SlotId, Solve};
 use crate::problem::{Cause, Fault};

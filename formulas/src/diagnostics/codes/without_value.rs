@@ -32,6 +32,13 @@ fn reason(cause: Cause) -> &'static str {
         Cause::NotCoded => {
             "the set of rules does not have it, or it is not coded: state the factors"
         }
+        Cause::Designation => {
+            "the designation is not one of four or five digits whose mean line is published"
+        }
+        Cause::ContourPoints => "a contour takes at least five points, all of them numbers",
+        Cause::ContourRepeated => "two points of the contour are at one place",
+        Cause::ContourCrossing => "the contour crosses itself",
+        Cause::ContourOpen => "the contour does not come back to the trailing edge where it began",
     }
 }
 

@@ -6,7 +6,7 @@ use crate::values::{EXCLUDED, NONE, is_excluded};
 
 const LOST_BITS: u64 = 0x7ff8_0000_0000_0100;
 
-const CAUSES: [Cause; 8] = [
+const CAUSES: [Cause; 13] = [
     Cause::DivisionByZero,
     Cause::Domain,
     Cause::Overflow,
@@ -15,6 +15,11 @@ const CAUSES: [Cause; 8] = [
     Cause::NoValue,
     Cause::NoSolution,
     Cause::NotCoded,
+    Cause::Designation,
+    Cause::ContourPoints,
+    Cause::ContourRepeated,
+    Cause::ContourCrossing,
+    Cause::ContourOpen,
 ];
 
 /// A value lost here, for a cause.
