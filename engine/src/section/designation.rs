@@ -32,6 +32,7 @@ const PLAIN: [(u32, f64, f64); 5] = [
 ];
 
 /// The same of reflexed lines, with the ratio of the factors behind and ahead: NACA Report 537; NASA TM 4741.
+#[allow(clippy::approx_constant, reason = "a place along the chord, not 1/pi")]
 const REFLEXED: [(u32, f64, f64, f64); 4] = [
     (2, 0.1300, 51.990, 0.000_764),
     (3, 0.2170, 15.793, 0.006_77),
@@ -74,7 +75,7 @@ impl Designation {
     /// Height and slope of the mean line at a place of the chord from 0 to 1.
     pub(super) fn mean_line(&self, x: f64) -> (f64, f64) {
         match self.line {
-            MeanLine::Four { camber, .. } if camber == 0.0 => (0.0, 0.0),
+            MeanLine::Four { camber: 0.0, .. } => (0.0, 0.0),
             MeanLine::Four { camber, place } => {
                 let ahead = 2.0 * place * x - x * x;
                 let part = if x < place {

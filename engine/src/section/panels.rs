@@ -182,7 +182,7 @@ fn check(x: &[f64], z: &[f64]) -> Result<f64, Trouble> {
     let nose = farthest(x, z, edge);
     let chord = elementary::hypot(nose.0 - edge.0, nose.1 - edge.1);
     let apart = |i: usize, j: usize| elementary::hypot(x[i] - x[j], z[i] - z[j]);
-    if !(chord > 0.0) || apart(0, n - 1) > OPEN_MOST * chord {
+    if chord == 0.0 || apart(0, n - 1) > OPEN_MOST * chord {
         return Err(Trouble::Open);
     }
     if (1..n).any(|i| apart(i, i - 1) <= SAME * chord) {

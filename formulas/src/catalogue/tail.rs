@@ -27,7 +27,8 @@ pub(super) static ROWS: &[Entry] = &[
              K_H = (1 - |h/b|)/(2 l/b)^(1/3); tail_arm from the quarter point of the wing's mean chord to that of the tail.",
             "Low speed, a tail aft of the wing, not a canard.",
             "USAF Stability and Control Datcom, 4.4.1",
-            "de = downwash_slope(6.2, 0.7, 29 ft, 0 deg, 11.2 ft, 1.5 ft)\n"),
+            "b = 29 ft ; drawing of the wing\n\
+             de = downwash_slope(6.2, 0.7, b, 0 deg, 11.2 ft, 1.5 ft)\n"),
     ),
     within(
         |given| positive(given, [1]),
