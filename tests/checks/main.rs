@@ -22,13 +22,14 @@ macro_rules! sheet {
 }
 
 /// The sheets, by the name of their file.
-const SHEETS: [(&str, &str); 14] = [
+const SHEETS: [(&str, &str); 16] = [
     sheet!("airspeeds"),
     sheet!("atmosphere"),
     sheet!("balancing-loads"),
     sheet!("envelope"),
     sheet!("general-aviation-airplane"),
     sheet!("load-test"),
+    sheet!("mean-lines"),
     sheet!("mass-and-planform"),
     sheet!("model-and-elevator"),
     sheet!("moment-transfer"),
@@ -37,6 +38,7 @@ const SHEETS: [(&str, &str); 14] = [
     sheet!("trim-problems"),
     sheet!("units"),
     sheet!("wind-tunnel-model"),
+    sheet!("wings"),
 ];
 
 /// The reports of all sheets.

@@ -1,7 +1,7 @@
 //! The rows of the checks: read from the tables beside this file, one row for each value, with its source.
 
 /// The tables, by the name of their file.
-const TABLES: [(&str, &str); 8] = [
+const TABLES: [(&str, &str); 10] = [
     ("moment", include_str!("moment.csv")),
     ("balance", include_str!("balance.csv")),
     ("trim", include_str!("trim.csv")),
@@ -10,6 +10,8 @@ const TABLES: [(&str, &str); 8] = [
     ("units", include_str!("units.csv")),
     ("envelope", include_str!("envelope.csv")),
     ("structure", include_str!("structure.csv")),
+    ("section", include_str!("section.csv")),
+    ("wing", include_str!("wing.csv")),
 ];
 
 /// First line of every table.
