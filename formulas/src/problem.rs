@@ -495,10 +495,6 @@ pub enum Fault {
         text: String,
         conditions: Conditions,
     },
-    /// Read and checked, but not worked out by this version.
-    NotComputed {
-        what: String,
-    },
     /// `basis` is the line that names other rules than those, where there is one.
     RulesMixed {
         rules: Vec<String>,
@@ -543,6 +539,12 @@ pub enum Fault {
     FigureAxes {
         symbol: String,
         axes: Vec<String>,
+    },
+    /// A figure of too many curves or points.
+    FigureLimit {
+        what: &'static str,
+        found: f64,
+        limit: f64,
     },
     // --- other sheets ---
     /// A symbol that another sheet does not give.

@@ -38,6 +38,8 @@ pub struct Program {
     pub requirements: Vec<Requirement>,
     /// The `freebody` statements.
     pub freebodies: Vec<Freebody>,
+    /// The `figure` statements.
+    pub figures: Vec<Figure>,
     /// The `unknown` statements.
     pub unknowns: Vec<Unknown>,
     /// Calls of functions that say where their method holds.
@@ -372,6 +374,42 @@ pub struct Freebody {
     /// The entries; empty where one could not be checked.
     pub items: Vec<FreebodyEntry>,
     /// Axes of all of them together.
+    pub axes: AxisSet,
+}
+
+/// A `figure` statement.
+#[derive(Clone, Debug)]
+pub struct Figure {
+    /// The statement.
+    pub statement: usize,
+    /// Its name.
+    pub name: String,
+    /// What it is drawn against, as typed.
+    pub x_text: String,
+    /// The same, checked; `None` where it or a curve could not be.
+    pub x: Option<FigureEntry>,
+    /// What is drawn; empty where something could not be checked.
+    pub curves: Vec<FigureEntry>,
+    /// The axes for each of whose labels there is a curve.
+    pub each: AxisSet,
+    /// The axis along which curves run; `None` where each is a single point.
+    pub along: Option<AxisId>,
+    /// Whether the points are joined into an outline.
+    pub closed: bool,
+}
+
+/// What a figure draws, or draws it against.
+#[derive(Clone, Debug)]
+pub struct FigureEntry {
+    /// As typed.
+    pub text: String,
+    /// Its value.
+    pub node: NodeId,
+    /// Number or text.
+    pub kind: Kind,
+    /// The unit in which it is shown.
+    pub unit: Option<ShownUnit>,
+    /// Its axes.
     pub axes: AxisSet,
 }
 

@@ -40,6 +40,17 @@ pub struct Values {
     pub requirements: Vec<RequirementValues>,
     /// In the order of `Program::freebodies`.
     pub freebodies: Vec<FreebodyValues>,
+    /// In the order of `Program::figures`.
+    pub figures: Vec<FigureValues>,
+}
+
+/// The columns of a figure; `None` where a line that it rests on failed.
+#[derive(Clone, Debug, Default)]
+pub struct FigureValues {
+    /// What it is drawn against.
+    pub x: Option<Column>,
+    /// What is drawn, in the order of the statement.
+    pub curves: Vec<Option<Column>>,
 }
 
 /// The values of one quantity.

@@ -302,6 +302,19 @@ fn note_outputs(report: &Report, line: u32, out: &mut String) {
         let closes = serde_json::to_string(&body.closes).unwrap_or_default();
         let _ = writeln!(out, "//= closes {closes}{taken}");
     }
+    figures(out, report, line);
+}
+
+fn figures(out: &mut String, report: &Report, line: u32) {
+    for figure in report.figures.iter().filter(|f| f.line == line) {
+        let closed = if figure.closed { ", closed" } else { "" };
+        let x = serde_json::to_string(&figure.x).unwrap_or_default();
+        let _ = writeln!(out, "//= against {x}{closed}");
+        for curve in &figure.curves {
+            let curve = serde_json::to_string(curve).unwrap_or_default();
+            let _ = writeln!(out, "// | {curve}");
+        }
+    }
 }
 
 /// A sheet with the edits of a fix applied.

@@ -141,6 +141,7 @@ fn every_report_fits_the_schema_and_itself() {
         "governing",
         "requirements",
         "freebodies",
+        "figures",
         "findings",
     ] {
         assert!(seen.contains(part), "no case has {part}");

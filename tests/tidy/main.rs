@@ -296,7 +296,6 @@ fn later(code: &str) -> bool {
         code,
         "further-solutions"
             | "equation-count"
-            | "figure-axes"
             | "outside-validity"
             | "memory-limit"
             | "operation-limit"

@@ -9,6 +9,7 @@ mod call;
 mod compare;
 mod definition;
 mod expression;
+mod figure;
 mod general;
 mod linking;
 mod made;

@@ -1,5 +1,6 @@
 //! What a sheet asks of its values: governing conditions, requirements, free bodies; and what is said of it as a whole.
 
+use super::figure::Drawn;
 use super::{Checker, Typed};
 use crate::axes::{AxisSet, Shape};
 use crate::names::{Role, located};
@@ -26,15 +27,19 @@ impl Checker<'_> {
             }
             StatementKind::Require { condition } => self.check_require(condition),
             StatementKind::Freebody { name, items } => self.check_freebody(name, items),
-            StatementKind::Figure { .. } => {
-                let span = Span::new(0, "figure".len());
-                self.report(
-                    span,
-                    Fault::NotComputed {
-                        what: "a figure".to_string(),
-                    },
-                );
-            }
+            StatementKind::Figure {
+                name,
+                curves,
+                against,
+                each,
+                closed,
+            } => self.check_figure(&Drawn {
+                name,
+                curves,
+                against,
+                each,
+                closed: *closed,
+            }),
             _ => {}
         }
     }

@@ -30,6 +30,13 @@ pub fn plan(program: &Program) -> Plan {
     lowering.quantity = None;
     lowering.solves();
     lowering.judged();
+    for entry in program
+        .figures
+        .iter()
+        .flat_map(|f| f.x.iter().chain(&f.curves))
+    {
+        lowering.slot(entry.node);
+    }
     lowering.guards();
     for tolerance in &program.tolerances {
         if let crate::program::ToleranceWidth::Node(node) = tolerance.width {

@@ -1,6 +1,7 @@
 //! Builds the report out of the checked program and its values.
 
 use super::convert::{Scale, condition, extreme};
+use super::figure::figures;
 use super::requirement::{freebodies, requirements};
 use super::sensitivity;
 use super::{
@@ -53,7 +54,7 @@ pub fn build(input: &Input) -> Report {
         governing: governing(input.tree, program, values),
         requirements: requirements(tree, program, values),
         freebodies: freebodies(tree, program, values),
-        figures: Vec::new(),
+        figures: figures(tree, program, values),
         findings: input.findings.clone(),
         digits: match program.digits {
             digits @ 1..=15 => digits,
@@ -216,7 +217,7 @@ fn truth(value: f64) -> Option<bool> {
     (!value.is_nan()).then_some(value != 0.0)
 }
 
-fn value_of_text(program: &Program, value: f64) -> Option<String> {
+pub(super) fn value_of_text(program: &Program, value: f64) -> Option<String> {
     if value.is_nan() || is_excluded(value) {
         return None;
     }

@@ -6,6 +6,7 @@ pub mod cautions;
 pub mod compare;
 mod convert;
 pub mod csv;
+mod figure;
 pub mod form;
 pub mod json;
 mod requirement;
@@ -449,6 +450,8 @@ pub struct Figure {
     pub x: FigureAxis,
     /// Its curves.
     pub curves: Vec<FigureCurve>,
+    /// Whether the points of each curve are joined into an outline.
+    pub closed: bool,
     /// The drawing.
     pub svg: String,
 }

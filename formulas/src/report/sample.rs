@@ -396,5 +396,6 @@ fn values() -> Values {
             open: Conditions::default(),
             without_value: 2,
         }],
+        figures: Vec::new(),
     }
 }

@@ -193,6 +193,11 @@ impl<'a> Machine<'a> {
                 wanted[slot.0 as usize] = true;
             }
         }
+        for figure in &self.program.figures {
+            let entries = figure.x.iter().chain(&figure.curves);
+            let slots = entries.filter_map(|entry| self.slot_of(entry.node));
+            slots.for_each(|slot| wanted[slot.0 as usize] = true);
+        }
         wanted
     }
 

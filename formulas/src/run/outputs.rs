@@ -7,9 +7,9 @@ use crate::axes::Shape;
 use crate::names::located;
 use crate::plan::{Judged, SlotId};
 use crate::problem::Fault;
-use crate::program::{EntryKind, Freebody, FreebodyEntry, NodeId, QuantityId};
+use crate::program::{EntryKind, Figure, FigureEntry, Freebody, FreebodyEntry, NodeId, QuantityId};
 use crate::span::Span;
-use crate::values::{FreebodyValues, GoverningValues, Values};
+use crate::values::{Column, FigureValues, FreebodyValues, GoverningValues, Values};
 use std::rc::Rc;
 
 /// A column and its shape, held while outputs are worked out.
@@ -37,7 +37,22 @@ impl Machine<'_> {
             let result = self.freebody(at);
             values.freebodies.push(result);
         }
+        values.figures = program.figures.iter().map(|f| self.figure(f)).collect();
         self.tolerances(values);
+    }
+
+    fn figure(&self, figure: &Figure) -> FigureValues {
+        let column = |entry: &FigureEntry| {
+            let held = self.held(entry.node)?;
+            Some(Column {
+                shape: held.shape,
+                values: held.values,
+            })
+        };
+        FigureValues {
+            x: figure.x.as_ref().and_then(column),
+            curves: figure.curves.iter().map(column).collect(),
+        }
     }
 
     pub(super) fn held(&self, node: NodeId) -> Option<Held> {

@@ -35,6 +35,7 @@ mod equivalent_with_density;
 mod exponent_not_fixed;
 mod field_of_number;
 mod figure_axes;
+mod figure_limit;
 mod foreign_sign;
 mod free_body_open;
 mod free_body_units;
@@ -61,7 +62,6 @@ mod never_used;
 mod no_statement;
 mod not_a_function;
 mod not_a_pure_number;
-mod not_computed;
 mod number_as_angle;
 mod number_form;
 mod operation_limit;
@@ -202,7 +202,6 @@ pub const CODES: &[&Code] = &[
     &free_body_units::ROW,
     &input_without_source::ROW,
     &outside_validity::ROW,
-    &not_computed::ROW,
     &rules_mixed::ROW,
     &further_solutions::ROW,
     &equation_count::ROW,
@@ -211,6 +210,7 @@ pub const CODES: &[&Code] = &[
     &made_axis_texts::ROW,
     &unknown_limit::ROW,
     &figure_axes::ROW,
+    &figure_limit::ROW,
     &memory_limit::ROW,
     &missing_sheet::ROW,
     &sheet_name::ROW,
@@ -332,7 +332,6 @@ told_by! {
     FreebodyUnits { name } => free_body_units::draft(name),
     InputWithoutSource { symbol } => input_without_source::draft(symbol),
     Validity { function, text, conditions } => outside_validity::draft(function, text, conditions),
-    NotComputed { what } => not_computed::draft(what),
     RulesMixed { rules, basis } => rules_mixed::draft(rules, basis),
     FurtherSolutions { symbol, conditions } => further_solutions::draft(symbol, conditions),
     EquationCount { unknowns, equations } => equation_count::draft(*unknowns, *equations),
@@ -341,6 +340,7 @@ told_by! {
     UnknownLimit { found, limit } => unknown_limit::draft(*found, *limit),
     UnknownCoupled { symbol } => equations_mixed::draft(symbol),
     FigureAxes { symbol, axes } => figure_axes::draft(site, symbol, axes),
+    FigureLimit { what, found, limit } => figure_limit::draft(what, *found, *limit),
     MemoryLimit { symbol } => memory_limit::draft(symbol),
 
     MissingSheet { sheet } => missing_sheet::draft(sheet),
