@@ -3,3 +3,4 @@
 pub mod golden;
 pub mod random;
 pub mod schema;
+pub mod xml;

@@ -201,3 +201,21 @@ fn fits_itself(name: &str, report: &formulas::report::Report) {
     let order = |f: &formulas::diagnostics::Finding| (f.line, f.column, f.code);
     assert!(report.findings.is_sorted_by_key(order), "{name}");
 }
+
+#[test]
+fn every_drawing_is_well_formed_and_holds_no_text_as_markup() {
+    let mut drawn = 0;
+    for file in files() {
+        let text = std::fs::read_to_string(&file).expect("a case file");
+        for case in cases(&text) {
+            let report = case.opened(&case.sheet).report(&[]);
+            for svg in report.figures.iter().map(|f| &f.svg) {
+                let fits = tests::xml::well_formed(svg);
+                assert_eq!(fits, Ok(()), "{}: {svg}", case.name);
+                assert!(!svg.contains("<script"), "{}", case.name);
+                drawn += 1;
+            }
+        }
+    }
+    assert!(drawn >= 20, "only {drawn} drawings");
+}

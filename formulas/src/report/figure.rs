@@ -2,7 +2,7 @@
 
 use super::build::value_of_text;
 use super::convert::{Scale, condition};
-use super::{Figure, FigureAxis, FigureCurve, ValueList};
+use super::{Figure, FigureAxis, FigureCurve, ValueList, svg};
 use crate::axes::{AxisId, AxisSet, Shape};
 use crate::program::{self, FigureEntry, Kind, Program};
 use crate::syntax::Tree;
@@ -16,7 +16,7 @@ pub(super) fn figures(tree: &Tree, program: &Program, values: &Values) -> Vec<Fi
         .map(|(i, line)| {
             let found = values.figures.get(i).unwrap_or(&unknown);
             let unit = line.x.as_ref().and_then(|x| x.unit.as_ref());
-            Figure {
+            let mut figure = Figure {
                 name: line.name.clone(),
                 line: tree.statements.get(line.statement).map_or(0, |s| s.line),
                 x: FigureAxis {
@@ -26,7 +26,9 @@ pub(super) fn figures(tree: &Tree, program: &Program, values: &Values) -> Vec<Fi
                 curves: curves(program, line, found),
                 closed: line.closed,
                 svg: String::new(),
-            }
+            };
+            figure.svg = svg::figure(&figure);
+            figure
         })
         .collect()
 }
@@ -52,6 +54,7 @@ fn curves(program: &Program, line: &program::Figure, found: &FigureValues) -> Ve
                 condition: condition(&program.axes, &each, one),
                 x: cut.values(x, found.x.as_ref()),
                 y: cut.values(y, column),
+                points: cut.labels(),
             });
         }
     }
@@ -75,6 +78,13 @@ impl Cut<'_> {
         }
         let scale = Scale::of(entry.unit.as_ref(), entry.kind);
         ValueList::Numbers(si.map(|v| scale.number(v)).collect())
+    }
+
+    /// The labels of the points; none on an axis of numbers, which say nothing that x does not.
+    fn labels(&self) -> Vec<String> {
+        let axis = self.along.and_then(|a| self.program.axes.get(a.0 as usize));
+        axis.filter(|a| a.values.is_none())
+            .map_or_else(Vec::new, |a| a.labels.clone())
     }
 
     fn value(&self, column: Option<&Column>, point: usize) -> f64 {

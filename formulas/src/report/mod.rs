@@ -13,6 +13,7 @@ mod requirement;
 #[cfg(test)]
 mod sample;
 mod sensitivity;
+pub mod svg;
 pub mod text;
 
 pub use build::{Input, build};
@@ -478,4 +479,7 @@ pub struct FigureCurve {
     pub x: ValueList,
     /// Values of the symbol drawn.
     pub y: ValueList,
+    /// The label of each point along the axis of the curve; for drawing, not part of the JSON.
+    #[serde(skip)]
+    pub points: Vec<String>,
 }
