@@ -305,6 +305,31 @@ impl Sheet {
         report::form(&self.text, &self.tree, &self.program)
     }
 
+    /// The printed report as an HTML document with nothing outside it: figures as vectors, one governing condition
+    /// worked in full, page numbers and digest set in the margins of each page. No script is in it.
+    ///
+    /// # Example
+    /// ```
+    /// let print = formulas::Sheet::open("title Osier & others\nS [ft^2] = 142 ; drawing OS-010\n").print();
+    /// assert!(print.contains("<h1>Osier &amp; others</h1>"));
+    /// ```
+    #[must_use]
+    pub fn print(&self) -> String {
+        let report = self.report(&self.asked);
+        let worked = report.governing.first().and_then(|line| {
+            let ends = [line.largest.as_ref(), line.smallest.as_ref()];
+            let ends = ends.into_iter().flatten();
+            let worst = ends.max_by(|a, b| a.value.abs().total_cmp(&b.value.abs()))?;
+            self.trail(&line.symbol, &worst.condition.0).ok()
+        });
+        report::html::write(&report::html::Input {
+            report: &report,
+            form: &self.form(),
+            tree: &self.tree,
+            worked: worked.as_ref(),
+        })
+    }
+
     /// How a value came about. `condition` names labels of axes; along those that it leaves the condition of largest
     /// magnitude is taken.
     ///

@@ -5,6 +5,7 @@ mod answer;
 mod assist;
 mod marks;
 mod panic;
+mod print;
 mod sheets;
 mod trail;
 
@@ -12,4 +13,5 @@ pub use answer::evaluate;
 pub use assist::{complete, fix, hover};
 pub use marks::{kinds, marks};
 pub use panic::last_panic;
+pub use print::print;
 pub use trail::trail;

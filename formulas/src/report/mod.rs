@@ -8,6 +8,7 @@ mod convert;
 pub mod csv;
 mod figure;
 pub mod form;
+pub mod html;
 pub mod json;
 mod requirement;
 #[cfg(test)]

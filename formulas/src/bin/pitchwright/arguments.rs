@@ -4,7 +4,7 @@ use std::ffi::OsString;
 
 /// How the program is called.
 pub(crate) const USAGE: &str = "\
-usage: pitchwright run SHEET [--text|--json|--csv] [--set SYMBOL=EXPR]... [--quantity SYMBOL]...
+usage: pitchwright run SHEET [--text|--json|--csv|--html] [--set SYMBOL=EXPR]... [--quantity SYMBOL]...
        pitchwright check SHEET...
        pitchwright fix SHEET [--dry-run]
        pitchwright trail SHEET SYMBOL [--at AXIS=LABEL]...
@@ -15,6 +15,7 @@ usage: pitchwright run SHEET [--text|--json|--csv] [--set SYMBOL=EXPR]... [--qua
        pitchwright schema
 
 SHEET may be - for standard input. --csv has the columns symbol, one for each axis, value, unit.
+--html is the printed report, figures in it.
 Exit status: 0 all well, 1 a requirement is not met or not shown, 2 the sheet has an error,
 64 bad usage or an unknown symbol, 66 no such file.
 ";
@@ -45,8 +46,6 @@ pub(crate) enum Command {
     Reference,
     /// The JSON Schema of `run --json`.
     Schema,
-    /// Named in the language's documents, not done by this version.
-    Unsupported(String),
 }
 
 /// How a sheet is to be evaluated.
@@ -67,6 +66,8 @@ pub(crate) enum Format {
     Text,
     Json,
     Csv,
+    /// The printed report.
+    Html,
 }
 
 /// Reads the arguments behind the program's name.
@@ -126,14 +127,12 @@ fn run(words: Words) -> Result<Command, String> {
         ("--text", Format::Text),
         ("--json", Format::Json),
         ("--csv", Format::Csv),
+        ("--html", Format::Html),
     ];
-    if words.has("--html") {
-        return Ok(Command::Unsupported("--html".to_owned()));
-    }
     let mut chosen = formats.iter().filter(|(flag, _)| words.has(flag));
     let format = chosen.next().map_or(Format::Text, |(_, format)| *format);
     if chosen.next().is_some() {
-        return Err("only one of --text, --json and --csv can be given".to_owned());
+        return Err("only one of --text, --json, --csv and --html can be given".to_owned());
     }
     let set = words.pairs_of("--set", "symbol and value")?;
     let quantities = words.values_of("--quantity");
@@ -334,9 +333,9 @@ mod tests {
             Ok(Command::Check(vec!["-".into(), "--json".into()]))
         );
         assert_eq!(parsed(&["run", "--help"]), Ok(Command::Help));
-        assert_eq!(
-            parsed(&["run", "a", "--html"]),
-            Ok(Command::Unsupported("--html".to_owned()))
-        );
+        let Ok(Command::Run(run)) = parsed(&["run", "a", "--html"]) else {
+            panic!("a run");
+        };
+        assert_eq!(run.format, Format::Html);
     }
 }

@@ -29,6 +29,7 @@ pub(crate) fn run(run: &Run) -> Outcome {
     let results = match run.format {
         Format::Text => text::write(&report, &sheet.form()),
         Format::Json => json::write(&report).unwrap_or_default() + "\n",
+        Format::Html => sheet.print(),
         Format::Csv => csv::write(&complete(&loaded, &run.set, &report)),
     };
     Outcome {

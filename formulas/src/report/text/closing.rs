@@ -49,7 +49,7 @@ fn section<T>(page: &mut Page, heading: &str, entries: &[T], entry: impl Fn(&mut
 }
 
 /// The item number of the statement at a line.
-fn item_of(form: &Form, line: u32) -> String {
+pub(in crate::report) fn item_of(form: &Form, line: u32) -> String {
     let row = form.rows.iter().find(|row| row.line == line);
     let item = row.and_then(|row| row.item);
     item.map_or_else(String::new, |item| item.to_string())
@@ -153,7 +153,7 @@ fn governing_others(page: &mut Page, others: &GoverningOthers) {
     page.paragraph(&" ".repeat(LEAD), &text);
 }
 
-fn corner_inputs(inputs: &[CornerInput]) -> String {
+pub(in crate::report) fn corner_inputs(inputs: &[CornerInput]) -> String {
     let each = inputs
         .iter()
         .map(|i| format!("{}{} at {}", i.symbol, at_condition(&i.condition), i.end));
@@ -224,7 +224,7 @@ fn requirement(page: &mut Page, report: &Report, item: String, line: &Requiremen
     }
 }
 
-fn requirement_counts(line: &Requirement) -> String {
+pub(in crate::report) fn requirement_counts(line: &Requirement) -> String {
     let mut text = counted(line.conditions as u64, "condition");
     if line.not_met > 0 {
         text += &format!(", {} not met", line.not_met);
@@ -235,7 +235,7 @@ fn requirement_counts(line: &Requirement) -> String {
     text
 }
 
-fn worst_text(report: &Report, worst: &WorstCondition) -> String {
+pub(in crate::report) fn worst_text(report: &Report, worst: &WorstCondition) -> String {
     let number = |value: f64| shown(value, report.digits);
     let unit = behind(worst.unit.as_deref());
     let mut text = format!(
@@ -267,7 +267,7 @@ fn freebody(page: &mut Page, item: String, body: &Freebody) {
     }
 }
 
-fn residuals(body: &Freebody) -> String {
+pub(in crate::report) fn residuals(body: &Freebody) -> String {
     let residual = |value: f64| shown(value, RESIDUAL_DIGITS);
     let worst = body.worst.as_ref().filter(|w| !w.0.is_empty());
     let worst = worst.map_or_else(String::new, |worst| {
@@ -282,7 +282,7 @@ fn residuals(body: &Freebody) -> String {
 }
 
 /// Inputs and rows of tables whose remark begins `assumed`, with their item numbers.
-fn assumptions(report: &Report, form: &Form) -> Vec<(String, String)> {
+pub(in crate::report) fn assumptions(report: &Report, form: &Form) -> Vec<(String, String)> {
     let mut found: Vec<(u32, String)> = Vec::new();
     for quantity in report.quantities.iter().filter(|q| q.input) {
         if let Some(remark) = quantity.remark.as_deref().filter(|r| is_assumed(r)) {

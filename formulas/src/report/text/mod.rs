@@ -1,9 +1,9 @@
 //! The report as plain text: a ruled computation form, what governs, requirements, free bodies, assumptions, findings.
 
-mod closing;
+pub(super) mod closing;
 mod page;
-mod rows;
-mod values;
+pub(super) mod rows;
+pub(super) mod values;
 
 use super::cautions::{CAUTIONS, POUND_IS_FORCE, shows_pounds};
 use super::{Condition, Form, Report};
@@ -76,7 +76,7 @@ fn signatures(page: &mut Page, report: &Report) {
 }
 
 /// `point A, cg aft`; nothing for a single value.
-fn condition_text(condition: &Condition) -> String {
+pub(super) fn condition_text(condition: &Condition) -> String {
     let pairs = condition.0.iter();
     let pairs: Vec<String> = pairs
         .map(|(axis, label)| format!("{axis} {label}"))
@@ -85,7 +85,7 @@ fn condition_text(condition: &Condition) -> String {
 }
 
 /// ` at point A, cg aft`; nothing for a single value.
-fn at_condition(condition: &Condition) -> String {
+pub(super) fn at_condition(condition: &Condition) -> String {
     if condition.0.is_empty() {
         return String::new();
     }
@@ -93,13 +93,13 @@ fn at_condition(condition: &Condition) -> String {
 }
 
 /// `1 condition`, `24 conditions`.
-fn counted(count: u64, what: &str) -> String {
+pub(super) fn counted(count: u64, what: &str) -> String {
     let plural = if count == 1 { "" } else { "s" };
     format!("{count} {what}{plural}")
 }
 
 /// The unit behind a blank; nothing for a pure number.
-fn behind(unit: Option<&str>) -> String {
+pub(super) fn behind(unit: Option<&str>) -> String {
     unit.map_or_else(String::new, |unit| format!(" {unit}"))
 }
 

@@ -84,7 +84,10 @@ fn member(page: &mut Page, report: &Report, quantity: &Quantity) {
 }
 
 /// The quantities whose values stand in the row: none where the row only looks at them, or declares an axis.
-fn own_quantities<'a>(report: &'a Report, row: &FormRow) -> Vec<&'a Quantity> {
+pub(in crate::report) fn own_quantities<'a>(
+    report: &'a Report,
+    row: &FormRow,
+) -> Vec<&'a Quantity> {
     if !matches!(row.kind, RowKind::Definition | RowKind::Unknown) {
         return Vec::new();
     }
@@ -94,7 +97,7 @@ fn own_quantities<'a>(report: &'a Report, row: &FormRow) -> Vec<&'a Quantity> {
         .collect()
 }
 
-fn how(row: &FormRow) -> String {
+pub(in crate::report) fn how(row: &FormRow) -> String {
     match (&row.word, row.kind) {
         (Some(word), _) => format!("{word} {}", row.how),
         (None, RowKind::Unreadable) => format!("cannot be read: {}", row.how),
@@ -103,7 +106,7 @@ fn how(row: &FormRow) -> String {
 }
 
 /// What a requirement or a free body comes to.
-fn verdict(report: &Report, row: &FormRow) -> Option<String> {
+pub(in crate::report) fn verdict(report: &Report, row: &FormRow) -> Option<String> {
     let words = match row.kind {
         RowKind::Require => {
             let found = report.requirements.iter().find(|r| r.line == row.line)?;

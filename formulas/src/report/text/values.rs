@@ -11,7 +11,7 @@ const INDENT: usize = 6;
 const PRINTED_MOST: usize = 240;
 
 /// The value of a quantity that does not vary.
-pub(super) fn single(report: &Report, quantity: &Quantity) -> Option<String> {
+pub(in crate::report) fn single(report: &Report, quantity: &Quantity) -> Option<String> {
     let values = quantity.values.as_ref()?;
     (quantity.axes.is_empty() && values.len() == 1).then(|| value_text(report, values, 0))
 }
@@ -60,7 +60,7 @@ fn texts(report: &Report, values: &ValueList) -> Vec<String> {
 }
 
 /// A value as shown; a dash where there is none.
-pub(super) fn value_text(report: &Report, values: &ValueList, index: usize) -> String {
+pub(in crate::report) fn value_text(report: &Report, values: &ValueList, index: usize) -> String {
     let text = match values {
         ValueList::Numbers(list) => {
             let value = list.get(index).copied().flatten();
