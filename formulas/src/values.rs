@@ -197,4 +197,21 @@ pub struct FreebodyValues {
     pub open: Conditions,
     /// Conditions in which it could not be judged.
     pub without_value: u64,
+    /// The condition that is drawn, with its values.
+    pub drawn: Option<FreebodyDrawn>,
+}
+
+/// A free body in one condition, in SI.
+#[derive(Clone, Debug, PartialEq)]
+pub struct FreebodyDrawn {
+    /// In the numbering of the free body's shape.
+    pub condition: usize,
+    /// Value and station of each entry; 0 for the station of a couple.
+    pub items: Vec<(f64, f64)>,
+    /// Sum of the forces across.
+    pub force: f64,
+    /// Sum of the axial forces.
+    pub axial: f64,
+    /// Sum of the moments about the first station and height.
+    pub moment: f64,
 }

@@ -209,7 +209,8 @@ fn every_drawing_is_well_formed_and_holds_no_text_as_markup() {
         let text = std::fs::read_to_string(&file).expect("a case file");
         for case in cases(&text) {
             let report = case.opened(&case.sheet).report(&[]);
-            for svg in report.figures.iter().map(|f| &f.svg) {
+            let bodies = report.freebodies.iter().filter_map(|b| b.svg.as_ref());
+            for svg in report.figures.iter().map(|f| &f.svg).chain(bodies) {
                 let fits = tests::xml::well_formed(svg);
                 assert_eq!(fits, Ok(()), "{}: {svg}", case.name);
                 assert!(!svg.contains("<script"), "{}", case.name);

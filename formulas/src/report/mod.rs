@@ -416,6 +416,9 @@ pub struct Freebody {
     pub axials: Vec<FreebodyForce>,
     /// Couples, nose up positive.
     pub couples: Vec<FreebodyCouple>,
+    /// The drawing: forces at their stations in the condition of the largest governed one; `None` where no condition has
+    /// all values.
+    pub svg: Option<String>,
     /// The symbol that takes it up; for text and page, not part of the JSON.
     #[serde(skip)]
     pub taken_up_by: Option<String>,

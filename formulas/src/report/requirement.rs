@@ -2,12 +2,13 @@
 
 use super::convert::{Scale, condition};
 use super::sensitivity;
+use super::svg::{self, Arrow, Drawn, Shown};
 use super::{Condition, Freebody, FreebodyCouple, FreebodyForce, Requirement, WorstCondition};
 use crate::axes::Shape;
-use crate::program::{Comparison, EntryKind, FreebodyEntry, Program};
+use crate::program::{self, Comparison, EntryKind, FreebodyEntry, Program, ShownUnit};
 use crate::run::scalar;
 use crate::syntax::{BinaryOp, Tree};
-use crate::values::{FreebodyValues, RequirementValues, Values};
+use crate::values::{FreebodyDrawn, FreebodyValues, RequirementValues, Values};
 
 /// A requirement `=` is met within this part of the larger side.
 const REQUIRED_EQUAL_WITHIN: f64 = 1e-9;
@@ -132,9 +133,54 @@ pub(super) fn freebodies(tree: &Tree, program: &Program, values: &Values) -> Vec
                     })
                     .collect(),
                 taken_up_by: found.taken_up_by.clone(),
+                svg: found.drawn.as_ref().map(|d| draw(program, body, found, d)),
             }
         })
         .collect()
+}
+
+/// The drawing of one condition.
+fn draw(
+    program: &Program,
+    body: &program::Freebody,
+    found: &FreebodyValues,
+    drawn: &FreebodyDrawn,
+) -> String {
+    let of_kind = |kinds: &[EntryKind]| {
+        let mut entries = body.items.iter().filter(|e| kinds.contains(&e.kind));
+        entries.find_map(|e| e.unit.as_ref())
+    };
+    let shown = |value: f64, unit: Option<&ShownUnit>| Shown {
+        value: Scale::of_sides(unit).number(value).unwrap_or(0.0),
+        unit: unit.map_or_else(String::new, |u| format!(" {}", u.text)),
+    };
+    let arrow = |(entry, (value, at)): (&FreebodyEntry, &(f64, f64))| Arrow {
+        kind: entry.kind,
+        text: entry.text.clone(),
+        value: shown(*value, entry.unit.as_ref()),
+        si: *value,
+        at_text: entry.at_text.clone(),
+        at: shown(*at, entry.at_unit.as_ref()),
+        at_si: *at,
+    };
+    let force = of_kind(&[EntryKind::Force, EntryKind::Axial]);
+    let moment = of_kind(&[EntryKind::Couple]);
+    let si = |unit: Option<&ShownUnit>, name: &str, value: f64| match unit {
+        Some(_) => shown(value, unit),
+        None => Shown {
+            value,
+            unit: format!(" {name}"),
+        },
+    };
+    svg::freebody(&Drawn {
+        name: body.name.clone(),
+        condition: condition(&program.axes, &found.shape, drawn.condition),
+        digits: program.digits,
+        arrows: body.items.iter().zip(&drawn.items).map(arrow).collect(),
+        force: si(force, "N", drawn.force),
+        axial: si(force, "N", drawn.axial),
+        moment: si(moment, "N.m", drawn.moment),
+    })
 }
 
 fn force(program: &Program, entry: &FreebodyEntry) -> FreebodyForce {

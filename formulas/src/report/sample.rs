@@ -395,6 +395,7 @@ fn values() -> Values {
             worst: Some(2),
             open: Conditions::default(),
             without_value: 2,
+            drawn: None,
         }],
         figures: Vec::new(),
     }

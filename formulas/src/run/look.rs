@@ -8,10 +8,15 @@ use crate::axes::Shape;
 use crate::plan::{Judged, Plan, SlotId, Step, Work};
 use crate::program::{EntryKind, Guard, Program};
 use crate::syntax::BinaryOp;
-use crate::values::{FreebodyValues, RequirementValues, Summary, WorstCondition, is_excluded};
+use crate::values::{
+    FreebodyDrawn, FreebodyValues, RequirementValues, Summary, WorstCondition, is_excluded,
+};
 
 /// A requirement `=` is met within this part of the larger side, and a free body closes within it.
 pub(super) const CLOSE: f64 = 1e-9;
+
+/// More than any load, so that a condition that does not close is drawn before all others.
+const OPEN_WEIGHT: f64 = 1e300;
 
 /// One that looks.
 pub(super) enum Look<'a> {
@@ -61,7 +66,15 @@ impl<'a> Look<'a> {
                 Judged::Freebody(at) => {
                     let items = &program.freebodies.get(*at)?.items;
                     let kinds = items.iter().map(|e| (e.kind, e.at.is_some())).collect();
-                    Some(Look::Freebody(*at, FreebodyLook::new(shape, kinds)))
+                    let governed = items.iter().map(|e| {
+                        e.quantity
+                            .is_some_and(|q| program.governing.iter().any(|g| g.quantity == q))
+                    });
+                    let governed = governed.collect();
+                    Some(Look::Freebody(
+                        *at,
+                        FreebodyLook::new(shape, kinds, governed),
+                    ))
                 }
             },
             _ => None,
@@ -231,17 +244,22 @@ impl RequirementLook {
 pub(super) struct FreebodyLook {
     /// What each entry is, and whether it has a station.
     entries: Vec<(EntryKind, bool)>,
+    /// Which entries are governed somewhere: their largest says which condition is drawn.
+    governed: Vec<bool>,
     farthest: f64,
+    heaviest: f64,
     pub(super) result: FreebodyValues,
     pub(super) worst_sums: Sums,
     pub(super) open: Vec<usize>,
 }
 
 impl FreebodyLook {
-    fn new(shape: &Shape, entries: Vec<(EntryKind, bool)>) -> Self {
+    fn new(shape: &Shape, entries: Vec<(EntryKind, bool)>, governed: Vec<bool>) -> Self {
         FreebodyLook {
             entries,
+            governed,
             farthest: -1.0,
+            heaviest: -1.0,
             result: FreebodyValues {
                 shape: shape.clone(),
                 known: true,
@@ -264,10 +282,12 @@ impl FreebodyLook {
             let value = read();
             (*kind, value, if *has_station { read() } else { 0.0 })
         });
-        let Some(sums) = sums(items) else {
+        let items: Vec<(EntryKind, f64, f64)> = items.collect();
+        let Some(sums) = sums(items.iter().copied()) else {
             self.result.without_value += 1;
             return;
         };
+        self.draw(condition, &items, &sums);
         let result = &mut self.result;
         let parts = [ratio(sums.force), ratio(sums.axial), ratio(sums.moment)];
         result.force_residual = result.force_residual.max(parts[0]);
@@ -285,6 +305,34 @@ impl FreebodyLook {
             if self.open.len() < 5 {
                 self.open.push(condition);
             }
+        }
+    }
+}
+
+impl FreebodyLook {
+    /// Keeps the condition that is drawn: that of the largest governed entry, else that of the largest loads; where the
+    /// body does not close, that in which it is farthest from it.
+    fn draw(&mut self, condition: usize, items: &[(EntryKind, f64, f64)], sums: &Sums) {
+        let far = [sums.force, sums.axial, sums.moment].map(ratio);
+        let far = far.into_iter().fold(0.0, f64::max);
+        let governed = items.iter().zip(&self.governed).filter(|(_, g)| **g);
+        let largest = governed.map(|((_, value, _), _)| value.abs());
+        let weight = if far > CLOSE {
+            OPEN_WEIGHT * (1.0 + far)
+        } else if self.governed.contains(&true) {
+            largest.fold(0.0, f64::max)
+        } else {
+            sums.force.1 + sums.axial.1 + sums.moment.1
+        };
+        if weight > self.heaviest {
+            self.heaviest = weight;
+            self.result.drawn = Some(FreebodyDrawn {
+                condition,
+                items: items.iter().map(|(_, value, at)| (*value, *at)).collect(),
+                force: sums.force.0,
+                axial: sums.axial.0,
+                moment: sums.moment.0,
+            });
         }
     }
 }

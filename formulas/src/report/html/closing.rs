@@ -278,6 +278,9 @@ pub(super) fn freebodies(out: &mut String, report: &Report, form: &Form) {
         if body.closes.is_some() {
             let _ = writeln!(out, "<p class=\"small\">{}</p>", escaped(&residuals(body)));
         }
+        if let Some(svg) = &body.svg {
+            let _ = writeln!(out, "<figure>{svg}</figure>");
+        }
         *out += "</section>\n";
     }
 }

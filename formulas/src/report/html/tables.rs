@@ -9,6 +9,8 @@ use std::fmt::Write as _;
 
 /// Most values that are all printed; above, the extremes say more than the columns.
 const PRINTED_MOST: usize = 600;
+/// Most labels of the axis that runs across, where another could.
+const ACROSS_MOST: usize = 12;
 /// Characters that fit across a table.
 const ACROSS: usize = 92;
 
@@ -36,35 +38,44 @@ pub(super) fn table(out: &mut String, heads: &[&str], rows: &[Vec<String>], numb
     *out += "</tbody></table>\n";
 }
 
-/// The values of a quantity that varies: its last axis runs across, the others stand in the rows.
+/// The values of a quantity that varies: the longest axis that fits the page runs across, the others stand in the rows.
 pub(super) fn values(out: &mut String, report: &Report, quantity: &Quantity) {
     let Some(values) = quantity.values.as_ref().filter(|v| v.len() <= PRINTED_MOST) else {
         return extremes(out, report, quantity);
     };
-    let Some((across, down)) = quantity.axes.split_last() else {
+    let axes: Vec<&[String]> = quantity.axes.iter().map(|a| labels(report, a)).collect();
+    let fits = |at: &usize| axes.get(*at).is_some_and(|a| a.len() <= ACROSS_MOST);
+    let longest = (0..axes.len())
+        .rev()
+        .filter(fits)
+        .max_by_key(|at| axes.get(*at).map_or(0, |a| a.len()));
+    let Some(across) = longest.or(axes.len().checked_sub(1)) else {
         return;
     };
-    let across_labels = labels(report, across);
-    let rows = conditions(report, down);
-    if rows.len() * across_labels.len() != values.len() {
+    if axes.iter().map(|a| a.len()).product::<usize>() != values.len() {
         return extremes(out, report, quantity);
     }
-    let texts: Vec<String> = (0..values.len())
-        .map(|i| value_text(report, values, i))
-        .collect();
-    let lines: Vec<(String, &[String])> = rows
-        .into_iter()
-        .zip(texts.chunks(across_labels.len().max(1)))
-        .collect();
+    let stride: usize = axes.iter().skip(across + 1).map(|a| a.len()).product();
+    let across_labels = axes.get(across).copied().unwrap_or_default();
+    let mut down = quantity.axes.clone();
+    let name = down.remove(across);
+    let line = |(row, label): (usize, String)| {
+        let first = row / stride * stride * across_labels.len() + row % stride;
+        let cells =
+            (0..across_labels.len()).map(|i| value_text(report, values, first + i * stride));
+        (label, cells.collect())
+    };
+    let rows = conditions(report, &down).into_iter().enumerate();
+    let lines: Vec<(String, Vec<String>)> = rows.map(line).collect();
     let head = if down.is_empty() {
-        across.clone()
+        name
     } else {
-        format!("{} \\ {across}", down.join(", "))
+        format!("{} \\ {name}", down.join(", "))
     };
     blocks(out, &head, across_labels, &lines);
 }
 
-fn blocks(out: &mut String, head: &str, labels: &[String], lines: &[(String, &[String])]) {
+fn blocks(out: &mut String, head: &str, labels: &[String], lines: &[(String, Vec<String>)]) {
     let cells = lines.iter().flat_map(|(_, cells)| cells.iter());
     let width = labels.iter().chain(cells).map(|t| t.chars().count()).max();
     let width = width.unwrap_or(0).min(24) + 3;

@@ -6,8 +6,10 @@
 
 mod axis;
 mod curves;
+mod freebody;
 mod pen;
 mod plot;
 
+pub use freebody::{Arrow, Drawn, Shown, freebody};
 pub use pen::escaped;
 pub use plot::figure;
