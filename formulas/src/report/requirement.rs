@@ -278,7 +278,7 @@ mod tests {
         let json = json::write_any(&sample().report().freebodies).unwrap();
         assert_eq!(
             json,
-            r#"[{"name":"Tail, all","line":12,"closes":false,"by_construction":false,"force_residual":0.25,"axial_residual":0.0,"moment_residual":0.5,"worst":{"point":"C","cg":"fwd"},"forces":[{"text":"P","quantity":"P","station":"x"},{"text":"-W","quantity":null,"station":"1 ft"}],"axials":[],"couples":[]}]"#
+            r#"[{"name":"Tail, all","line":12,"closes":false,"by_construction":false,"force_residual":0.25,"axial_residual":0.0,"moment_residual":0.5,"worst":{"point":"C","cg":"fwd"},"forces":[{"text":"P","quantity":"P","station":"x"},{"text":"-W","quantity":null,"station":"1 ft"}],"axials":[],"couples":[],"svg":null}]"#
         );
     }
 }
