@@ -17,6 +17,7 @@ export interface Parts {
   selectors: HTMLElement;
   form: HTMLElement;
   governing: HTMLElement;
+  drawings: HTMLElement;
   findings: HTMLElement;
 }
 
@@ -39,7 +40,7 @@ export function frame(acts: Acts, parts: Parts): Controls {
   const masthead = el("header", { class: "masthead" }, el("h1", {}, words.program), working, controls);
   const formPlace = el("div", { class: "form-place" }, parts.selectors, parts.form, keyList());
   const element = el("div", { class: "paper" }, masthead, parts.notices,
-    el("main", {}, parts.titleBlock, formPlace, el("div", { class: "gathering" }, parts.governing, parts.findings)),
+    el("main", {}, parts.titleBlock, formPlace, el("div", { class: "gathering" }, parts.governing, parts.drawings, parts.findings)),
     el("footer", {}, words.cautions.map((caution) => el("p", {}, caution))));
   return {
     element,

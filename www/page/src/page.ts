@@ -2,6 +2,7 @@
 import { shownBy, type Choice, type Shown } from "./conditions.js";
 import { el, setText } from "./dom.js";
 import { loadHighlighter } from "./editing.js";
+import { Drawings } from "./drawings.js";
 import { Engine } from "./engine.js";
 import { acceptDrops, fileField, nameFor, read, save } from "./files.js";
 import { Findings } from "./findings.js";
@@ -43,6 +44,7 @@ export class Page {
   #selectors: Selectors;
   #findings: Findings;
   #governing = new GoverningConditions();
+  #drawings = new Drawings();
   #whole: WholeText | null = null;
 
   /** Starts with the last draft, or with `starting` where there is none. */
@@ -83,7 +85,7 @@ export class Page {
       stop: () => this.#engine.stop(),
     }, {
       notices: this.#notices.element, titleBlock: this.#titleBlock.element, selectors: this.#selectors.element,
-      form: this.#form.table, governing: this.#governing.element, findings: this.#findings.element,
+      form: this.#form.table, governing: this.#governing.element, drawings: this.#drawings.element, findings: this.#findings.element,
     });
     document.body.append(made.element, field, this.#live);
     return made;
@@ -132,6 +134,7 @@ export class Page {
     this.#form.show(this.#report.form.rows.filter(({ kind }) => kind !== "title"), shown);
     this.#desk.show(shown);
     this.#governing.show(shown);
+    this.#drawings.show(shown);
     this.#findings.show(this.#report);
     this.#whole?.show(this.#report);
     this.#speak(shown);

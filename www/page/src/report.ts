@@ -80,6 +80,7 @@ export interface FreeBody {
   line: number;
   closes: boolean | null;
   by_construction: boolean;
+  svg?: string | null;
 }
 
 export interface Figure {
