@@ -27,9 +27,10 @@ export class Drawings {
 
 /** One drawing with a way to keep it. It is read as a document of its own, so that nothing in it can run. */
 function drawing(name: string, svg: string): HTMLElement | null {
-  const parsed = new DOMParser().parseFromString(svg, "image/svg+xml").documentElement;
+  // The page's own style sheet says what the drawing's says, and the policy keeps any other out.
+  const plain = svg.replace(/<style>[^<]*<\/style>/g, "");
+  const parsed = new DOMParser().parseFromString(plain, "image/svg+xml").documentElement;
   if (parsed.nodeName !== "svg") return null;
-  // The page's own style sheet says what this one says, and the policy keeps others out.
   for (const unwanted of parsed.querySelectorAll("style, script, foreignObject")) unwanted.remove();
   const save = el("button", { type: "button", class: "quiet", "aria-label": words.saveDrawing(name), onclick: () => keep(name, svg) }, words.saveAsSvg);
   return el("figure", {}, document.importNode(parsed, true), el("figcaption", {}, name, " ", save));
