@@ -220,3 +220,43 @@ fn every_drawing_is_well_formed_and_holds_no_text_as_markup() {
     }
     assert!(drawn >= 20, "only {drawn} drawings");
 }
+
+#[test]
+fn every_print_is_well_formed_and_holds_no_text_as_markup() {
+    for file in files() {
+        let text = std::fs::read_to_string(&file).expect("a case file");
+        for case in cases(&text) {
+            let print = case.opened(&case.sheet).print();
+            let body = print
+                .strip_prefix("<!DOCTYPE html>\n")
+                .expect("a document type");
+            let fits = tests::xml::well_formed(body);
+            assert_eq!(fits, Ok(()), "{}", case.name);
+            assert!(!print.contains("<script"), "{}", case.name);
+        }
+    }
+}
+
+#[test]
+fn a_title_is_text_in_every_form_of_the_report() {
+    let text = "title <script>alert(1)</script>\npart <script>\nvary c: <script> | b\nx [N] by c = 1 | 2 ; <script>\n\
+        y [m] by c = 3 | 4\nfigure \"<script>\": x against c\nfigure \"</svg><script>\": x, y against y\n\
+        freebody \"<script>\": x @ y, -x @ y\nrequire x < 2 N ; <script>\ngoverning x\n";
+    let sheet = formulas::Sheet::open(text);
+    let report = sheet.report(&[]);
+    assert_eq!((report.figures.len(), report.freebodies.len()), (2, 1));
+    let drawings = report.figures.iter().map(|f| Some(f.svg.clone()));
+    let bodies = report.freebodies.iter().map(|b| b.svg.clone());
+    for svg in drawings.chain(bodies).map(|svg| svg.expect("a drawing")) {
+        assert_eq!(tests::xml::well_formed(&svg), Ok(()));
+        assert!(
+            svg.contains("&lt;script&gt;") && !svg.contains("<script"),
+            "{svg}"
+        );
+    }
+    let print = sheet.print();
+    assert!(
+        print.contains("&lt;script&gt;") && !print.contains("<script"),
+        "{print}"
+    );
+}

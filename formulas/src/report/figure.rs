@@ -100,3 +100,58 @@ impl Cut<'_> {
         column.values.get(offset).copied().unwrap_or(NONE)
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use crate::report::ValueList;
+    use crate::sheet::{Around, Sheet};
+
+    const LONG: &str = "vary x [1]: 1 to 1000 step 1\nvary k [1]: 1 to 100 step 1\ny = k*x\n\
+        figure \"Long\": y against x each k\n";
+
+    /// A column longer than those that are kept for all lines is kept for a figure, in a first run and after an edit.
+    #[test]
+    fn long_columns_are_there_to_be_drawn() {
+        let editing = Around {
+            editing: true,
+            ..Around::default()
+        };
+        let mut sheet = Sheet::open_around(LONG, &editing);
+        sheet.update(&LONG.replace("k*x", "2*k*x"));
+        for (sheet, factor) in [(Sheet::open(LONG), 1.0), (sheet, 2.0)] {
+            let report = sheet.report(&[]);
+            let curves = &report.figures[0].curves;
+            assert_eq!(curves.len(), 100);
+            let ValueList::Numbers(last) = &curves[99].y else {
+                panic!("numbers");
+            };
+            assert_eq!(last.len(), 1000);
+            assert_eq!(last[999], Some(factor * 100.0 * 1000.0));
+        }
+    }
+
+    /// A figure after edits is that of the text opened anew.
+    #[test]
+    fn an_edit_gives_the_figure_of_the_new_text() {
+        let first = "vary c: a | b\nx by c = 1 | 2\ny by c = 3 | none\nfigure \"F\": y, 2*x against x closed\n";
+        let editing = Around {
+            editing: true,
+            ..Around::default()
+        };
+        let mut sheet = Sheet::open_around(first, &editing);
+        let mut text = first.to_owned();
+        for (old, new) in [
+            ("none", "5"),
+            ("2*x", "3*x"),
+            ("closed", ""),
+            ("a | b", "b | a"),
+        ] {
+            text = text.replace(old, new);
+            sheet.update(&text);
+            assert_eq!(
+                sheet.report(&[]).figures,
+                Sheet::open(&text).report(&[]).figures
+            );
+        }
+    }
+}

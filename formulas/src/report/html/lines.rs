@@ -134,7 +134,7 @@ fn line(out: &mut String, report: &Report, row: &FormRow, from: &str) {
     }
     let _ = writeln!(
         out,
-        "</td><td class=\"n\">{}</td><td>{}</td></tr>",
+        "</td><td class=\"n\">{}</td><td class=\"r\">{}</td></tr>",
         escaped(value.as_deref().unwrap_or("")),
         escaped(row.remark.as_deref().unwrap_or(""))
     );

@@ -22,7 +22,7 @@ tr{break-inside:avoid}\
 th,td{border:.4pt solid #777;padding:.5mm 1.2mm;text-align:left;vertical-align:top;overflow-wrap:break-word}\
 th{font-weight:600;font-size:8.5pt;border-bottom:.8pt solid #000}\
 td.n,th.n{text-align:right;white-space:nowrap;overflow-wrap:normal}\
-td.f,td:last-child{overflow-wrap:anywhere}\
+td.f,td.r{overflow-wrap:anywhere}td.r{min-width:34mm}\
 td.f{font-family:ui-monospace,monospace;font-size:8.8pt}\
 tr.part td{font-weight:700;border-bottom:.8pt solid #000;padding-top:2mm}\
 tr.sub td{font-style:italic}\

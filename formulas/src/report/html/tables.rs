@@ -14,11 +14,14 @@ const ACROSS_MOST: usize = 12;
 /// Characters that fit across a table.
 const ACROSS: usize = 92;
 
-/// A table of texts.
+/// A table of texts. Columns from `numbers_from` on are set to the right; remarks and formulas may be broken anywhere.
 pub(super) fn table(out: &mut String, heads: &[&str], rows: &[Vec<String>], numbers_from: usize) {
     let class = |i: usize| {
+        let head = heads.get(i).copied().unwrap_or_default();
         if i >= numbers_from {
             " class=\"n\""
+        } else if head.ends_with("remark") || head.starts_with("formula") {
+            " class=\"r\""
         } else {
             ""
         }
