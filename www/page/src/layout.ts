@@ -8,6 +8,8 @@ export interface Acts {
   save(): void;
   sheetText(): void;
   print(): void;
+  /** Begins with a starting sheet. */
+  start(name: string): void;
   stop(): void;
 }
 
@@ -30,12 +32,12 @@ export interface Controls {
 }
 
 /** Puts the parts in their places. */
-export function frame(acts: Acts, parts: Parts): Controls {
+export function frame(acts: Acts, parts: Parts, starting: [name: string, title: string][]): Controls {
   const button = (text: string, act: () => void) => el("button", { type: "button", onclick: act }, text);
   const sheetText = button(words.sheetText, () => acts.sheetText());
   const working = el("span", { class: "working", role: "status", hidden: true }, words.working, " ", button(words.stop, () => acts.stop()));
   const controls = el("nav", { class: "controls", "aria-label": "Sheet" },
-    button(words.newSheet, () => acts.newSheet()), button(words.open, () => acts.open()), button(words.save, () => acts.save()),
+    button(words.newSheet, () => acts.newSheet()), chooser(starting, acts), button(words.open, () => acts.open()), button(words.save, () => acts.save()),
     sheetText, button(words.print, () => acts.print()));
   const masthead = el("header", { class: "masthead" }, el("h1", {}, words.program), working, controls);
   const formPlace = el("div", { class: "form-place" }, parts.selectors, parts.form, keyList());
@@ -53,6 +55,17 @@ export function frame(acts: Acts, parts: Parts): Controls {
       working.hidden = !busy;
     },
   };
+}
+
+/** The starting sheets by their titles. */
+function chooser(starting: [name: string, title: string][], acts: Acts): HTMLSelectElement {
+  const first = el("option", { value: "" }, words.startingSheets);
+  const select = el("select", { class: "starting", "aria-label": words.startingSheets, onchange: () => {
+    const name = select.value;
+    select.value = "";
+    if (name) acts.start(name);
+  } }, first, starting.map(([name, title]) => el("option", { value: name }, title)));
+  return select;
 }
 
 function keyList(): HTMLElement {

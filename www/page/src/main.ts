@@ -7,4 +7,4 @@ Reflect.deleteProperty(window, "RTCPeerConnection");
 
 const data = (id: string) => document.getElementById(id)?.textContent ?? "";
 const sheets = JSON.parse(data("sheets")) as Record<string, string>;
-new Page(data("engine"), sheets["osier-balancing-loads"] ?? "");
+new Page(data("engine"), sheets, "osier-balancing-loads");

@@ -27,6 +27,7 @@ const FRESH_SHEET = "";
 export class Page {
   #sheet: SheetText;
   #draft: Draft;
+  #starting: Record<string, string>;
   #store: Store;
   #engine: Engine;
   #serial = 0;
@@ -47,8 +48,10 @@ export class Page {
   #drawings = new Drawings();
   #whole: WholeText | null = null;
 
-  /** Starts with the last draft, or with `starting` where there is none. */
-  constructor(packedEngine: string, starting: string) {
+  /** Starts with the last draft, or with the `first` of the starting sheets where there is none. */
+  constructor(packedEngine: string, sheets: Record<string, string>, first: string) {
+    this.#starting = sheets;
+    const starting = sheets[first] ?? FRESH_SHEET;
     this.#store = new Store({ trouble: (trouble) => this.#trouble(trouble), otherWindow: () => this.#notices.show("window", words.otherWindow) });
     this.#draft = this.#store.last() ?? { id: newId(), name: null, text: starting };
     this.#saved = this.#draft.text;
@@ -82,11 +85,12 @@ export class Page {
       save: () => void this.#save(),
       sheetText: () => this.#switch(),
       print: () => window.print(),
+      start: (name) => this.#begin({ id: newId(), name: null, text: this.#starting[name] ?? FRESH_SHEET }),
       stop: () => this.#engine.stop(),
     }, {
       notices: this.#notices.element, titleBlock: this.#titleBlock.element, selectors: this.#selectors.element,
       form: this.#form.table, governing: this.#governing.element, drawings: this.#drawings.element, findings: this.#findings.element,
-    });
+    }, Object.entries(this.#starting).map(([name, text]) => [name, /^title (.*)$/m.exec(text)?.[1] ?? name]));
     document.body.append(made.element, field, this.#live);
     return made;
   }

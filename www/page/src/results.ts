@@ -106,14 +106,7 @@ function freeBodyCell(row: FormRow, shown: Shown): CellSpec {
 
 function figureCell(row: FormRow, shown: Shown): CellSpec {
   const found = shown.report.figures.find(({ line }) => line >= row.line && line < row.line + row.lines);
-  const svg = found?.svg ?? "";
-  return wide(shown, svg, () => (found && svg ? [picture(found.name, svg)] : []));
-}
-
-/** A figure as a picture: as such it can neither run a script nor reach anything. */
-function picture(name: string, svg: string): HTMLImageElement {
-  const address = URL.createObjectURL(new Blob([svg], { type: "image/svg+xml" }));
-  return el("img", { class: "figure", alt: name, src: address, onload: () => URL.revokeObjectURL(address) });
+  return wide(shown, found?.svg ? words.drawnBelow : "", () => [found?.svg ? words.drawnBelow : ""]);
 }
 
 function wide(shown: Shown, key: string, content: () => Child[]): CellSpec {

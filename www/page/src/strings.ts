@@ -55,6 +55,8 @@ export const words = {
   itemNumber: (item: number) => `item ${item}`,
   governing: "Governing conditions",
   figures: "Figures and free bodies",
+  drawnBelow: "drawn below",
+  startingSheets: "Starting sheets",
   saveAsSvg: "Save as SVG",
   saveDrawing: (name: string) => `Save ${name} as SVG`,
   quantity: "Quantity",
