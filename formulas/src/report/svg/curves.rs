@@ -107,7 +107,7 @@ pub(super) fn curve(pen: &mut Pen, points: &[Option<(f64, f64)>], stroke: Stroke
 }
 
 /// Of very many points the highest and lowest of each stretch, and where the curve is broken.
-fn thinned(points: &[Option<(f64, f64)>]) -> Vec<Option<(f64, f64)>> {
+pub(super) fn thinned(points: &[Option<(f64, f64)>]) -> Vec<Option<(f64, f64)>> {
     if points.len() <= DRAWN_MOST {
         return points.to_vec();
     }

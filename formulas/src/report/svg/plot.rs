@@ -1,18 +1,21 @@
 //! A figure: a ruled field for each unit, one above the other over the same abscissa.
 
 use super::axis::Numbers;
-use super::curves::{Stroke, curve};
+use super::curves::{Stroke, curve, thinned};
 use super::pen::{Anchor, LETTERS, Pen, cut, width};
 use crate::report::{Figure, FigureCurve, ValueList};
+use std::collections::HashMap;
 
 const WIDTH: f64 = 720.0;
-const LEFT: f64 = 64.0;
+const LEFT: f64 = 82.0;
 const TOP: f64 = 34.0;
 const FIELD: f64 = 270.0;
 const GAP: f64 = 22.0;
 const LINE: f64 = 15.0;
+/// Most rules over labels.
+const RULES_MOST: usize = 120;
 /// Most characters of a label.
-const LABEL_MOST: usize = 34;
+const LABEL_MOST: usize = 46;
 const RULE: &str = r#"stroke-width="0.5" stroke-opacity="0.35""#;
 const FRAME: &str = r#"stroke-width="1""#;
 
@@ -92,6 +95,8 @@ struct Layout<'a> {
     right: f64,
     /// Labels in the order in which they come up, where the abscissa is text.
     labels: Option<Vec<&'a str>>,
+    /// The place of each of them.
+    places: HashMap<&'a str, usize>,
     numbers: Numbers,
 }
 
@@ -102,11 +107,13 @@ impl<'a> Layout<'a> {
             _ => None,
         });
         let mut labels: Option<Vec<&str>> = None;
+        let mut places: HashMap<&str, usize> = HashMap::new();
         for text in texts.flatten().flatten() {
             let known = labels.get_or_insert_with(Vec::new);
-            if !known.contains(&text.as_str()) {
-                known.push(text);
-            }
+            places.entry(text.as_str()).or_insert_with(|| {
+                known.push(text.as_str());
+                known.len() - 1
+            });
         }
         let values = figure.curves.iter().flat_map(|c| numbers(&c.x)).flatten();
         let widest = fields.iter().filter(|f| f.is_labelled()).flat_map(|f| {
@@ -119,6 +126,7 @@ impl<'a> Layout<'a> {
             figure,
             right: (WIDTH - room).max(WIDTH * 0.5),
             labels,
+            places,
             numbers: Numbers::of(values, 7.0, false),
         }
     }
@@ -134,7 +142,7 @@ impl<'a> Layout<'a> {
             ValueList::Texts(list) => {
                 let text = list.get(point)?.as_deref()?;
                 let labels = self.labels.as_ref()?;
-                let at = labels.iter().position(|l| *l == text)?;
+                let at = *self.places.get(text)?;
                 Some(LEFT + span * (at as f64 + 0.5) / labels.len() as f64)
             }
             ValueList::Conditions(_) => None,
@@ -157,7 +165,8 @@ impl<'a> Layout<'a> {
             let stroke = Stroke::of(place);
             if let Some(labels) = &self.labels {
                 self.set_apart(&mut points, place, field.curves.len(), labels.len());
-                points.iter().flatten().for_each(|p| stroke.mark(pen, *p));
+                let marks = thinned(&points);
+                marks.iter().flatten().for_each(|p| stroke.mark(pen, *p));
             } else {
                 curve(pen, &points, stroke, self.figure.closed);
                 self.name_points(pen, one, &points);
@@ -165,6 +174,10 @@ impl<'a> Layout<'a> {
             let end = points.iter().flatten().copied();
             let end = end.max_by(|a, b| a.0.total_cmp(&b.0));
             ends.push((end, stroke, field.label(one)));
+        }
+        if ends.iter().all(|(end, ..)| end.is_none()) {
+            let middle = (0.5 * (LEFT + self.right), top + 0.5 * field.height);
+            pen.text(middle, Anchor::Middle, "no value");
         }
         if field.is_labelled() {
             self.labels(pen, field, top, ends);
@@ -246,7 +259,9 @@ impl<'a> Layout<'a> {
         match &self.labels {
             Some(labels) => {
                 let count = labels.len().max(1) as f64;
+                let every = labels.len().div_ceil(RULES_MOST).max(1);
                 (0..labels.len())
+                    .step_by(every)
                     .map(|i| (LEFT + span * (i as f64 + 0.5) / count, RULE))
                     .collect()
             }
@@ -314,9 +329,12 @@ impl<'a> Layout<'a> {
     /// Labels side by side where they have room, else aslant, and where they are too many only some.
     fn text_labels(&self, pen: &mut Pen, labels: &[&str], bottom: f64) -> f64 {
         let slot = (self.right - LEFT) / labels.len().max(1) as f64;
-        let texts: Vec<String> = labels.iter().map(|l| cut(l, 24)).collect();
-        let widest = texts.iter().map(|t| width(t)).fold(0.0, f64::max);
-        let aslant = widest > slot - 6.0;
+        let cut_to = |most: usize| labels.iter().map(|l| cut(l, most)).collect::<Vec<String>>();
+        let widest_of = |texts: &[String]| texts.iter().map(|t| width(t)).fold(0.0, f64::max);
+        let whole = cut_to(24);
+        let aslant = widest_of(&whole) > slot - 6.0;
+        let texts = if aslant { cut_to(14) } else { whole };
+        let widest = widest_of(&texts);
         let every = ((LINE / slot).ceil() as usize).max(1);
         for (i, text) in texts.iter().enumerate().filter(|(i, _)| i % every == 0) {
             let x = LEFT + slot * (i as f64 + 0.5);
