@@ -138,8 +138,8 @@ pub const STATEMENTS: &[Row] = &[
     },
     Row {
         word: "figure",
-        form: "figure \"name\": y, y against x each axis, axis",
-        meaning: "Curves over a numeric x, marks over labels; a curve for each label of the axes behind each. closed at the end joins the points into an outline.",
+        form: "figure \"name\": y, y against x each axis, axis closed",
+        meaning: "Curves over a numeric x, marks over labels; a curve for each label of the axes behind each. each and closed may be left out; closed joins the points into an outline with their labels. Every other axis is to be picked. At most 200 curves, and 100,000 points in all.",
         example: "vary alpha [deg]: -4 to 12 step 4\nCL = 0.1 /deg*alpha\nfigure \"Lift\": CL against alpha\n",
     },
     Row {

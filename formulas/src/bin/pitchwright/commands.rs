@@ -346,6 +346,16 @@ mod tests {
     }
 
     #[test]
+    fn the_printed_report_is_one_document() {
+        let file = File::of("print", b"title <T>\nx [ft] = 2\nrequire x < 1 ft\n");
+        let outcome = run(&run_of(file.path(), Format::Html));
+        assert_eq!(outcome.status, NOT_MET);
+        assert!(outcome.results.starts_with("<!DOCTYPE html>\n"));
+        assert!(outcome.results.contains("<h1>&lt;T&gt;</h1>"));
+        assert!(outcome.results.ends_with("</html>\n"));
+    }
+
+    #[test]
     fn two_sheets_are_compared() {
         let old = File::of("old", b"x [ft] = 2\n");
         let new = File::of("new", b"x [ft] = 3\n");
