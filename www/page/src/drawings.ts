@@ -32,7 +32,7 @@ function drawing(name: string, svg: string): HTMLElement | null {
   const parsed = new DOMParser().parseFromString(plain, "image/svg+xml").documentElement;
   if (parsed.nodeName !== "svg") return null;
   for (const unwanted of parsed.querySelectorAll("style, script, foreignObject")) unwanted.remove();
-  const save = el("button", { type: "button", class: "quiet", "aria-label": words.saveDrawing(name), onclick: () => keep(name, svg) }, words.saveAsSvg);
+  const save = el("button", { type: "button", class: "plain", "aria-label": words.saveDrawing(name), onclick: () => keep(name, svg) }, words.saveAsSvg);
   return el("figure", {}, document.importNode(parsed, true), el("figcaption", {}, name, " ", save));
 }
 
