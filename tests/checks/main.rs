@@ -22,11 +22,12 @@ macro_rules! sheet {
 }
 
 /// The sheets, by the name of their file.
-const SHEETS: [(&str, &str); 16] = [
+const SHEETS: [(&str, &str); 17] = [
     sheet!("airspeeds"),
     sheet!("atmosphere"),
     sheet!("balancing-loads"),
     sheet!("envelope"),
+    sheet!("exact-sections"),
     sheet!("general-aviation-airplane"),
     sheet!("load-test"),
     sheet!("mean-lines"),
