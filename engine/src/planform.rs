@@ -32,8 +32,8 @@ pub struct Planform {
 /// One panel between two stations.
 #[derive(Clone, Copy)]
 pub(crate) struct Bay {
-    pub(crate) y: [f64; 2],
-    pub(crate) chord: [f64; 2],
+    y: [f64; 2],
+    chord: [f64; 2],
 }
 
 impl Bay {
@@ -80,6 +80,12 @@ pub(crate) fn bays(y: &[f64], chord: &[f64]) -> Option<Vec<Bay>> {
     )
 }
 
+/// Area of one half. `None` where there is no planform.
+pub(crate) fn half_area(y: &[f64], chord: &[f64]) -> Option<f64> {
+    Some(bays(y, chord)?.iter().map(Bay::area).sum())
+}
+
+/// The numbers of quantities.
 pub(crate) fn numbers<T: Typed>(line: &[T]) -> Vec<f64> {
     line.iter().map(|value| value.si()).collect()
 }

@@ -1,5 +1,6 @@
 //! A plain flap by thin-airfoil theory.
 
+use crate::control::control_effectiveness;
 use crate::elementary;
 use crate::numeric::Sum;
 use crate::quantity::constants::PI;
@@ -45,7 +46,7 @@ pub fn flap_effect(chord_ratio: f64, section_factor: f64) -> FlapEffect {
     let ratio = if valid { chord_ratio } else { f64::NAN };
     let hinge = elementary::acos(2.0 * ratio - 1.0);
     let sine = elementary::sin(hinge);
-    let effectiveness = section_factor * (1.0 - (hinge - sine) / PI);
+    let effectiveness = control_effectiveness(ratio, 1.0, section_factor);
     let moment = section_factor * sine * (2.0 * ratio - 2.0) / 2.0;
     let cotangent = |t: f64| elementary::cos(t / 2.0) / elementary::sin(t / 2.0);
     let alpha = over_flap(hinge, ratio, cotangent);

@@ -2,7 +2,7 @@
 
 use crate::elementary;
 use crate::numeric::{Factorised, Sum};
-use crate::planform::bays;
+use crate::planform::half_area;
 use crate::quantity::constants::PI;
 
 /// Strips of one half, over all surfaces' spans together.
@@ -83,12 +83,7 @@ impl Shape {
         let whole = lines
             .iter()
             .all(|l| l.len() == n && l.iter().all(|v| v.is_finite()));
-        let area: Option<f64> = bays(&self.y, &self.chord).map(|b| {
-            b.iter()
-                .map(|b| (b.y[1] - b.y[0]) * (b.chord[0] + b.chord[1]))
-                .sum()
-        });
-        whole && area.is_some_and(|a| a > 0.0)
+        whole && half_area(&self.y, &self.chord).is_some_and(|a| a > 0.0)
     }
 
     /// Everything at a place, straight between stations; at a jump the side asked for.

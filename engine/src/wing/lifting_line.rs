@@ -2,7 +2,7 @@
 
 use crate::elementary;
 use crate::numeric::Factorised;
-use crate::planform::{bays, numbers};
+use crate::planform::{half_area, numbers};
 use crate::quantity::constants::PI;
 use crate::quantity::{Angle, Length, PerAngle, Typed};
 
@@ -92,10 +92,7 @@ impl LiftingLine {
             .zip(zero_lift)
             .map(|(t, z)| t.si() - z.si())
             .collect();
-        let half: f64 = bays(&y, &chord)?
-            .iter()
-            .map(|b| (b.y[1] - b.y[0]) * (b.chord[0] + b.chord[1]) / 2.0)
-            .sum();
+        let half = half_area(&y, &chord)?;
         let whole = angle.len() == y.len() && slope.len() == y.len() && *y.first()? == 0.0;
         let inner = &chord[..chord.len() - 1];
         let sound = slope.iter().all(|s| *s > 0.0 && s.is_finite())

@@ -3,7 +3,7 @@
 #![allow(non_snake_case, reason = "fields carry the symbols of the trade: Cm0")]
 
 use crate::numeric::Sum;
-use crate::planform::{bays, numbers};
+use crate::planform::{half_area, numbers};
 use crate::quantity::{Length, Typed};
 
 /// Moment and aerodynamic centre of a wing.
@@ -49,7 +49,7 @@ pub fn wing_moment(
     let whole = [x_le.len(), cm.len(), cl_basic.len(), cl_additional.len()]
         .iter()
         .all(|n| *n == y.len());
-    let found = bays(&y, &chord).filter(|_| whole);
+    let found = half_area(&y, &chord).filter(|half| whole && *half > 0.0);
     let none = WingMoment {
         Cm0: f64::NAN,
         x_ac: Length::from_si(f64::NAN),
@@ -62,11 +62,10 @@ pub fn wing_moment(
     let lift = integral(&y, [cl_additional, &chord, &ones]);
     let x_ac = integral(&y, [cl_additional, &chord, &quarter]) / lift;
     let arm: Vec<f64> = quarter.iter().map(|x| x - x_ac).collect();
-    let half = integral(&y, [&ones, &chord, &ones]);
     let square = integral(&y, [&ones, &chord, &chord]);
     // S mac is twice the integral of the chord squared, whatever the area.
     let moment = integral(&y, [cm, &chord, &chord]) - integral(&y, [cl_basic, &chord, &arm]);
-    if half > 0.0 && lift != 0.0 {
+    if lift != 0.0 {
         WingMoment {
             Cm0: moment / square,
             x_ac: Length::from_si(x_ac),

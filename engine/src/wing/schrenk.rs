@@ -1,6 +1,6 @@
 //! Schrenk's approximation of the spanwise load.
 
-use crate::planform::{bays, numbers};
+use crate::planform::{half_area, numbers};
 use crate::quantity::constants::PI;
 use crate::quantity::{Force, ForcePerLength, Length, Typed};
 
@@ -25,12 +25,10 @@ use crate::quantity::{Force, ForcePerLength, Length, Typed};
 /// ```
 pub fn schrenk_load(y: &[Length], chord: &[Length], lift: Force) -> Vec<ForcePerLength> {
     let (y, chord) = (numbers(y), numbers(chord));
-    let half: Option<f64> = bays(&y, &chord).map(|bays| {
-        bays.iter()
-            .map(|b| (b.y[1] - b.y[0]) * (b.chord[0] + b.chord[1]) / 2.0)
-            .sum()
-    });
-    let area = 2.0 * half.filter(|half| *half > 0.0).unwrap_or(f64::NAN);
+    let area = 2.0
+        * half_area(&y, &chord)
+            .filter(|half| *half > 0.0)
+            .unwrap_or(f64::NAN);
     let span = 2.0 * y.last().copied().unwrap_or(f64::NAN);
     let load = |(y, chord): (&f64, &f64)| {
         let out = 2.0 * y / span;
