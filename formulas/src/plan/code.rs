@@ -101,6 +101,8 @@ pub struct Fused {
     pub loads: Vec<SlotId>,
     /// Values that are the same in every condition.
     pub scalars: Vec<Scalar>,
+    /// For each of the loads whether something is divided by it.
+    pub divides: Vec<bool>,
     /// The instructions.
     pub code: Vec<Op>,
     /// How many registers there are.
@@ -133,6 +135,7 @@ impl<'a> Writer<'a> {
             writer.step(index, *step);
         }
         writer.group.steps = steps;
+        writer.group.divides = divisors(&writer.group);
         allocate(&mut writer.group, writer.computed.len());
         writer.group
     }
@@ -321,6 +324,22 @@ impl Op {
             Op::End { reads, .. } | Op::Look { reads, .. } => reads.iter_mut().collect(),
         }
     }
+}
+
+/// For each load whether something is divided by it.
+fn divisors(group: &Fused) -> Vec<bool> {
+    let mut divides = vec![false; group.loads.len()];
+    for op in &group.code {
+        if let Op::Arithmetic {
+            op: Arithmetic::Divide,
+            b: Operand::Load(load),
+            ..
+        } = op
+        {
+            divides[*load as usize] = true;
+        }
+    }
+    divides
 }
 
 /// Gives registers that are no longer read to later results.

@@ -6,11 +6,11 @@ use super::kernel::{self, Arguments, Stack};
 use super::look::Look;
 use super::pick::Table;
 use super::wide::{self, Source};
-use super::{Machine, scalar};
+use super::{Machine, quotient, scalar};
 use crate::axes::{AxisSet, Shape};
 use crate::catalogue::Compute;
 use crate::missing;
-use crate::plan::code::{Fused, Op, Operand, Register, Scalar};
+use crate::plan::code::{Arithmetic, Fused, Op, Operand, Register, Scalar};
 use crate::plan::{Instruction, SlotId, Step, Work};
 use crate::problem::{Cause, Fault};
 use crate::program::Function;
@@ -20,6 +20,8 @@ use std::rc::Rc;
 
 /// Conditions in a block: long enough to pay for the instruction, short enough for the first-level cache.
 const BLOCK: usize = 256;
+/// The shortest stretch that blocks keep to, so that columns are read without a copy.
+const STRETCH_LEAST: usize = 160;
 
 /// Values of a column that is spread out.
 const SPREAD_MOST: f64 = 65_536.0;
@@ -50,13 +52,13 @@ impl Ending {
         }
     }
 
-    /// Takes the next values; those lost in this line become plain missing ones.
-    pub(super) fn take(&mut self, values: &mut [f64], finite: bool) {
+    /// Takes the next values, with their extremes where all are finite; those lost in this line become plain missing
+    /// ones.
+    pub(super) fn take(&mut self, values: &mut [f64], extremes: Option<(f64, f64)>) {
         if self.line {
-            if finite {
-                self.extremes(values);
-            } else {
-                self.one_by_one(values);
+            match extremes {
+                Some(extremes) => self.extremes(values, extremes),
+                None => self.one_by_one(values),
             }
         }
         if let Some(column) = &mut self.column {
@@ -65,10 +67,9 @@ impl Ending {
         self.done += values.len();
     }
 
-    fn extremes(&mut self, values: &[f64]) {
-        let (high, low) = wide::extremes(values);
+    fn extremes(&mut self, values: &[f64], (high, low): (f64, f64)) {
         let place = |value: f64| {
-            let at = values.iter().position(|v| *v == value).unwrap_or(0);
+            let at = wide::position(values, value);
             Extreme {
                 value,
                 condition: self.done + at,
@@ -117,6 +118,8 @@ struct Running<'a> {
     steps: Vec<&'a Step>,
     scalars: Vec<f64>,
     feeds: Vec<Feed<'a>>,
+    /// The reciprocals of loads that divide and vary over few conditions.
+    reciprocals: Vec<Option<Feed<'a>>>,
     tables: Vec<Option<Table<'a>>>,
     looks: Vec<Option<Look<'a>>>,
     endings: Vec<Option<Ending>>,
@@ -160,9 +163,22 @@ impl Machine<'_> {
             .zip(shapes)
             .map(|(column, inner)| self.in_long_stretches(column, inner, &shape))
             .collect();
+        let reciprocals: Vec<Option<Vec<f64>>> = columns
+            .iter()
+            .zip(&fused.divides)
+            .map(|((column, inner), divides)| {
+                let few = 4.0 * inner.conditions_f64() <= shape.conditions_f64();
+                (*divides && few).then(|| quotient::reciprocals(column))?
+            })
+            .collect();
         let mut running = Running {
             fused,
             scalars: scalars?,
+            reciprocals: reciprocals
+                .iter()
+                .zip(&columns)
+                .map(|(known, (_, inner))| Some(Feed::new(known.as_ref()?, inner, &shape)))
+                .collect(),
             feeds: columns
                 .iter()
                 .map(|(column, inner)| Feed::new(column, inner, &shape))
@@ -280,6 +296,8 @@ impl Machine<'_> {
 pub(super) struct Scratch {
     registers: Vec<Vec<f64>>,
     rooms: Vec<Vec<f64>>,
+    /// The same for reciprocals.
+    known: Vec<Vec<f64>>,
     stack: Stack,
 }
 
@@ -288,6 +306,7 @@ struct Room<'r> {
     n: usize,
     registers: &'r mut [Vec<f64>],
     loaded: &'r [Source<'r>],
+    reciprocals: &'r [Option<Source<'r>>],
     scalars: &'r [f64],
 }
 
@@ -297,6 +316,24 @@ impl Room<'_> {
             Operand::Register(at) => Source::Block(&self.registers[at as usize][..self.n]),
             Operand::Load(at) => self.loaded[at as usize],
             Operand::Scalar(at) => Source::Value(self.scalars[at as usize]),
+        }
+    }
+
+    fn arithmetic(&self, op: Arithmetic, a: Operand, b: Operand, out: &mut [f64]) {
+        let (left, right) = (self.source(a), self.source(b));
+        let known = match (op, b) {
+            (Arithmetic::Divide, Operand::Load(at)) => self.reciprocals[at as usize],
+            _ => None,
+        };
+        let divided = match (op, right, known) {
+            (Arithmetic::Divide, Source::Value(divisor), _) => {
+                quotient::by_value(left, divisor, out)
+            }
+            (Arithmetic::Divide, _, Some(known)) => quotient::by_known(left, right, known, out),
+            _ => false,
+        };
+        if !divided {
+            wide::arithmetic(op, left, right, out);
         }
     }
 
@@ -314,25 +351,39 @@ impl Room<'_> {
 
 impl Running<'_> {
     fn run(&mut self, conditions: usize, scratch: &mut Scratch) {
-        let size = conditions.min(BLOCK);
+        let stretches = self.feeds.iter().map(Feed::stretch);
+        let stretch = stretches
+            .filter(|s| *s >= STRETCH_LEAST)
+            .fold(conditions.max(1), usize::min);
+        let size = block_size(stretch);
         let Scratch {
             registers,
             rooms,
+            known,
             stack,
         } = scratch;
         grow(registers, self.fused.registers, size);
         grow(rooms, self.fused.loads.len(), 0);
+        grow(known, self.fused.loads.len(), 0);
         let feeds = std::mem::take(&mut self.feeds);
+        let reciprocals = std::mem::take(&mut self.reciprocals);
         let scalars = std::mem::take(&mut self.scalars);
         let mut start = 0;
         while start < conditions {
-            let n = (conditions - start).min(BLOCK);
+            let n = (stretch - start % stretch)
+                .min(size)
+                .min(conditions - start);
             let pairs = feeds.iter().zip(rooms.iter_mut());
             let loaded: Vec<Source<'_>> = pairs.map(|(f, room)| f.block(start, n, room)).collect();
+            let pairs = reciprocals.iter().zip(known.iter_mut());
+            let known: Vec<Option<Source<'_>>> = pairs
+                .map(|(f, room)| Some(f.as_ref()?.block(start, n, room)))
+                .collect();
             let mut room = Room {
                 n,
                 registers: &mut *registers,
                 loaded: &loaded,
+                reciprocals: &known,
                 scalars: &scalars,
             };
             self.block(start, &mut room, stack);
@@ -352,9 +403,8 @@ impl Running<'_> {
                     to,
                     checked,
                 } => room.into(*to, |room, out| {
-                    let b = room.source(*b);
-                    wide::arithmetic(*op, room.source(*a), b, out);
-                    doubtful |= *checked && !wide::finite(b);
+                    doubtful |= *checked && !wide::finite(room.source(*b));
+                    room.arithmetic(*op, *a, *b, out);
                 }),
                 Op::Other {
                     instruction,
@@ -375,12 +425,14 @@ impl Running<'_> {
                     let ending = self.endings[*step].as_mut();
                     let doubted = std::mem::take(&mut doubtful);
                     room.into(*from, |room, values| {
-                        let finite = wide::settle(values) && !doubted;
+                        let settled = wide::settle(values);
+                        let finite = settled.finite && !doubted;
                         if !finite && let Work::Kernel(code) = work {
                             kernel::run(stack, code, &room.sources(reads), texts, values);
                         }
                         if let Some(ending) = ending {
-                            ending.take(values, finite);
+                            let extremes = (settled.largest, settled.smallest);
+                            ending.take(values, finite.then_some(extremes));
                         }
                     });
                 }
@@ -392,6 +444,12 @@ impl Running<'_> {
             }
         }
     }
+}
+
+/// The size of blocks that share out a stretch evenly, in whole vector registers.
+fn block_size(stretch: usize) -> usize {
+    let pieces = ((stretch + BLOCK / 2) / BLOCK).max(1);
+    stretch.div_ceil(pieces).next_multiple_of(8)
 }
 
 fn grow(blocks: &mut Vec<Vec<f64>>, count: usize, size: usize) {

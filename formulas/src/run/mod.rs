@@ -10,6 +10,7 @@ mod memo;
 mod outputs;
 mod overlay;
 mod pick;
+mod quotient;
 mod reduce;
 pub(crate) mod scalar;
 mod solve;
@@ -243,7 +244,7 @@ impl<'a> Machine<'a> {
             if column.iter().all(|v| v.is_finite()) {
                 ending.summary = summary_of(column.iter().copied().enumerate());
             } else {
-                ending.take(Rc::<Vec<f64>>::make_mut(&mut column).as_mut_slice(), false);
+                ending.take(Rc::<Vec<f64>>::make_mut(&mut column).as_mut_slice(), None);
             }
             self.finish_line(&ending, Some(&column));
         }

@@ -31,7 +31,7 @@ fn widest<R>(loops: impl FnOnce() -> R) -> R {
 /// What the machine can do, found out once.
 #[cfg(not(target_arch = "wasm32"))]
 #[inline(always)]
-fn machine() -> pulp::Arch {
+pub(super) fn machine() -> pulp::Arch {
     static MACHINE: std::sync::OnceLock<pulp::Arch> = std::sync::OnceLock::new();
     *MACHINE.get_or_init(pulp::Arch::new)
 }
@@ -137,33 +137,6 @@ pub(super) fn finite(values: Source<'_>) -> bool {
     }
 }
 
-/// Takes the sign off zeros; says whether all values are finite numbers.
-pub(super) fn settle(values: &mut [f64]) -> bool {
-    widest(
-        #[inline(always)]
-        || {
-            let mut lanes = [0.0f64; 8];
-            let (chunks, rest) = values.as_chunks_mut::<8>();
-            for chunk in chunks {
-                for i in 0..8 {
-                    let value = chunk[i] + 0.0;
-                    chunk[i] = value;
-                    lanes[i] += nothing_of(value);
-                }
-            }
-            let mut sum = 0.0;
-            for lane in lanes {
-                sum += lane;
-            }
-            for value in rest {
-                *value += 0.0;
-                sum += nothing_of(*value);
-            }
-            sum == 0.0
-        },
-    )
-}
-
 #[inline(always)]
 fn larger(a: f64, b: f64) -> f64 {
     if a > b { a } else { b }
@@ -174,65 +147,135 @@ fn smaller(a: f64, b: f64) -> f64 {
     if a < b { a } else { b }
 }
 
-/// The largest and smallest of a block of finite numbers.
-#[cfg(target_arch = "wasm32")]
-pub(super) fn extremes(values: &[f64]) -> (f64, f64) {
-    let (mut high, mut low) = ([f64::NEG_INFINITY; 8], [f64::INFINITY; 8]);
-    let (chunks, rest) = values.as_chunks::<8>();
-    for chunk in chunks {
-        for i in 0..8 {
-            high[i] = larger(chunk[i], high[i]);
-        }
-        for i in 0..8 {
-            low[i] = smaller(chunk[i], low[i]);
+/// The place of the first value that equals this one; 0 where there is none.
+pub(super) fn position(values: &[f64], value: f64) -> usize {
+    const TOGETHER: usize = 16;
+    let (chunks, rest) = values.as_chunks::<TOGETHER>();
+    let found = widest(
+        #[inline(always)]
+        || {
+            let holds =
+                |chunk: &[f64; TOGETHER]| chunk.iter().fold(false, |h, v| h | (*v == value));
+            chunks.iter().position(holds)
+        },
+    );
+    let (start, last) = match found {
+        Some(chunk) => (chunk * TOGETHER, &chunks[chunk][..]),
+        None => (chunks.len() * TOGETHER, rest),
+    };
+    let within = last.iter().position(|v| *v == value);
+    within.map_or(0, |at| start + at)
+}
+
+/// What a block of results comes to.
+#[derive(Clone, Copy, PartialEq, Debug)]
+pub(super) struct Settled {
+    /// Whether all values are finite numbers.
+    pub(super) finite: bool,
+    /// The largest and the smallest, where all are finite.
+    pub(super) largest: f64,
+    pub(super) smallest: f64,
+}
+
+impl Settled {
+    #[cfg(target_arch = "wasm32")]
+    fn of_none() -> Self {
+        Settled {
+            finite: true,
+            largest: f64::NEG_INFINITY,
+            smallest: f64::INFINITY,
         }
     }
-    let high = high
-        .iter()
-        .chain(rest)
-        .fold(f64::NEG_INFINITY, |h, v| larger(*v, h));
-    let low = low
-        .iter()
-        .chain(rest)
-        .fold(f64::INFINITY, |l, v| smaller(*v, l));
-    (high, low)
+
+    /// Takes one more value, and the sign off it where it is zero.
+    #[inline(always)]
+    fn take(&mut self, value: &mut f64) {
+        *value += 0.0;
+        self.finite &= nothing_of(*value) == 0.0;
+        self.largest = larger(*value, self.largest);
+        self.smallest = smaller(*value, self.smallest);
+    }
+
+    #[cfg(target_arch = "wasm32")]
+    #[inline(always)]
+    fn with(self, other: Settled) -> Self {
+        Settled {
+            finite: self.finite && other.finite,
+            largest: larger(other.largest, self.largest),
+            smallest: smaller(other.smallest, self.smallest),
+        }
+    }
 }
 
-/// The largest and smallest of a block of finite numbers. Written with vectors by hand: the compiler makes one value
-/// at a time of this loop where registers are wide.
+/// Takes the sign off zeros; says whether all values are finite numbers, and their extremes.
+#[cfg(target_arch = "wasm32")]
+pub(super) fn settle(values: &mut [f64]) -> Settled {
+    let (mut high, mut low) = ([f64::NEG_INFINITY; 4], [f64::INFINITY; 4]);
+    let mut nothing = [0.0f64; 4];
+    let (chunks, rest) = values.as_chunks_mut::<4>();
+    for chunk in chunks {
+        for i in 0..4 {
+            let value = chunk[i] + 0.0;
+            chunk[i] = value;
+            nothing[i] += nothing_of(value);
+            high[i] = larger(value, high[i]);
+            low[i] = smaller(value, low[i]);
+        }
+    }
+    let mut all = Settled::of_none();
+    for i in 0..4 {
+        all = all.with(Settled {
+            finite: nothing[i] == 0.0,
+            largest: high[i],
+            smallest: low[i],
+        });
+    }
+    rest.iter_mut().for_each(|value| all.take(value));
+    all
+}
+
+/// Takes the sign off zeros; says whether all values are finite numbers, and their extremes. Written with vectors by
+/// hand: the compiler makes one value at a time of this loop where registers are wide.
 #[cfg(not(target_arch = "wasm32"))]
-pub(super) fn extremes(values: &[f64]) -> (f64, f64) {
-    machine().dispatch(Extremes(values))
+pub(super) fn settle(values: &mut [f64]) -> Settled {
+    machine().dispatch(Settle(values))
 }
 
 #[cfg(not(target_arch = "wasm32"))]
-struct Extremes<'a>(&'a [f64]);
+struct Settle<'a>(&'a mut [f64]);
 
 #[cfg(not(target_arch = "wasm32"))]
-impl pulp::WithSimd for Extremes<'_> {
-    type Output = (f64, f64);
+impl pulp::WithSimd for Settle<'_> {
+    type Output = Settled;
 
     #[inline(always)]
-    fn with_simd<S: pulp::Simd>(self, simd: S) -> (f64, f64) {
-        let (lanes, rest) = S::as_simd_f64s(self.0);
-        let lowest = simd.splat_f64s(f64::NEG_INFINITY);
-        let highest = simd.splat_f64s(f64::INFINITY);
-        let (mut high, mut low) = ([lowest; 2], [highest; 2]);
-        let (pairs, odd) = lanes.as_chunks::<2>();
-        for [a, b] in pairs {
-            high = [simd.max_f64s(high[0], *a), simd.max_f64s(high[1], *b)];
-            low = [simd.min_f64s(low[0], *a), simd.min_f64s(low[1], *b)];
+    fn with_simd<S: pulp::Simd>(self, simd: S) -> Settled {
+        let (lanes, rest) = S::as_mut_simd_f64s(self.0);
+        let zero = simd.splat_f64s(0.0);
+        let mut nothing = [zero; 2];
+        let mut high = [simd.splat_f64s(f64::NEG_INFINITY); 2];
+        let mut low = [simd.splat_f64s(f64::INFINITY); 2];
+        let (pairs, odd) = lanes.as_chunks_mut::<2>();
+        for pair in pairs {
+            for i in 0..2 {
+                pair[i] = simd.add_f64s(pair[i], zero);
+                nothing[i] = simd.add_f64s(nothing[i], simd.mul_f64s(pair[i], zero));
+                high[i] = simd.max_f64s(high[i], pair[i]);
+                low[i] = simd.min_f64s(low[i], pair[i]);
+            }
         }
-        for a in odd {
-            high[0] = simd.max_f64s(high[0], *a);
-            low[0] = simd.min_f64s(low[0], *a);
+        for value in odd {
+            *value = simd.add_f64s(*value, zero);
+            nothing[0] = simd.add_f64s(nothing[0], simd.mul_f64s(*value, zero));
+            high[0] = simd.max_f64s(high[0], *value);
+            low[0] = simd.min_f64s(low[0], *value);
         }
-        let mut largest = simd.reduce_max_f64s(simd.max_f64s(high[0], high[1]));
-        let mut smallest = simd.reduce_min_f64s(simd.min_f64s(low[0], low[1]));
-        for value in rest {
-            largest = larger(*value, largest);
-            smallest = smaller(*value, smallest);
-        }
-        (largest, smallest)
+        let mut all = Settled {
+            finite: simd.reduce_sum_f64s(simd.add_f64s(nothing[0], nothing[1])) == 0.0,
+            largest: simd.reduce_max_f64s(simd.max_f64s(high[0], high[1])),
+            smallest: simd.reduce_min_f64s(simd.min_f64s(low[0], low[1])),
+        };
+        rest.iter_mut().for_each(|value| all.take(value));
+        all
     }
 }
