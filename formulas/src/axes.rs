@@ -1,5 +1,8 @@
 //! Named axes: sets of them, their shapes, and the numbering of conditions (row-major in axis order).
 
+use std::ops::Deref;
+use std::rc::Rc;
+
 /// Number of an axis, in the order in which the sheet declares them.
 #[derive(Clone, Copy, PartialEq, Eq, Hash, Debug, PartialOrd, Ord)]
 pub struct AxisId(pub u8);
@@ -90,13 +93,25 @@ impl DoubleEndedIterator for Members {
     }
 }
 
-/// The axes of a column with their lengths.
+/// The axes of a column with their lengths. Many columns share one, so that a copy costs nothing.
 #[derive(Clone, PartialEq, Eq, Debug, Default)]
-pub struct Shape {
+pub struct Shape(Rc<Dimensions>);
+
+/// What a shape consists of.
+#[derive(Clone, PartialEq, Eq, Debug, Default)]
+pub struct Dimensions {
     /// The axes in order.
     pub axes: Vec<AxisId>,
     /// Their lengths.
     pub lengths: Vec<usize>,
+}
+
+impl Deref for Shape {
+    type Target = Dimensions;
+
+    fn deref(&self) -> &Dimensions {
+        &self.0
+    }
 }
 
 impl Shape {
@@ -108,7 +123,7 @@ impl Shape {
             .iter()
             .map(|a| lengths.get(a.0 as usize).copied().unwrap_or(1))
             .collect();
-        Shape { axes, lengths }
+        Shape(Rc::new(Dimensions { axes, lengths }))
     }
 
     /// How many conditions.
@@ -148,7 +163,7 @@ impl Shape {
             .zip(&self.lengths)
             .filter(|(a, _)| Some(**a) != axis);
         let (axes, lengths) = left.map(|(a, n)| (*a, *n)).unzip();
-        Shape { axes, lengths }
+        Shape(Rc::new(Dimensions { axes, lengths }))
     }
 
     /// How far apart neighbours along an axis stand where it is put in its place among these.
@@ -182,5 +197,41 @@ impl Shape {
             .iter()
             .map(|a| inner.position(*a).map_or(0, |p| strides[p]))
             .collect()
+    }
+}
+
+/// How a column of fewer axes is read along the conditions of more: lengths and strides of the axes, neighbours that are
+/// both repeated or both stepped through being one, outermost first.
+#[derive(Clone, PartialEq, Eq, Debug, Default)]
+pub struct Runs(Rc<[(usize, usize)]>);
+
+impl Runs {
+    /// A column of shape `inner`, read along `outer`.
+    #[must_use]
+    pub fn new(inner: &Shape, outer: &Shape) -> Self {
+        let strides = outer.strides_of(inner);
+        let mut runs: Vec<(usize, usize)> = Vec::new();
+        for (length, stride) in outer.lengths.iter().copied().zip(strides) {
+            if length == 1 {
+                continue;
+            }
+            match runs.last_mut() {
+                Some(last) if last.1 == stride * length => *last = (last.0 * length, stride),
+                _ => runs.push((length, stride)),
+            }
+        }
+        Runs(runs.into())
+    }
+
+    /// Lengths and strides, outermost first.
+    #[must_use]
+    pub fn all(&self) -> &[(usize, usize)] {
+        &self.0
+    }
+
+    /// Conditions that are read from one stretch of the column, or are all the same.
+    #[must_use]
+    pub fn stretch(&self) -> usize {
+        self.0.last().map_or(usize::MAX, |(length, _)| *length)
     }
 }

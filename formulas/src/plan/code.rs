@@ -1,7 +1,7 @@
 //! What a group of steps does to a block: its instructions over registers, each register a block of values.
 
 use super::{Instruction, Plan, SlotId, Work};
-use crate::axes::AxisSet;
+use crate::axes::{AxisSet, Runs, Shape};
 use crate::syntax::BinaryOp;
 use std::collections::HashMap;
 
@@ -90,6 +90,62 @@ pub enum Op {
     },
 }
 
+/// How a column from elsewhere is read along the conditions of a group.
+#[derive(Debug)]
+pub struct Reading {
+    /// The shape over which a column that is read in short stretches is spread out first, and how.
+    pub spread: Option<(Shape, Runs)>,
+    /// How it is read, once it is spread out.
+    pub runs: Runs,
+    /// Whether something is divided by it, and it is worth while to have its reciprocals.
+    pub divides: bool,
+}
+
+/// Conditions in a block: long enough to pay for the instruction, short enough for the first-level cache.
+pub const BLOCK: usize = 256;
+/// The shortest stretch that blocks keep to.
+const STRETCH_LEAST: usize = 160;
+/// Values of a column that is spread out.
+const SPREAD_MOST: f64 = 65_536.0;
+
+impl Reading {
+    /// A column that is read in short stretches, such as one that does not vary over the innermost axis, is spread out
+    /// over the inner axes once, where that is little beside the conditions of the group.
+    fn new(plan: &Plan, load: AxisSet, shape: &Shape, divides: bool) -> Self {
+        let inner = plan.shape(load);
+        let runs = Runs::new(&inner, shape);
+        let wide = Self::wide(plan, load, shape);
+        let all = shape.conditions_f64();
+        let size = wide.conditions_f64();
+        if runs.stretch() >= BLOCK || size > SPREAD_MOST || 8.0 * size > all {
+            let divides = divides && 4.0 * inner.conditions_f64() <= all;
+            return Reading {
+                spread: None,
+                runs,
+                divides,
+            };
+        }
+        Reading {
+            runs: Runs::new(&wide, shape),
+            spread: Some((wide.clone(), Runs::new(&inner, &wide))),
+            divides,
+        }
+    }
+
+    fn wide(plan: &Plan, load: AxisSet, shape: &Shape) -> Shape {
+        let mut axes = load;
+        let mut together = 1;
+        for (axis, length) in shape.axes.iter().zip(&shape.lengths).rev() {
+            if together >= 4 * BLOCK {
+                break;
+            }
+            together *= length;
+            axes = axes.with(AxisSet::of(*axis));
+        }
+        Shape::of(axes, &plan.lengths)
+    }
+}
+
 /// Steps over the same conditions.
 #[derive(Debug, Default)]
 pub struct Fused {
@@ -101,8 +157,16 @@ pub struct Fused {
     pub loads: Vec<SlotId>,
     /// Values that are the same in every condition.
     pub scalars: Vec<Scalar>,
-    /// For each of the loads whether something is divided by it.
-    pub divides: Vec<bool>,
+    /// How each of the loads is read.
+    pub readings: Vec<Reading>,
+    /// The conditions.
+    pub shape: Shape,
+    /// Conditions that blocks keep to, so that columns are read without a copy.
+    pub stretch: usize,
+    /// Whether a step picks from a table.
+    pub picks: bool,
+    /// Whether a step looks at blocks.
+    pub looks: bool,
     /// The instructions.
     pub code: Vec<Op>,
     /// How many registers there are.
@@ -135,9 +199,33 @@ impl<'a> Writer<'a> {
             writer.step(index, *step);
         }
         writer.group.steps = steps;
-        writer.group.divides = divisors(&writer.group);
+        writer.readings();
+        let code = &writer.group.code;
+        let picks = code.iter().any(|op| matches!(op, Op::Pick { .. }));
+        let looks = code.iter().any(|op| matches!(op, Op::Look { .. }));
+        (writer.group.picks, writer.group.looks) = (picks, looks);
         allocate(&mut writer.group, writer.computed.len());
         writer.group
+    }
+
+    /// How the loads are read.
+    fn readings(&mut self) {
+        let shape = self.plan.shape(self.group.axes);
+        let divides = divisors(&self.group);
+        let axes = self
+            .group
+            .loads
+            .iter()
+            .map(|s| self.plan.slots[s.0 as usize]);
+        let readings = axes.zip(divides);
+        self.group.readings = readings
+            .map(|(axes, divides)| Reading::new(self.plan, axes, &shape, divides))
+            .collect();
+        let stretches = self.group.readings.iter().map(|r| r.runs.stretch());
+        self.group.stretch = stretches
+            .filter(|s| *s >= STRETCH_LEAST)
+            .fold(shape.conditions().max(1), usize::min);
+        self.group.shape = shape;
     }
 
     fn register(&mut self, computed: bool) -> Register {

@@ -99,6 +99,10 @@ fn scheduled(plan: &Plan, steps: &[usize]) -> Vec<usize> {
         block_axes(plan, step).unwrap_or(out)
     };
     let key = |index: usize| {
+        // What is known needs nothing, and others may be put together the sooner it is there.
+        if matches!(plan.steps[steps[index]].work, Work::Values(_)) {
+            return (0, 0);
+        }
         let axes = axes(index);
         (plan.conditions(axes).to_bits(), axes.0)
     };

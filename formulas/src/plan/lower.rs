@@ -45,6 +45,7 @@ pub fn plan(program: &Program) -> Plan {
     }
     let mut plan = lowering.plan;
     super::solves::place(&mut plan);
+    plan.prepare(program);
     plan.groups = fuse(&plan, 0..plan.steps.len());
     for at in 0..plan.solves.len() {
         plan.solves[at].groups = fuse(&plan, plan.solves[at].steps.iter().copied());

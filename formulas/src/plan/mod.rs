@@ -6,9 +6,9 @@ pub mod fuse;
 mod lower;
 mod solves;
 
-use crate::axes::{AxisId, AxisSet};
+use crate::axes::{AxisId, AxisSet, Shape};
 use crate::catalogue::Entry;
-use crate::program::{Along, Function, NodeId, PickMode, QuantityId, Reduction};
+use crate::program::{Along, Function, NodeId, PickMode, Program, QuantityId, Reduction};
 use crate::syntax::BinaryOp;
 use fuse::Group;
 use std::collections::HashMap;
@@ -37,6 +37,12 @@ pub struct Plan {
     pub groups: Vec<Group>,
     /// The length of every axis.
     pub lengths: Vec<usize>,
+    /// The quantities of each column.
+    pub lines: Vec<Vec<u32>>,
+    /// Whether there are columns that are kept only where somebody reads them.
+    pub large: bool,
+    /// The shapes of sets of axes, made once.
+    pub shapes: HashMap<AxisSet, Shape>,
 }
 
 /// How an `unknown` is solved: its trial columns are put in the place of `out`, `steps` are worked out, and the sides
@@ -129,6 +135,38 @@ pub enum Judged {
 }
 
 impl Plan {
+    /// The shape of a set of axes.
+    #[must_use]
+    pub fn shape(&self, axes: AxisSet) -> Shape {
+        match self.shapes.get(&axes) {
+            Some(shape) => shape.clone(),
+            None => Shape::of(axes, &self.lengths),
+        }
+    }
+
+    /// What a run needs to know of the columns, once all of them are there.
+    fn prepare(&mut self, program: &Program) {
+        self.lines = vec![Vec::new(); self.slots.len()];
+        for (quantity, slot) in self.quantities.iter().enumerate() {
+            if let Some(slot) = slot {
+                self.lines[slot.0 as usize].push(quantity as u32);
+            }
+        }
+        self.large = self
+            .slots
+            .iter()
+            .any(|axes| self.conditions(*axes) > fuse::STORED_MOST);
+        let quantities = program.quantities.iter().map(|q| q.axes);
+        let requirements = program.requirements.iter().map(|r| r.axes);
+        let sets: Vec<AxisSet> = self.slots.iter().copied().chain(quantities).collect();
+        for axes in sets.into_iter().chain(requirements) {
+            let lengths = &self.lengths;
+            self.shapes
+                .entry(axes)
+                .or_insert_with(|| Shape::of(axes, lengths));
+        }
+    }
+
     /// How many conditions a set of axes has.
     #[must_use]
     pub fn conditions(&self, axes: AxisSet) -> f64 {

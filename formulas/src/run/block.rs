@@ -7,24 +7,15 @@ use super::look::Look;
 use super::pick::Table;
 use super::wide::{self, Source};
 use super::{Machine, quotient, scalar};
-use crate::axes::{AxisSet, Shape};
 use crate::catalogue::Compute;
 use crate::missing;
-use crate::plan::code::{Arithmetic, Fused, Op, Operand, Register, Scalar};
-use crate::plan::{Instruction, SlotId, Step, Work};
+use crate::plan::code::{Arithmetic, BLOCK, Fused, Op, Operand, Reading, Register, Scalar};
+use crate::plan::{Instruction, Plan, SlotId, Step, Work};
 use crate::problem::{Cause, Fault};
 use crate::program::Function;
 use crate::syntax::BinaryOp;
 use crate::values::{Extreme, NONE, Summary, is_excluded};
 use std::rc::Rc;
-
-/// Conditions in a block: long enough to pay for the instruction, short enough for the first-level cache.
-const BLOCK: usize = 256;
-/// The shortest stretch that blocks keep to, so that columns are read without a copy.
-const STRETCH_LEAST: usize = 160;
-
-/// Values of a column that is spread out.
-const SPREAD_MOST: f64 = 65_536.0;
 
 /// How often a cause took a value, and in which first five conditions.
 pub(super) type Losses = Vec<(Cause, (u64, Vec<usize>))>;
@@ -114,13 +105,15 @@ impl Ending {
 
 /// What a group is run with.
 struct Running<'a> {
+    plan: &'a Plan,
     fused: &'a Fused,
-    steps: Vec<&'a Step>,
     scalars: Vec<f64>,
     feeds: Vec<Feed<'a>>,
-    /// The reciprocals of loads that divide and vary over few conditions.
+    /// The reciprocals of loads that divide; none at all where no load does.
     reciprocals: Vec<Option<Feed<'a>>>,
-    tables: Vec<Option<Table<'a>>>,
+    /// By the index of the step; none at all where no step picks.
+    tables: Vec<Option<Table>>,
+    /// By the index of the step; none at all where no step looks.
     looks: Vec<Option<Look<'a>>>,
     endings: Vec<Option<Ending>>,
     texts: &'a [String],
@@ -133,71 +126,33 @@ impl Machine<'_> {
         fused: &Fused,
         stored: &dyn Fn(SlotId) -> bool,
     ) -> Option<()> {
-        let plan = self.plan;
-        let shape = Shape::of(fused.axes, &plan.lengths);
-        let steps: Vec<&Step> = fused.steps.iter().map(|s| &plan.steps[*s]).collect();
-        self.count(&steps, fused.code.len() as f64 * shape.conditions_f64())?;
+        let (plan, program) = (self.plan, self.program);
+        let first = fused.steps.first().map(|s| &plan.steps[*s]);
+        let operations = fused.code.len() as f64 * fused.shape.conditions_f64();
+        self.count(first, operations)?;
         // Columns are held apart from the machine, so that it can take what the group makes.
-        let read: Option<Vec<Rc<Vec<f64>>>> = fused
-            .loads
-            .iter()
-            .map(|s| self.column(*s).cloned())
-            .collect();
-        let read = read?;
-        let scalars: Option<Vec<f64>> = fused.scalars.iter().map(|s| self.scalar(*s)).collect();
-        let bases: Vec<Option<(Rc<Vec<f64>>, Shape)>> = steps
-            .iter()
-            .map(|step| match step.work {
-                Work::Pick { .. } => {
-                    let base = *step.reads.first()?;
-                    Some((self.column(base)?.clone(), self.shape(base)))
-                }
-                _ => None,
-            })
-            .collect();
-        let endings = self.endings(&steps, &shape, stored)?;
-        let program = self.program;
-        let shapes: Vec<Shape> = fused.loads.iter().map(|s| self.shape(*s)).collect();
-        let columns: Vec<(Rc<Vec<f64>>, Shape)> = read
-            .into_iter()
-            .zip(shapes)
-            .map(|(column, inner)| self.in_long_stretches(column, inner, &shape))
-            .collect();
-        let reciprocals: Vec<Option<Vec<f64>>> = columns
-            .iter()
-            .zip(&fused.divides)
-            .map(|((column, inner), divides)| {
-                let few = 4.0 * inner.conditions_f64() <= shape.conditions_f64();
-                (*divides && few).then(|| quotient::reciprocals(column))?
-            })
-            .collect();
+        let columns = self.columns_read(fused)?;
+        let scalars = fused.scalars.iter().map(|s| self.scalar(*s));
+        let scalars = scalars.collect::<Option<Vec<f64>>>()?;
+        let endings = self.endings(fused, stored)?;
+        let known = reciprocals(fused, &columns);
         let mut running = Running {
+            plan,
             fused,
-            scalars: scalars?,
-            reciprocals: reciprocals
+            scalars,
+            feeds: feeds(fused, &columns).collect(),
+            reciprocals: known
                 .iter()
-                .zip(&columns)
-                .map(|(known, (_, inner))| Some(Feed::new(known.as_ref()?, inner, &shape)))
+                .zip(&fused.readings)
+                .map(|(known, reading)| Some(Feed::along(known.as_ref()?, reading.runs.clone())))
                 .collect(),
-            feeds: columns
-                .iter()
-                .map(|(column, inner)| Feed::new(column, inner, &shape))
-                .collect(),
-            tables: steps
-                .iter()
-                .zip(&bases)
-                .map(|(step, base)| Table::of(&step.work, base.as_ref(), &program.axes))
-                .collect(),
-            looks: steps
-                .iter()
-                .map(|step| Look::of(program, plan, &step.work, &shape, step))
-                .collect(),
+            tables: self.tables(fused),
+            looks: self.looks(fused),
             endings,
             texts: &program.texts,
-            steps,
         };
         let mut scratch = std::mem::take(&mut self.scratch);
-        running.run(shape.conditions(), &mut scratch);
+        running.run(fused.shape.conditions(), &mut scratch);
         self.scratch = scratch;
         let Running { endings, looks, .. } = running;
         for ending in endings.into_iter().flatten() {
@@ -209,37 +164,55 @@ impl Machine<'_> {
         Some(())
     }
 
-    /// A column that is read in short stretches, such as one that does not vary over the innermost axis, is spread out
-    /// over the inner axes once, where that is little beside the conditions of the group.
-    fn in_long_stretches(
-        &self,
-        column: Rc<Vec<f64>>,
-        inner: Shape,
-        shape: &Shape,
-    ) -> (Rc<Vec<f64>>, Shape) {
-        if Feed::new(&column, &inner, shape).stretch() >= BLOCK {
-            return (column, inner);
-        }
-        let mut axes = inner
-            .axes
+    /// The columns that a group reads, spread out where that is worth while.
+    fn columns_read(&self, fused: &Fused) -> Option<Vec<Rc<Vec<f64>>>> {
+        let column = |(slot, reading): (&SlotId, &Reading)| {
+            let column = self.column(*slot)?.clone();
+            let Some((wide, runs)) = &reading.spread else {
+                return Some(column);
+            };
+            let mut spread = vec![0.0; wide.conditions()];
+            Feed::along(&column, runs.clone()).fill(0, &mut spread);
+            Some(Rc::new(spread))
+        };
+        fused
+            .loads
             .iter()
-            .fold(AxisSet::NONE, |set, a| set.with(AxisSet::of(*a)));
-        let mut together = 1;
-        for (axis, length) in shape.axes.iter().zip(&shape.lengths).rev() {
-            if together >= 4 * BLOCK {
-                break;
-            }
-            together *= length;
-            axes = axes.with(AxisSet::of(*axis));
+            .zip(&fused.readings)
+            .map(column)
+            .collect()
+    }
+
+    /// The tables of the steps that pick.
+    fn tables(&self, fused: &Fused) -> Vec<Option<Table>> {
+        if !fused.picks {
+            return Vec::new();
         }
-        let wide = Shape::of(axes, &self.plan.lengths);
-        let size = wide.conditions_f64();
-        if size > SPREAD_MOST || 8.0 * size > shape.conditions_f64() {
-            return (column, inner);
+        let table = |at: &usize| {
+            let step = &self.plan.steps[*at];
+            let Work::Pick { selections } = &step.work else {
+                return None;
+            };
+            let (axis, mode) = selections.first()?;
+            let values = self.column(*step.reads.first()?)?.clone();
+            Some(Table::new(&self.program.axes, *axis, *mode, values))
+        };
+        fused.steps.iter().map(table).collect()
+    }
+
+    /// What looks at the blocks.
+    fn looks<'l>(&self, fused: &'l Fused) -> Vec<Option<Look<'l>>>
+    where
+        Self: 'l,
+    {
+        if !fused.looks {
+            return Vec::new();
         }
-        let mut spread = vec![0.0; wide.conditions()];
-        Feed::new(&column, &inner, &wide).fill(0, &mut spread);
-        (Rc::new(spread), wide)
+        let look = |at: &usize| {
+            let step = &self.plan.steps[*at];
+            Look::of(self.program, self.plan, &step.work, &fused.shape, step)
+        };
+        fused.steps.iter().map(look).collect()
     }
 
     fn scalar(&self, scalar: Scalar) -> Option<f64> {
@@ -251,12 +224,13 @@ impl Machine<'_> {
 
     fn endings(
         &mut self,
-        steps: &[&Step],
-        shape: &Shape,
+        fused: &Fused,
         stored: &dyn Fn(SlotId) -> bool,
     ) -> Option<Vec<Option<Ending>>> {
-        let mut endings = Vec::with_capacity(steps.len());
-        for step in steps {
+        let plan = self.plan;
+        let mut endings = Vec::with_capacity(fused.steps.len());
+        for at in &fused.steps {
+            let step = &plan.steps[*at];
             let slot = match step.work {
                 Work::Kernel(_) | Work::Pick { .. } => step.out.first(),
                 _ => None,
@@ -265,7 +239,7 @@ impl Machine<'_> {
                 Some(slot) => {
                     let mut ending = Ending::new(*slot, self.is_line(*slot));
                     if stored(*slot) {
-                        ending.column = Some(self.room(step, shape.conditions())?);
+                        ending.column = Some(self.room(step, fused.shape.conditions())?);
                     }
                     Some(ending)
                 }
@@ -289,6 +263,23 @@ impl Machine<'_> {
         }
         Some(column)
     }
+}
+
+/// The loads of a group, read along its conditions.
+fn feeds<'a>(fused: &'a Fused, columns: &'a [Rc<Vec<f64>>]) -> impl Iterator<Item = Feed<'a>> + 'a {
+    let pairs = columns.iter().zip(&fused.readings);
+    pairs.map(|(column, reading)| Feed::along(column, reading.runs.clone()))
+}
+
+/// The reciprocals of the loads that divide and vary over few conditions.
+fn reciprocals(fused: &Fused, columns: &[Rc<Vec<f64>>]) -> Vec<Option<Vec<f64>>> {
+    if !fused.readings.iter().any(|r| r.divides) {
+        return Vec::new();
+    }
+    let pairs = columns.iter().zip(&fused.readings);
+    pairs
+        .map(|(column, reading)| reading.divides.then(|| quotient::reciprocals(column))?)
+        .collect()
 }
 
 /// Blocks that are used again from group to group.
@@ -322,7 +313,9 @@ impl Room<'_> {
     fn arithmetic(&self, op: Arithmetic, a: Operand, b: Operand, out: &mut [f64]) {
         let (left, right) = (self.source(a), self.source(b));
         let known = match (op, b) {
-            (Arithmetic::Divide, Operand::Load(at)) => self.reciprocals[at as usize],
+            (Arithmetic::Divide, Operand::Load(at)) => {
+                self.reciprocals.get(at as usize).copied().flatten()
+            }
             _ => None,
         };
         let divided = match (op, right, known) {
@@ -351,10 +344,7 @@ impl Room<'_> {
 
 impl Running<'_> {
     fn run(&mut self, conditions: usize, scratch: &mut Scratch) {
-        let stretches = self.feeds.iter().map(Feed::stretch);
-        let stretch = stretches
-            .filter(|s| *s >= STRETCH_LEAST)
-            .fold(conditions.max(1), usize::min);
+        let stretch = self.fused.stretch;
         let size = block_size(stretch);
         let Scratch {
             registers,
@@ -415,13 +405,13 @@ impl Running<'_> {
                 }),
                 Op::Pick { step, position, to } => room.into(*to, |room, out| {
                     let position = room.source(*position);
-                    if let Some(table) = &self.tables[*step] {
+                    if let Some(Some(table)) = self.tables.get(*step) {
                         let each = out.iter_mut().enumerate();
                         each.for_each(|(i, v)| *v = table.value(position.at(i)));
                     }
                 }),
                 Op::End { step, from, reads } => {
-                    let work = &self.steps[*step].work;
+                    let work = &self.plan.steps[self.fused.steps[*step]].work;
                     let ending = self.endings[*step].as_mut();
                     let doubted = std::mem::take(&mut doubtful);
                     room.into(*from, |room, values| {
@@ -437,7 +427,7 @@ impl Running<'_> {
                     });
                 }
                 Op::Look { step, reads } => {
-                    if let Some(look) = &mut self.looks[*step] {
+                    if let Some(Some(look)) = self.looks.get_mut(*step) {
                         look.take(start, room.n, &room.sources(reads));
                     }
                 }

@@ -1,38 +1,30 @@
 //! Broadcasting: how a column of fewer axes is read along the conditions of a line.
 
 use super::wide::Source;
-use crate::axes::{AXES_MOST, Shape};
+use crate::axes::{AXES_MOST, Runs, Shape};
 
 /// Reads a column along the conditions of a larger shape, block by block.
 pub(super) struct Feed<'a> {
     values: &'a [f64],
-    /// Lengths and strides of the merged axes, outermost first.
-    runs: Vec<(usize, usize)>,
+    runs: Runs,
 }
 
 impl<'a> Feed<'a> {
     /// A column of shape `inner`, read along `outer`.
     #[must_use]
     pub(super) fn new(values: &'a [f64], inner: &Shape, outer: &Shape) -> Self {
-        let strides = outer.strides_of(inner);
-        let mut runs: Vec<(usize, usize)> = Vec::new();
-        for (length, stride) in outer.lengths.iter().copied().zip(strides) {
-            if length == 1 {
-                continue;
-            }
-            match runs.last_mut() {
-                // Neighbouring axes that are both repeated, or both stepped through, make one longer run.
-                Some(last) if last.1 == stride * length => *last = (last.0 * length, stride),
-                _ => runs.push((length, stride)),
-            }
-        }
+        Feed::along(values, Runs::new(inner, outer))
+    }
+
+    /// A column read in runs that are known.
+    pub(super) fn along(values: &'a [f64], runs: Runs) -> Self {
         Feed { values, runs }
     }
 
     /// The whole column, where it is read straight through.
     #[must_use]
     pub(super) fn straight(&self) -> Option<&'a [f64]> {
-        match self.runs.as_slice() {
+        match self.runs.all() {
             [(length, 1)] if *length == self.values.len() => Some(self.values),
             _ => None,
         }
@@ -46,7 +38,7 @@ impl<'a> Feed<'a> {
     #[must_use]
     pub(super) fn value(&self, mut condition: usize) -> f64 {
         let mut offset = 0;
-        for (length, stride) in self.runs.iter().rev() {
+        for (length, stride) in self.runs.all().iter().rev() {
             offset += condition % length * stride;
             condition /= length;
         }
@@ -60,7 +52,7 @@ impl<'a> Feed<'a> {
         n: usize,
         room: &'s mut Vec<f64>,
     ) -> Source<'s> {
-        let Some((&(inner, stride), outer)) = self.runs.split_last() else {
+        let Some((&(inner, stride), outer)) = self.runs.all().split_last() else {
             return Source::Value(self.at(0));
         };
         let along = start % inner;
@@ -83,11 +75,6 @@ impl<'a> Feed<'a> {
         Source::Block(room)
     }
 
-    /// Conditions that are read from one stretch of the column, or are all the same.
-    pub(super) fn stretch(&self) -> usize {
-        self.runs.last().map_or(usize::MAX, |(length, _)| *length)
-    }
-
     /// The values for the conditions from `start` on.
     pub(super) fn fill(&self, start: usize, out: &mut [f64]) {
         if let Some(all) = self.straight()
@@ -96,7 +83,7 @@ impl<'a> Feed<'a> {
             out.copy_from_slice(part);
             return;
         }
-        let Some((&(inner, stride), outer)) = self.runs.split_last() else {
+        let Some((&(inner, stride), outer)) = self.runs.all().split_last() else {
             out.fill(self.at(0));
             return;
         };

@@ -40,7 +40,7 @@ impl<'a> Look<'a> {
             Work::Reduce { how, over } => {
                 let out = *step.out.first()?;
                 let axes = plan.slots.get(out.0 as usize).copied()?;
-                let out_shape = Shape::of(axes, &plan.lengths);
+                let out_shape = plan.shape(axes);
                 let reducer = Reducer::new(*how, shape, *over, &out_shape, &program.axes);
                 Some(Look::Reduce(out, reducer))
             }
@@ -49,10 +49,7 @@ impl<'a> Look<'a> {
                     let line = program.governing.get(*at)?;
                     let quantity = program.quantities.get(line.quantity.0 as usize)?;
                     let left = quantity.axes.without(line.over);
-                    Some(Look::Groups(
-                        *at,
-                        Groups::new(shape, &Shape::of(left, &plan.lengths)),
-                    ))
+                    Some(Look::Groups(*at, Groups::new(shape, &plan.shape(left))))
                 }
                 Judged::Requirement(at) => {
                     let line = program.requirements.get(*at)?;

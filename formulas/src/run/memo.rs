@@ -382,7 +382,7 @@ impl Warm<'_> {
         words.extend(
             step.out
                 .iter()
-                .map(|s| u64::from(!machine.lines[s.0 as usize].is_empty())),
+                .map(|s| u64::from(!machine.plan.lines[s.0 as usize].is_empty())),
         );
         for slot in &step.reads {
             words.push(self.contents[slot.0 as usize]?);
@@ -453,7 +453,10 @@ impl Warm<'_> {
     fn ran_quantities(&self, machine: &Machine<'_>) -> Vec<usize> {
         let steps = self.ran.iter().map(|at| &machine.plan.steps[*at]);
         let of_step = |step: &Step| {
-            let made = step.out.iter().flat_map(|s| &machine.lines[s.0 as usize]);
+            let made = step
+                .out
+                .iter()
+                .flat_map(|s| &machine.plan.lines[s.0 as usize]);
             let made = made.map(|q| *q as usize);
             made.chain(step.quantity.map(|q| q.0 as usize))
                 .collect::<Vec<_>>()

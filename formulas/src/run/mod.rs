@@ -71,8 +71,6 @@ pub(crate) struct Machine<'a> {
     trying: bool,
     scratch: block::Scratch,
     found: Found,
-    /// The quantities of each column.
-    lines: Vec<Vec<u32>>,
     /// What lines came to, where it is to be kept.
     recorded: Option<HashMap<SlotId, (Summary, block::Losses)>>,
     /// Groups of steps by the columns whose change makes them run again.
@@ -118,18 +116,12 @@ pub fn run(
 
 impl<'a> Machine<'a> {
     fn new(program: &'a Program, plan: &'a Plan, limits: Limits) -> Self {
-        let mut lines = vec![Vec::new(); plan.slots.len()];
-        for (quantity, slot) in plan.quantities.iter().enumerate() {
-            if let Some(slot) = slot {
-                lines[slot.0 as usize].push(quantity as u32);
-            }
-        }
         let unknown = |axes: AxisSet| QuantityValues {
-            shape: Shape::of(axes, &plan.lengths),
+            shape: plan.shape(axes),
             ..QuantityValues::default()
         };
         let not_judged = |r: &crate::program::Requirement| RequirementValues {
-            shape: Shape::of(r.axes, &plan.lengths),
+            shape: plan.shape(r.axes),
             ..RequirementValues::default()
         };
         Machine {
@@ -150,7 +142,6 @@ impl<'a> Machine<'a> {
                 freebodies: program.freebodies.iter().map(|_| None).collect(),
                 guards: vec![look::Outside::default(); program.guards.len()],
             },
-            lines,
             recorded: None,
             again: HashMap::new(),
         }
@@ -164,6 +155,15 @@ impl<'a> Machine<'a> {
     /// Runs groups; long columns are kept only where one is asked for or read by another group.
     fn run_groups(&mut self, groups: &[Group], asked: &[String]) {
         let plan = self.plan;
+        if !plan.large {
+            for group in groups {
+                if self.stopped {
+                    break;
+                }
+                self.run_group(group, &|_| true);
+            }
+            return;
+        }
         let wanted = self.wanted(asked);
         let (read, last) = reads_of(plan, groups);
         let stored = |slot: SlotId| {
@@ -204,7 +204,7 @@ impl<'a> Machine<'a> {
 
     pub(crate) fn shape(&self, slot: SlotId) -> Shape {
         let axes = self.plan.slots.get(slot.0 as usize).copied();
-        Shape::of(axes.unwrap_or(AxisSet::NONE), &self.plan.lengths)
+        self.plan.shape(axes.unwrap_or(AxisSet::NONE))
     }
 
     pub(crate) fn column(&self, slot: SlotId) -> Option<&Rc<Vec<f64>>> {
@@ -218,7 +218,7 @@ impl<'a> Machine<'a> {
 
     /// Whether a column is the result of a line of the sheet.
     fn is_line(&self, slot: SlotId) -> bool {
-        !self.trying && !self.lines[slot.0 as usize].is_empty()
+        !self.trying && !self.plan.lines[slot.0 as usize].is_empty()
     }
 
     fn run_group(&mut self, group: &Group, stored: &dyn Fn(SlotId) -> bool) -> Option<()> {
@@ -269,7 +269,8 @@ impl<'a> Machine<'a> {
     /// The values of every quantity that a column belongs to; what was lost is told once.
     fn finish_line(&mut self, ending: &Ending, column: Option<&Rc<Vec<f64>>>) {
         let shape = self.shape(ending.slot);
-        let lines = std::mem::take(&mut self.lines[ending.slot.0 as usize]);
+        let plan = self.plan;
+        let lines = &plan.lines[ending.slot.0 as usize];
         if let Some(first) = lines.first() {
             let quantity = &self.program.quantities[*first as usize];
             for (cause, (count, first)) in &ending.losses {
@@ -282,7 +283,7 @@ impl<'a> Machine<'a> {
                     .push(located(quantity.statement, quantity.span, fault));
             }
         }
-        for at in &lines {
+        for at in lines {
             let Some(result) = self.found.quantities.get_mut(*at as usize) else {
                 continue;
             };
@@ -293,7 +294,6 @@ impl<'a> Machine<'a> {
                 values: values.clone(),
             });
         }
-        self.lines[ending.slot.0 as usize] = lines;
         if let Some(recorded) = &mut self.recorded {
             recorded.insert(ending.slot, (ending.summary, ending.losses.clone()));
         }
@@ -308,7 +308,7 @@ impl<'a> Machine<'a> {
         let shape = self.shape(out);
         let read = step.reads.iter().map(|s| self.shape(*s).conditions_f64());
         let largest = read.fold(shape.conditions_f64(), f64::max);
-        self.count(&[step], 8.0 * largest)?;
+        self.count(Some(step), 8.0 * largest)?;
         let columns = match &step.work {
             Work::Solve(at) => self.solve(*at)?,
             _ => self.over_columns(step, &shape)?,
@@ -404,18 +404,18 @@ impl<'a> Machine<'a> {
             set.with(self.plan.slots[s.0 as usize])
         });
         let axis = axis.map_or(AxisSet::NONE, AxisSet::of);
-        Shape::of(all.with(axis), &self.plan.lengths)
+        self.plan.shape(all.with(axis))
     }
 
-    /// Counts the operations of steps, and stops the run where there are too many.
-    fn count(&mut self, steps: &[&Step], operations: f64) -> Option<()> {
+    /// Counts operations, those of a step among them, and stops the run where there are too many.
+    fn count(&mut self, step: Option<&Step>, operations: f64) -> Option<()> {
         self.operations += operations;
         if self.operations > self.limits.operations && !self.stopped {
             self.stopped = true;
             let fault = Fault::OperationLimit {
                 limit: self.limits.operations,
             };
-            if let Some(step) = steps.first() {
+            if let Some(step) = step {
                 self.report_at_step(step, fault);
             }
         }

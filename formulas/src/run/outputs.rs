@@ -85,7 +85,7 @@ impl Machine<'_> {
         let Some(guard) = self.program.guards.get(at).filter(|_| outside.count > 0) else {
             return;
         };
-        let shape = Shape::of(guard.axes, &self.plan.lengths);
+        let shape = self.plan.shape(guard.axes);
         let arguments = guard.entry.parameters.iter().zip(&guard.arguments);
         let named: Vec<String> = arguments
             .zip(&outside.numbers)
@@ -158,14 +158,14 @@ impl Machine<'_> {
         GoverningValues {
             all: found.summary,
             groups: groups.unwrap_or_else(|| vec![found.summary]),
-            group_shape: Shape::of(axes, &self.plan.lengths),
+            group_shape: self.plan.shape(axes),
             ..GoverningValues::default()
         }
     }
 
     fn freebody(&mut self, at: usize) -> FreebodyValues {
         let body = &self.program.freebodies[at];
-        let shape = Shape::of(body.axes, &self.plan.lengths);
+        let shape = self.plan.shape(body.axes);
         let Some(look) = self.found.freebodies[at].take() else {
             return FreebodyValues {
                 shape,

@@ -3,7 +3,6 @@
 use super::feed::Feed;
 use crate::axes::{AxisId, Shape};
 use crate::missing::{lost, of_operands};
-use crate::plan::Work;
 use crate::problem::Cause;
 use crate::program::{Axis, PickMode};
 use std::collections::HashMap;
@@ -29,26 +28,18 @@ struct Points {
 }
 
 /// A line of values along one axis, from which a position picks.
-pub(super) struct Table<'a> {
+pub(super) struct Table {
     points: Points,
-    values: &'a [f64],
+    values: Rc<Vec<f64>>,
 }
 
-impl<'a> Table<'a> {
-    /// The table of a pick whose base varies over the picked axis alone.
-    pub(super) fn of(
-        work: &Work,
-        base: Option<&'a (Rc<Vec<f64>>, Shape)>,
-        axes: &[Axis],
-    ) -> Option<Self> {
-        let (Work::Pick { selections }, Some((values, _))) = (work, base) else {
-            return None;
-        };
-        let (axis, mode) = selections.first()?;
-        Some(Table {
-            points: Points::new(axes, *axis, *mode),
+impl Table {
+    /// The table of a base that varies over the picked axis alone.
+    pub(super) fn new(axes: &[Axis], axis: AxisId, mode: PickMode, values: Rc<Vec<f64>>) -> Self {
+        Table {
+            points: Points::new(axes, axis, mode),
             values,
-        })
+        }
     }
 
     /// The value at a position.

@@ -274,7 +274,7 @@ impl Machine<'_> {
         let requirements = self.program.requirements.iter();
         requirements
             .map(|r| {
-                let shape = Shape::of(r.axes, &self.plan.lengths);
+                let shape = self.plan.shape(r.axes);
                 r.parts
                     .iter()
                     .map(|part| self.reserve_of(part, &shape))
@@ -307,7 +307,7 @@ impl Machine<'_> {
         self.note_met(ledger);
         for (requirement, nominal) in ledger.reserves.iter().enumerate() {
             let line = &self.program.requirements[requirement];
-            let shape = Shape::of(line.axes, &self.plan.lengths);
+            let shape = self.plan.shape(line.axes);
             for (at, (part, old)) in line.parts.iter().zip(nominal).enumerate() {
                 let new = self.reserve_of(part, &shape);
                 let changes: Vec<f64> = new.iter().zip(old).map(|(n, o)| change(*n, *o)).collect();
@@ -324,7 +324,7 @@ impl Machine<'_> {
         let lines = self.program.requirements.iter().zip(&mut ledger.met);
         for (line, met) in lines.filter(|(line, _)| line.parts.is_empty()) {
             if let Some(truth) = line.condition.and_then(|c| self.held(c)) {
-                let shape = Shape::of(line.axes, &self.plan.lengths);
+                let shape = self.plan.shape(line.axes);
                 let feed = truth.feed(&shape);
                 *met &= (0..shape.conditions()).all(|at| feed.value(at) != 0.0);
             }
@@ -406,7 +406,7 @@ impl Machine<'_> {
             if !concerns(&found.sensitivity) {
                 continue;
             }
-            let shape = Shape::of(line.axes, &self.plan.lengths);
+            let shape = self.plan.shape(line.axes);
             for part in &line.parts {
                 self.with_sides(part, &shape, |[left, right]| {
                     for at in 0..shape.conditions() {
