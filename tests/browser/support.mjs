@@ -75,7 +75,7 @@ export async function typeRows(page, lines) {
 
 /** The report that the command line gives for `text`. */
 export function commandLineReport(text) {
-  const command = ["run", "-q", "--release", "-p", "formulas", "--bin", "pitchwright", "--", "run", "-", "--json"];
+  const command = ["run", "-q", "-p", "formulas", "--bin", "pitchwright", "--", "run", "-", "--json"];
   const { stdout, stderr, status, error } = spawnSync("cargo", command, { cwd: root, input: text, encoding: "utf8", maxBuffer: 1 << 28 });
   if (error || ![0, 1, 2].includes(status)) throw new Error(`the command line gave no report: ${error ?? stderr}`);
   return JSON.parse(stdout);

@@ -5,7 +5,7 @@ use std::path::Path;
 use std::process::{Command, ExitCode, Stdio};
 
 /// A step and the command that does it.
-const STEPS: [(&str, &[&str]); 5] = [
+const STEPS: [(&str, &[&str]); 4] = [
     ("format", &["cargo", "fmt", "--all", "--check"]),
     (
         "clippy, native",
@@ -36,19 +36,6 @@ const STEPS: [(&str, &[&str]); 5] = [
         ],
     ),
     ("tests", &["cargo", "test", "--workspace"]),
-    (
-        "command line",
-        &[
-            "cargo",
-            "build",
-            "--quiet",
-            "--release",
-            "--package",
-            "formulas",
-            "--bin",
-            "pitchwright",
-        ],
-    ),
 ];
 
 /// What was counted.
