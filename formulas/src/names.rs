@@ -8,7 +8,7 @@ use crate::syntax::{
     Argument, DefinitionValue, Expr, ExprKind, FreebodyItem, Name, Statement, StatementKind,
     Toleranced, Tree,
 };
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 /// What a symbol stands for.
 #[derive(Clone, Copy, PartialEq, Eq, Debug)]
@@ -47,8 +47,8 @@ pub struct Symbol {
 pub struct Names {
     /// In the order of the sheet; the first definition of a name stands.
     pub symbols: Vec<Symbol>,
-    by_name: HashMap<String, usize>,
-    functions: HashMap<String, usize>,
+    by_name: FxHashMap<String, usize>,
+    functions: FxHashMap<String, usize>,
     /// The own functions with their statements, in the order of the sheet.
     pub function_list: Vec<(String, usize)>,
 }

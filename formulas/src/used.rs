@@ -2,7 +2,8 @@
 
 use crate::program::{Program, QuantityId};
 use crate::syntax::{StatementKind, Tree};
-use std::collections::{BTreeMap, HashMap};
+use rustc_hash::FxHashMap;
+use std::collections::BTreeMap;
 use std::rc::Rc;
 
 /// How deep sheets may use one another.
@@ -25,8 +26,8 @@ pub struct UsedSheet {
     pub warnings: usize,
     /// The circles of sheets met on the way to it, each from a name back to itself.
     pub circles: Vec<Vec<String>>,
-    symbols: HashMap<String, QuantityId>,
-    tolerances: HashMap<QuantityId, Vec<usize>>,
+    symbols: FxHashMap<String, QuantityId>,
+    tolerances: FxHashMap<QuantityId, Vec<usize>>,
 }
 
 impl UsedSheet {
@@ -38,14 +39,14 @@ impl UsedSheet {
         (errors, warnings): (usize, usize),
         circles: Vec<Vec<String>>,
     ) -> Self {
-        let mut symbols = HashMap::new();
+        let mut symbols = FxHashMap::default();
         for (at, quantity) in program.quantities.iter().enumerate() {
             if quantity.listed {
                 let id = QuantityId(at as u32);
                 symbols.entry(quantity.symbol.clone()).or_insert(id);
             }
         }
-        let mut tolerances: HashMap<QuantityId, Vec<usize>> = HashMap::new();
+        let mut tolerances: FxHashMap<QuantityId, Vec<usize>> = FxHashMap::default();
         for (at, tolerance) in program.tolerances.iter().enumerate() {
             tolerances.entry(tolerance.quantity).or_default().push(at);
         }

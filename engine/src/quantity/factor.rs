@@ -68,12 +68,12 @@ impl Factor {
             },
         ) = (self.form, other.form)
         {
-            // Crosswise reduction first keeps the parts as small as they can be.
+            // Crosswise reduction keeps the parts as small as they can be: nothing is common to the products.
             let (left, right) = (common(a, d), common(c, b));
             let above = (a / left).checked_mul(c / right);
             let below = (b / right).checked_mul(d / left);
             if let (Some(above), Some(below), Some(pi)) = (above, below, i.checked_add(j)) {
-                return Self::exact(above, below, pi);
+                return Self::reduced(above, below, pi);
             }
         }
         Self::rounded(self.value() * other.value())
@@ -180,29 +180,37 @@ impl Factor {
     }
 
     const fn exact(above: u128, below: u128, pi: i32) -> Self {
+        if above == 0 || below == 0 {
+            return Self::rounded(above as f64 / below as f64 * power_of_pi(pi));
+        }
         let divisor = common(above, below);
-        if above == 0
-            || below == 0
-            || (above / divisor) >> 127 != 0
-            || (below / divisor) >> 127 != 0
-        {
+        Self::reduced(above / divisor, below / divisor, pi)
+    }
+
+    /// From parts that have nothing in common.
+    const fn reduced(above: u128, below: u128, pi: i32) -> Self {
+        if above >> 127 != 0 || below >> 127 != 0 {
             return Self::rounded(above as f64 / below as f64 * power_of_pi(pi));
         }
         Self {
-            form: Form::Exact {
-                above: above / divisor,
-                below: below / divisor,
-                pi,
-            },
+            form: Form::Exact { above, below, pi },
         }
     }
 }
 
 const fn common(mut a: u128, mut b: u128) -> u128 {
+    // Dividing 128 bits costs some ten times what dividing 64 does, and nearly all factors are short.
+    while b >> 64 != 0 || a >> 64 != 0 {
+        if b == 0 {
+            return a;
+        }
+        (a, b) = (b, a % b);
+    }
+    let (mut a, mut b) = (a as u64, b as u64);
     while b != 0 {
         (a, b) = (b, a % b);
     }
-    a
+    a as u128
 }
 
 /// pi to a whole power by repeated squaring.

@@ -8,8 +8,8 @@ use crate::program::Quantity;
 use crate::reference::{STATEMENTS, dimension_name, wanted};
 use crate::syntax::{StatementKind, TitleWord};
 use engine::quantity::{Dimension, constants, units};
+use rustc_hash::FxHashMap;
 use serde::Serialize;
-use std::collections::HashMap;
 
 /// What could stand at a place.
 #[derive(Clone, Debug, PartialEq, Eq, Serialize)]
@@ -158,7 +158,7 @@ impl Offered<'_> {
 
     fn symbols(&self) -> Vec<Completion> {
         let quantities = self.desk.program.quantities.iter().filter(|q| q.listed);
-        let quantities: HashMap<&str, &Quantity> =
+        let quantities: FxHashMap<&str, &Quantity> =
             quantities.map(|q| (q.symbol.as_str(), q)).collect();
         let symbols = self.desk.names.symbols.iter();
         symbols
@@ -404,7 +404,7 @@ fn units_for(wanted: Option<Dimension>) -> Vec<Completion> {
     }
     // Of those that fit, the usual ones stand first; of the others those of one name.
     items.sort_by_key(|(fits, item)| (!fits, !fits && item.label.contains(['/', '.', '^'])));
-    let mut known = std::collections::HashSet::new();
+    let mut known = rustc_hash::FxHashSet::default();
     items.retain(|(_, item)| known.insert(item.label.clone()));
     items.into_iter().map(|(_, item)| item).collect()
 }

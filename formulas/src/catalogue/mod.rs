@@ -17,7 +17,7 @@ mod tail;
 mod wing;
 
 pub use row::{Compute, Entry, Field, Gives, Line, Makes, Parameter, Prepared, Validity, Wants};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::sync::OnceLock;
 
 /// The group of general mathematics.
@@ -50,7 +50,7 @@ pub fn entries() -> impl Iterator<Item = &'static Entry> {
 /// The function of that name.
 #[must_use]
 pub fn entry(name: &str) -> Option<&'static Entry> {
-    static BY_NAME: OnceLock<HashMap<&'static str, &'static Entry>> = OnceLock::new();
+    static BY_NAME: OnceLock<FxHashMap<&'static str, &'static Entry>> = OnceLock::new();
     BY_NAME
         .get_or_init(|| entries().map(|entry| (entry.name, entry)).collect())
         .get(name)

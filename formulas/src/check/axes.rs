@@ -8,7 +8,7 @@ use crate::problem::Fault;
 use crate::program::{Axis, Kind, Op, ShownUnit};
 use crate::span::Span;
 use crate::syntax::{Expr, StatementKind, Table, Vary, VaryPoints, Words};
-use std::collections::HashSet;
+use rustc_hash::FxHashSet;
 
 /// Most labels to an axis.
 pub(crate) const LABELS_MOST: usize = 100_000;
@@ -208,7 +208,7 @@ impl Checker<'_> {
 
     fn labels(&mut self, name: &str, labels: &[Words]) -> Option<Vec<String>> {
         self.within_labels(name, labels.first()?.span, labels.len() as f64)?;
-        let mut seen = HashSet::new();
+        let mut seen = FxHashSet::default();
         for label in labels {
             if !seen.insert(label.text.as_str()) {
                 self.report(
@@ -225,7 +225,7 @@ impl Checker<'_> {
     }
 
     fn distinct(&mut self, name: &str, list: &[Expr], values: &[f64]) -> Option<()> {
-        let mut seen = HashSet::new();
+        let mut seen = FxHashSet::default();
         for (expr, value) in list.iter().zip(values) {
             if !seen.insert(value.to_bits()) {
                 let value = self.words(expr.span);
@@ -266,7 +266,7 @@ impl Checker<'_> {
     }
 
     fn key_labels(&mut self, table: &Table, at: usize) -> Option<Vec<String>> {
-        let mut seen = HashSet::new();
+        let mut seen = FxHashSet::default();
         let mut labels = Vec::new();
         for key in table.rows.iter().filter_map(|row| row.keys.get(at)) {
             if seen.insert(key.text.as_str()) {
@@ -278,7 +278,7 @@ impl Checker<'_> {
     }
 
     fn key_numbers(&mut self, table: &Table, at: usize, bracket: &Bracket) -> Option<Points> {
-        let mut seen = HashSet::new();
+        let mut seen = FxHashSet::default();
         let mut values = Vec::new();
         for row in &table.rows {
             let Some(Some(expr)) = row.key_values.get(at) else {

@@ -10,16 +10,17 @@ use crate::program::{
 };
 use crate::span::Span;
 use crate::used::UsedSheet;
-use std::collections::{BTreeSet, HashMap};
+use rustc_hash::FxHashMap;
+use std::collections::BTreeSet;
 use std::rc::Rc;
 
 /// What of one other sheet stands in this program already.
 #[derive(Debug, Default)]
 pub(super) struct Links {
     axes: Vec<Option<AxisId>>,
-    nodes: HashMap<NodeId, NodeId>,
-    quantities: HashMap<QuantityId, QuantityId>,
-    unknowns: HashMap<usize, usize>,
+    nodes: FxHashMap<NodeId, NodeId>,
+    quantities: FxHashMap<QuantityId, QuantityId>,
+    unknowns: FxHashMap<usize, usize>,
 }
 
 /// Where a quantity is taken from, and the line that takes it.

@@ -35,7 +35,7 @@ use crate::span::Span;
 use crate::syntax::{StatementKind, Tree};
 use crate::used::{UsedSheet, UsedSheets};
 use engine::quantity::{Dimension, SpeedKind, System, constants};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 pub(crate) use shown::usual_units;
@@ -143,26 +143,26 @@ pub(crate) struct Checker<'a> {
     pub(crate) order: &'a Order,
     /// The other sheets that this one uses.
     used: &'a UsedSheets,
-    links: HashMap<String, linking::Links>,
-    origins: HashMap<Origin, QuantityId>,
+    links: FxHashMap<String, linking::Links>,
+    origins: FxHashMap<Origin, QuantityId>,
     fresh: Vec<(QuantityId, QuantityId)>,
     trace: Option<Trace>,
     /// The axes that each unknown is taken to vary over, by its statement.
-    unknown_axes: &'a HashMap<usize, AxisSet>,
+    unknown_axes: &'a FxHashMap<usize, AxisSet>,
     pub(crate) program: Program,
     pub(crate) problems: Vec<Located>,
     pub(crate) statement: usize,
     pub(crate) meanings: Vec<Meaning>,
-    pub(crate) axis_of_symbol: HashMap<String, AxisId>,
+    pub(crate) axis_of_symbol: FxHashMap<String, AxisId>,
     /// The axis that the line in hand makes, and the place of the call that makes it.
     making: Option<(Span, Option<AxisId>)>,
     pub(crate) frames: Vec<Frame>,
     pub(crate) written_out: u32,
     pub(crate) prefer: Vec<ShownUnit>,
-    texts: HashMap<String, TextId>,
-    unit_cache: HashMap<String, ShownUnit>,
-    constants: HashMap<u64, NodeId>,
-    pub(crate) call_results: HashMap<NodeId, (Vec<Dimension>, Vec<Typed>)>,
+    texts: FxHashMap<String, TextId>,
+    unit_cache: FxHashMap<String, ShownUnit>,
+    constants: FxHashMap<u64, NodeId>,
+    pub(crate) call_results: FxHashMap<NodeId, (Vec<Dimension>, Vec<Typed>)>,
     /// The sets of rules that calls ask for.
     rules_asked: Vec<rules::RuleAsked>,
     remarks: Rc<[Option<String>]>,
@@ -205,7 +205,7 @@ fn checked(
     used: &UsedSheets,
     traced: Option<&[bool]>,
 ) -> (Program, Vec<Located>, Trace) {
-    let mut unknown_axes = HashMap::new();
+    let mut unknown_axes = FxHashMap::default();
     loop {
         let mut checker = Checker::new(text, tree, names, used, &unknown_axes);
         checker.trace = traced.map(Trace::of);
@@ -221,7 +221,7 @@ fn checked(
 }
 
 /// The numbers of the texts that other sheets have.
-fn text_ids(texts: &[String]) -> HashMap<String, TextId> {
+fn text_ids(texts: &[String]) -> FxHashMap<String, TextId> {
     let each = texts.iter().enumerate();
     each.map(|(at, text)| (text.clone(), TextId(at as u32)))
         .collect()
@@ -245,7 +245,7 @@ impl<'a> Checker<'a> {
         tree: &'a Tree,
         (names, order): (&'a Names, &'a Order),
         used: &'a UsedSheets,
-        unknown_axes: &'a HashMap<usize, AxisSet>,
+        unknown_axes: &'a FxHashMap<usize, AxisSet>,
     ) -> Self {
         Checker {
             text,
@@ -253,8 +253,8 @@ impl<'a> Checker<'a> {
             names,
             order,
             used,
-            links: HashMap::new(),
-            origins: HashMap::new(),
+            links: FxHashMap::default(),
+            origins: FxHashMap::default(),
             fresh: Vec::new(),
             trace: None,
             unknown_axes,
@@ -266,15 +266,15 @@ impl<'a> Checker<'a> {
             problems: Vec::new(),
             statement: 0,
             meanings: vec![Meaning::Unknown; names.symbols.len()],
-            axis_of_symbol: HashMap::new(),
+            axis_of_symbol: FxHashMap::default(),
             making: None,
             frames: Vec::new(),
             written_out: 0,
             prefer: Vec::new(),
             texts: text_ids(&used.texts),
-            unit_cache: HashMap::new(),
-            constants: HashMap::new(),
-            call_results: HashMap::new(),
+            unit_cache: FxHashMap::default(),
+            constants: FxHashMap::default(),
+            call_results: FxHashMap::default(),
             rules_asked: Vec::new(),
             remarks: tree
                 .statements

@@ -37,7 +37,7 @@ impl Checker<'_> {
             .collect();
         let axes = axes?;
         let mut places: Vec<Option<Vec<usize>>> = Vec::with_capacity(table.rows.len());
-        let mut seen = std::collections::HashSet::new();
+        let mut seen = rustc_hash::FxHashSet::default();
         for row in &table.rows {
             let place: Option<Vec<usize>> = axes
                 .iter()

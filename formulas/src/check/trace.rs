@@ -3,7 +3,7 @@
 use super::{Checker, Typed};
 use crate::program::{Kind, NodeId, ShownUnit};
 use crate::span::Span;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 /// A part of an expression: where it stands, and in which writing out of an own function.
 #[derive(Clone, Copy, PartialEq, Eq, Hash, Debug)]
@@ -31,9 +31,9 @@ pub struct Seen {
 #[derive(Debug, Default)]
 pub struct Trace {
     /// By part; what failed is not there.
-    pub seen: HashMap<Part, Seen>,
+    pub seen: FxHashMap<Part, Seen>,
     /// For each call of an own function the frame of its body.
-    pub bodies: HashMap<Part, u32>,
+    pub bodies: FxHashMap<Part, u32>,
     wanted: Vec<bool>,
     frame: u32,
     frames: u32,

@@ -7,7 +7,7 @@ use crate::problem::Fault;
 use crate::program::{NodeId, Op, Unknown};
 use crate::syntax::{self, StatementKind, UnknownSymbol};
 use engine::numeric::UNKNOWNS_MOST;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 impl Checker<'_> {
     /// The symbols of an `unknown`, with the axes that they are taken to vary over.
@@ -164,7 +164,7 @@ impl Checker<'_> {
     }
 
     /// The axes of each unknown as its bounds and equations have them.
-    pub(super) fn unknown_axes_found(&self) -> HashMap<usize, AxisSet> {
+    pub(super) fn unknown_axes_found(&self) -> FxHashMap<usize, AxisSet> {
         let axes = |unknown: &Unknown| {
             let sides = unknown.equations.iter().chain(&unknown.bounds);
             let axes = sides.fold(unknown.axes, |axes, (l, r)| {

@@ -3,7 +3,7 @@
 use super::{Instruction, Plan, SlotId, Work};
 use crate::axes::{AxisSet, Runs, Shape};
 use crate::syntax::BinaryOp;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 /// A block of values.
 pub type Register = u16;
@@ -177,8 +177,8 @@ pub struct Fused {
 pub(super) struct Writer<'a> {
     plan: &'a Plan,
     group: Fused,
-    places: HashMap<SlotId, Operand>,
-    constants: HashMap<u64, u16>,
+    places: FxHashMap<SlotId, Operand>,
+    constants: FxHashMap<u64, u16>,
     /// For each virtual register, whether it may hold what is no finite number without the line knowing.
     computed: Vec<bool>,
 }
@@ -191,8 +191,8 @@ impl<'a> Writer<'a> {
                 axes,
                 ..Fused::default()
             },
-            places: HashMap::new(),
-            constants: HashMap::new(),
+            places: FxHashMap::default(),
+            constants: FxHashMap::default(),
             computed: Vec::new(),
         };
         for (index, step) in steps.iter().enumerate() {

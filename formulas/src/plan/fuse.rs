@@ -4,7 +4,8 @@
 use super::code::{Fused, Scalar, Writer};
 use super::{Plan, SlotId, Step, Work};
 use crate::axes::AxisSet;
-use std::collections::{BTreeMap, BTreeSet, HashMap};
+use rustc_hash::FxHashMap;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// Conditions up to which a reduction reads a stored column rather than the blocks.
 pub const STORED_MOST: f64 = 65_536.0;
@@ -38,7 +39,7 @@ struct Building {
 pub fn fuse(plan: &Plan, steps: impl Iterator<Item = usize>) -> Vec<Group> {
     let steps: Vec<usize> = steps.collect();
     let mut groups: Vec<Building> = Vec::new();
-    let mut open: HashMap<AxisSet, usize> = HashMap::new();
+    let mut open: FxHashMap<AxisSet, usize> = FxHashMap::default();
     let mut sources: Vec<Option<Source>> = vec![None; plan.slots.len()];
     for at in scheduled(plan, &steps) {
         let step = &plan.steps[at];

@@ -6,7 +6,7 @@ use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::Compute;
 use crate::program::{Axis, NodeId, Op, Program, QuantityId};
 use crate::values::{EXCLUDED, NONE};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 /// Lays out the steps of a program.
@@ -19,7 +19,7 @@ pub fn plan(program: &Program) -> Plan {
             lengths: program.axes.iter().map(|a| a.labels.len()).collect(),
             ..Plan::default()
         },
-        fields: HashMap::new(),
+        fields: FxHashMap::default(),
         unknowns: Vec::new(),
         quantity: None,
     };
@@ -57,7 +57,7 @@ struct Lowering<'a> {
     program: &'a Program,
     plan: Plan,
     /// The columns of the fields of calls that give records.
-    fields: HashMap<NodeId, Vec<SlotId>>,
+    fields: FxHashMap<NodeId, Vec<SlotId>>,
     /// The columns of each unknown's symbols; none where it cannot be solved.
     unknowns: Vec<Vec<SlotId>>,
     quantity: Option<QuantityId>,

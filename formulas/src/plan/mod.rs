@@ -11,7 +11,7 @@ use crate::catalogue::Entry;
 use crate::program::{Along, Function, NodeId, PickMode, Program, QuantityId, Reduction};
 use crate::syntax::BinaryOp;
 use fuse::Group;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 pub use lower::plan;
@@ -30,7 +30,7 @@ pub struct Plan {
     /// The column of each quantity; `None` where its line failed.
     pub quantities: Vec<Option<SlotId>>,
     /// The columns of the nodes that outputs ask for.
-    pub nodes: HashMap<NodeId, SlotId>,
+    pub nodes: FxHashMap<NodeId, SlotId>,
     /// How each statement of `Program::unknowns` is solved.
     pub solves: Vec<Solve>,
     /// The steps put together, in the order in which they are run.
@@ -42,7 +42,7 @@ pub struct Plan {
     /// Whether there are columns that are kept only where somebody reads them.
     pub large: bool,
     /// The shapes of sets of axes, made once.
-    pub shapes: HashMap<AxisSet, Shape>,
+    pub shapes: FxHashMap<AxisSet, Shape>,
 }
 
 /// How an `unknown` is solved: its trial columns are put in the place of `out`, `steps` are worked out, and the sides

@@ -4,7 +4,7 @@
 
 use super::{Plan, SlotId, Solve, Step, Work};
 use crate::axes::AxisSet;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 /// Puts a step for each unknown among the steps.
 pub(super) fn place(plan: &mut Plan) {
@@ -39,7 +39,7 @@ pub(super) fn place(plan: &mut Plan) {
 }
 
 /// The step that makes each column.
-fn producers(plan: &Plan) -> HashMap<SlotId, usize> {
+fn producers(plan: &Plan) -> FxHashMap<SlotId, usize> {
     let each = plan.steps.iter().enumerate();
     each.flat_map(|(at, step)| step.out.iter().map(move |slot| (*slot, at)))
         .collect()
@@ -124,7 +124,7 @@ fn looks_along(plan: &Plan, step: &Step, axes: AxisSet, moved: &[bool]) -> bool 
 }
 
 /// The steps so that what a step reads is made before it; otherwise as they stood.
-fn sorted(plan: &Plan, producers: &HashMap<SlotId, usize>) -> Vec<usize> {
+fn sorted(plan: &Plan, producers: &FxHashMap<SlotId, usize>) -> Vec<usize> {
     let mut order = Vec::with_capacity(plan.steps.len());
     let mut entered = vec![false; plan.steps.len()];
     for start in 0..plan.steps.len() {

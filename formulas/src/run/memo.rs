@@ -10,7 +10,7 @@ use crate::plan::{Instruction, Plan, SlotId, Step, Work};
 use crate::problem::{Fault, Located};
 use crate::program::Program;
 use crate::values::{Summary, Values};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 /// The number of a column: the same for columns that hold the same values over the same axes.
@@ -20,10 +20,10 @@ type Content = u64;
 #[derive(Debug, Default)]
 pub struct Memo {
     texts: Vec<String>,
-    axes: HashMap<String, u64>,
-    kept: HashMap<Box<[u64]>, Kept>,
+    axes: FxHashMap<String, u64>,
+    kept: FxHashMap<Box<[u64]>, Kept>,
     /// For each line its columns, in the order of its steps.
-    places: HashMap<(String, usize), Place>,
+    places: FxHashMap<(String, usize), Place>,
     next: Content,
     age: u64,
 }
@@ -70,7 +70,7 @@ pub fn run_again(
     let mut warm = Warm {
         contents: vec![None; plan.slots.len()],
         axes: memo.axis_numbers(program),
-        ordinals: HashMap::new(),
+        ordinals: FxHashMap::default(),
         ran: Vec::new(),
         memo,
     };
@@ -138,14 +138,14 @@ struct Warm<'m> {
     memo: &'m mut Memo,
     contents: Vec<Option<Content>>,
     axes: Vec<u64>,
-    ordinals: HashMap<u32, usize>,
+    ordinals: FxHashMap<u32, usize>,
     ran: Vec<usize>,
 }
 
 impl Warm<'_> {
     /// Everything, put together as well as it can be; then all that can be kept is.
     fn cold(&mut self, machine: &mut Machine<'_>, asked: &[String]) {
-        machine.recorded = Some(HashMap::new());
+        machine.recorded = Some(FxHashMap::default());
         machine.run_all(asked);
         let plan = machine.plan;
         let told = told(machine);
@@ -172,7 +172,7 @@ impl Warm<'_> {
 
     /// Step by step: what is known is taken over. Steps over long columns, and all that rests on them, go together.
     fn steps(&mut self, machine: &mut Machine<'_>, asked: &[String]) {
-        machine.recorded = Some(HashMap::new());
+        machine.recorded = Some(FxHashMap::default());
         let plan = machine.plan;
         let mut together = Vec::new();
         for (at, step) in plan.steps.iter().enumerate() {
@@ -422,7 +422,7 @@ impl Warm<'_> {
     fn solve_words(&self, machine: &Machine<'_>, at: usize, words: &mut Vec<u64>) -> Option<()> {
         let plan = machine.plan;
         let solve = plan.solves.get(at)?;
-        let mut places: HashMap<SlotId, u64> = HashMap::new();
+        let mut places: FxHashMap<SlotId, u64> = FxHashMap::default();
         let inner = solve.steps.iter().flat_map(|s| &plan.steps[*s].out);
         for slot in solve.out.iter().chain(inner) {
             let next = places.len() as u64;

@@ -31,7 +31,7 @@ use crate::values::{
 use block::Ending;
 use feed::Feed;
 use reduce::Reducer;
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 pub use memo::{Memo, Outcome, run_again};
@@ -72,9 +72,9 @@ pub(crate) struct Machine<'a> {
     scratch: block::Scratch,
     found: Found,
     /// What lines came to, where it is to be kept.
-    recorded: Option<HashMap<SlotId, (Summary, block::Losses)>>,
+    recorded: Option<FxHashMap<SlotId, (Summary, block::Losses)>>,
     /// Groups of steps by the columns whose change makes them run again.
-    again: HashMap<Vec<SlotId>, Rc<Again>>,
+    again: FxHashMap<Vec<SlotId>, Rc<Again>>,
 }
 
 /// What runs again when columns change.
@@ -143,7 +143,7 @@ impl<'a> Machine<'a> {
                 guards: vec![look::Outside::default(); program.guards.len()],
             },
             recorded: None,
-            again: HashMap::new(),
+            again: FxHashMap::default(),
         }
     }
 

@@ -5,7 +5,7 @@ use crate::axes::{AxisId, Shape};
 use crate::missing::{lost, of_operands};
 use crate::problem::Cause;
 use crate::program::{Axis, PickMode};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 use std::rc::Rc;
 
 /// A position within this part of an axis's span of a point is that point.
@@ -22,7 +22,7 @@ struct Selector<'a> {
 /// The points of an axis, ready to be picked from.
 struct Points {
     mode: PickMode,
-    labels: HashMap<u64, usize>,
+    labels: FxHashMap<u64, usize>,
     /// The values of the axis in rising order, each with its index.
     values: Vec<(f64, usize)>,
 }

@@ -9,7 +9,7 @@ use crate::report::{Scale, condition};
 use crate::run::{self, Limits};
 use crate::span::Span;
 use crate::values::{EXCLUDED, NONE, Values, is_excluded};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 /// Most values of parts that are worked out and kept.
 const PARTS_MOST: f64 = 2e7;
@@ -21,7 +21,7 @@ pub(super) type At = Vec<usize>;
 pub(super) struct Columns {
     pub(super) program: Program,
     values: Values,
-    parts: HashMap<NodeId, usize>,
+    parts: FxHashMap<NodeId, usize>,
     lengths: Vec<usize>,
 }
 
@@ -248,7 +248,7 @@ fn index(shape: &Shape, at: &At) -> usize {
 }
 
 /// The traced parts as quantities of their own.
-fn add_parts(program: &mut Program, trace: &Trace, lengths: &[usize]) -> HashMap<NodeId, usize> {
+fn add_parts(program: &mut Program, trace: &Trace, lengths: &[usize]) -> FxHashMap<NodeId, usize> {
     let mut wanted: Vec<(NodeId, Kind)> = trace
         .seen
         .values()
@@ -257,7 +257,7 @@ fn add_parts(program: &mut Program, trace: &Trace, lengths: &[usize]) -> HashMap
         .collect();
     wanted.sort_by_key(|(node, _)| *node);
     wanted.dedup_by_key(|(node, _)| *node);
-    let mut parts = HashMap::new();
+    let mut parts = FxHashMap::default();
     let mut total = 0.0;
     for (node, kind) in wanted {
         let Some(found) = program.nodes.get(node.0 as usize) else {

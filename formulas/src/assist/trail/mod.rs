@@ -20,8 +20,9 @@ use crate::run::Limits;
 use crate::syntax::Tree;
 use crate::used::UsedSheets;
 use columns::{At, Columns};
+use rustc_hash::FxHashMap;
 use serde::Serialize;
-use std::collections::{HashMap, VecDeque};
+use std::collections::VecDeque;
 
 /// Most steps of a trail.
 pub const STEPS_MOST: usize = 2_000;
@@ -232,7 +233,7 @@ type Key = (QuantityId, Vec<(u8, usize)>);
 
 /// The steps, the nearest first.
 fn gather(walk: &look::Walk<'_>, asked: QuantityId, at: At) -> Trail {
-    let mut places: HashMap<Key, usize> = HashMap::new();
+    let mut places: FxHashMap<Key, usize> = FxHashMap::default();
     let mut trail = Trail {
         steps: Vec::new(),
         cut: false,

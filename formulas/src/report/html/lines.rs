@@ -9,7 +9,8 @@ use crate::report::text::rows::{how, own_quantities, verdict};
 use crate::report::text::values::single;
 use crate::report::{Form, FormRow, Quantity, Report};
 use crate::syntax::Statement;
-use std::collections::{BTreeSet, HashMap};
+use rustc_hash::FxHashMap;
+use std::collections::BTreeSet;
 use std::fmt::Write as _;
 
 /// Every input with its unit, value and where it comes from.
@@ -63,8 +64,8 @@ fn wide(out: &mut String, class: &str, text: &str) {
 }
 
 /// The item that gives each symbol.
-fn items(form: &Form) -> HashMap<&str, u32> {
-    let mut items = HashMap::new();
+fn items(form: &Form) -> FxHashMap<&str, u32> {
+    let mut items = FxHashMap::default();
     for row in &form.rows {
         let Some(item) = row.item else { continue };
         if matches!(
@@ -85,7 +86,7 @@ fn items(form: &Form) -> HashMap<&str, u32> {
 }
 
 /// `from items 7, 12`; nothing for an input.
-fn from_items(items: &HashMap<&str, u32>, row: &FormRow, statement: &Statement) -> String {
+fn from_items(items: &FxHashMap<&str, u32>, row: &FormRow, statement: &Statement) -> String {
     let mut found = BTreeSet::new();
     statement_uses(statement, &mut |used| {
         let (Use::Symbol(name, _) | Use::Function(name, _)) = used else {

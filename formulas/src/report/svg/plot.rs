@@ -4,7 +4,7 @@ use super::axis::Numbers;
 use super::curves::{Stroke, curve, thinned};
 use super::pen::{Anchor, LETTERS, Pen, cut, width};
 use crate::report::{Figure, FigureCurve, ValueList};
-use std::collections::HashMap;
+use rustc_hash::FxHashMap;
 
 const WIDTH: f64 = 720.0;
 const LEFT: f64 = 82.0;
@@ -96,7 +96,7 @@ struct Layout<'a> {
     /// Labels in the order in which they come up, where the abscissa is text.
     labels: Option<Vec<&'a str>>,
     /// The place of each of them.
-    places: HashMap<&'a str, usize>,
+    places: FxHashMap<&'a str, usize>,
     numbers: Numbers,
 }
 
@@ -107,7 +107,7 @@ impl<'a> Layout<'a> {
             _ => None,
         });
         let mut labels: Option<Vec<&str>> = None;
-        let mut places: HashMap<&str, usize> = HashMap::new();
+        let mut places: FxHashMap<&str, usize> = FxHashMap::default();
         for text in texts.flatten().flatten() {
             let known = labels.get_or_insert_with(Vec::new);
             places.entry(text.as_str()).or_insert_with(|| {
