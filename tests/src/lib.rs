@@ -1,6 +1,9 @@
 //! Promises across crates: what the tests share.
 
+pub mod generate;
 pub mod golden;
+pub mod laws;
+pub mod mutate;
 pub mod random;
 pub mod schema;
 pub mod xml;

@@ -119,11 +119,12 @@ pub fn escaped(text: &str) -> String {
             '>' => out.push_str("&gt;"),
             '"' => out.push_str("&quot;"),
             '\'' => out.push_str("&#39;"),
-            // Characters that XML does not have, written out or not.
+            // Characters that XML or HTML does not have, written out or not.
             '\u{0}'..='\u{8}'
             | '\u{b}'
             | '\u{c}'
             | '\u{e}'..='\u{1f}'
+            | '\u{7f}'..='\u{9f}'
             | '\u{fffe}'
             | '\u{ffff}' => {
                 out.push('\u{fffd}');
@@ -162,8 +163,8 @@ mod tests {
     #[test]
     fn texts_are_escaped_and_hold_nothing_that_xml_refuses() {
         assert_eq!(
-            escaped("<a b=\"c\" d='e'>&\u{1}\t"),
-            "&lt;a b=&quot;c&quot; d=&#39;e&#39;&gt;&amp;\u{fffd}\t"
+            escaped("<a b=\"c\" d='e'>&\u{1}\u{85}\t"),
+            "&lt;a b=&quot;c&quot; d=&#39;e&#39;&gt;&amp;\u{fffd}\u{fffd}\t"
         );
     }
 
