@@ -39,6 +39,8 @@ pub(crate) struct Reader<'a> {
     known: BTreeMap<String, Rc<UsedSheet>>,
     /// Every text that a value of a sheet read so far may take, each once.
     texts: Vec<String>,
+    /// The text of the outermost sheet before an edit, and its tree.
+    before: Option<(String, Tree)>,
 }
 
 impl<'a> Reader<'a> {
@@ -49,6 +51,15 @@ impl<'a> Reader<'a> {
             open: Vec::new(),
             known: BTreeMap::new(),
             texts: Vec::new(),
+            before: None,
+        }
+    }
+
+    /// The same where the text to be read came by an edit from another one, which is given with its tree.
+    pub(crate) fn edited_from(self, text: String, tree: Tree) -> Self {
+        Reader {
+            before: Some((text, tree)),
+            ..self
         }
     }
 
@@ -104,7 +115,10 @@ impl<'a> Reader<'a> {
     /// Reads and checks a text; the name is that by which others use it, where it is known.
     pub(crate) fn read(&mut self, name: Option<&str>, text: &str) -> Checked {
         self.open.push((name.map(str::to_string), text.to_string()));
-        let tree = parse::parse(text);
+        let tree = match self.before.take() {
+            Some((before, tree)) => parse::parse_edited(text, (&before, tree)),
+            None => parse::parse(text),
+        };
         let mut problems = reading_problems(&tree);
         let mut names = names::collect(&tree, &mut problems);
         let mut circles = Vec::new();

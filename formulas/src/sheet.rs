@@ -47,6 +47,13 @@ pub struct Sheet {
     ran: Vec<usize>,
 }
 
+/// What a sheet leaves to the one that follows an edit.
+struct Before {
+    memo: Memo,
+    /// Its text and tree, where it needs them no more.
+    read: Option<(String, Tree)>,
+}
+
 /// Beside what, and within what limits, a sheet is worked out.
 #[derive(Clone, Copy)]
 pub struct Around<'a> {
@@ -202,14 +209,26 @@ impl Sheet {
     /// assert_eq!(sheet.ran(), ["d"]);
     /// ```
     pub fn update(&mut self, text: &str) {
-        let memo = self.memo.take().unwrap_or_default();
-        *self = self.again(text, &|name| self.text_of(name), Some(memo));
+        let before = self.given_up();
+        *self = self.again(text, &|name| self.text_of(name), before);
     }
 
     /// The same where other sheets may have changed, or others may be used.
     pub fn update_with(&mut self, text: &str, sheets: Lookup<'_>) {
-        let memo = self.memo.take().unwrap_or_default();
-        *self = self.again(text, sheets, Some(memo));
+        let before = self.given_up();
+        *self = self.again(text, sheets, before);
+    }
+
+    /// What the sheet that follows an edit takes over.
+    fn given_up(&mut self) -> Before {
+        let read = (
+            std::mem::take(&mut self.text),
+            std::mem::take(&mut self.tree),
+        );
+        Before {
+            memo: self.memo.take().unwrap_or_default(),
+            read: Some(read),
+        }
     }
 
     /// The text of another sheet, as it was read.
@@ -217,7 +236,7 @@ impl Sheet {
         self.used.get(sheet).map(|sheet| sheet.text.clone())
     }
 
-    fn again(&self, text: &str, sheets: Lookup<'_>, memo: Option<Memo>) -> Sheet {
+    fn again(&self, text: &str, sheets: Lookup<'_>, before: Before) -> Sheet {
         let around = Around {
             name: self.name.as_deref(),
             sheets,
@@ -225,8 +244,11 @@ impl Sheet {
             asked: &self.asked,
             editing: true,
         };
-        let reader = Reader::again(sheets, self.limits, &self.used);
-        Self::read(text, &around, reader, memo)
+        let mut reader = Reader::again(sheets, self.limits, &self.used);
+        if let Some((text, tree)) = before.read {
+            reader = reader.edited_from(text, tree);
+        }
+        Self::read(text, &around, reader, Some(before.memo))
     }
 
     /// The quantities that the last edit made work out again, in the order of the sheet; all of them after the first
@@ -416,8 +438,11 @@ impl Sheet {
     pub fn set(&mut self, symbol: &str, expression: &str) -> Result<(), String> {
         let text =
             crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
-        let memo = self.memo.take().unwrap_or_default();
-        let mut other = self.again(&text, &|name| self.text_of(name), Some(memo));
+        let before = Before {
+            memo: self.memo.take().unwrap_or_default(),
+            read: None,
+        };
+        let mut other = self.again(&text, &|name| self.text_of(name), before);
         let errors = |s: &Sheet| {
             s.findings()
                 .into_iter()

@@ -129,6 +129,9 @@ pub fn warm(seed: u64) -> Result<(), String> {
         sheet.edit(random);
         let before = std::mem::replace(&mut text, sheet.text());
         open.update(&text);
+        if *open.tree() != parse(&text) {
+            return Err(format!("another tree: before\n{before}\nnow\n{text}"));
+        }
         if json(&open) != json(&Sheet::open(&text)) {
             return Err(format!("before\n{before}\nnow\n{text}"));
         }

@@ -15,16 +15,9 @@ use crate::token::{Sign, TokenKind, Word};
 
 /// All statements of a text.
 pub(super) fn read(source: &Source<'_>, limits: &Limits) -> Tree {
-    let mut reader = Reader {
-        source,
-        limits,
-        line: 0,
-        tokens: Tokens::default(),
-        scratch: Tokens::default(),
-        block: TitleBlock::default(),
-    };
+    let mut reader = Reader::new(source, limits, 0, false);
     let mut statements = Vec::with_capacity(source.line_count());
-    while reader.line < source.line_count() {
+    while !reader.is_done() {
         statements.push(reader.statement());
     }
     Tree {
@@ -33,7 +26,8 @@ pub(super) fn read(source: &Source<'_>, limits: &Limits) -> Tree {
     }
 }
 
-struct Reader<'s, 't> {
+/// Reads one statement after the other.
+pub(super) struct Reader<'s, 't> {
     source: &'s Source<'t>,
     limits: &'s Limits,
     /// The next line, counted from 0.
@@ -66,7 +60,42 @@ impl<'t> Line<'t> {
     }
 }
 
-impl<'t> Reader<'_, 't> {
+impl<'s, 't> Reader<'s, 't> {
+    /// A reader that begins at a line, counted from 0, in front of the end of the title block or behind it.
+    pub(super) fn new(
+        source: &'s Source<'t>,
+        limits: &'s Limits,
+        line: usize,
+        closed: bool,
+    ) -> Self {
+        Reader {
+            source,
+            limits,
+            line,
+            tokens: Tokens::default(),
+            scratch: Tokens::default(),
+            block: TitleBlock::new(closed),
+        }
+    }
+
+    pub(super) fn is_done(&self) -> bool {
+        self.line >= self.source.line_count()
+    }
+
+    /// The next line, counted from 0.
+    pub(super) fn line(&self) -> usize {
+        self.line
+    }
+
+    /// The byte at which the next line begins.
+    pub(super) fn byte(&self) -> usize {
+        self.source.line(self.line).start
+    }
+
+    pub(super) fn block_is_closed(&self) -> bool {
+        self.block.is_closed()
+    }
+
     /// A line by its index, seen from the statement that starts at byte `start`.
     fn line_at(&self, index: usize, start: usize) -> Line<'t> {
         let range = self.source.line(index);
@@ -80,7 +109,8 @@ impl<'t> Reader<'_, 't> {
         }
     }
 
-    fn statement(&mut self) -> Statement {
+    /// Reads the next statement; there is one where the reader is not done.
+    pub(super) fn statement(&mut self) -> Statement {
         let first = self.line;
         let start = self.source.line(first).start;
         let line = self.line_at(first, start);

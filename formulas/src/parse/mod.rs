@@ -3,6 +3,7 @@
 mod axis;
 pub(crate) mod cursor;
 mod definition;
+mod edited;
 mod expression;
 mod form;
 mod lines;
@@ -41,6 +42,14 @@ pub fn parse(text: &str) -> Tree {
 pub fn parse_within(text: &str, limits: &Limits) -> Tree {
     let source = Source::within(text, limits);
     lines::read(&source, limits)
+}
+
+/// The tree of a sheet that came by an edit from another one, given with its tree: what [`parse`] gives, but only
+/// statements that the edit may touch are read.
+#[must_use]
+pub fn parse_edited(text: &str, before: (&str, Tree)) -> Tree {
+    let source = Source::within(text, &Limits::USUAL);
+    edited::read(&source, &Limits::USUAL, before)
 }
 
 /// An expression that stands alone, and what could not be read of it; spans count from the start of `text`.

@@ -16,6 +16,17 @@ pub(super) struct TitleBlock {
 }
 
 impl TitleBlock {
+    pub(super) fn new(closed: bool) -> Self {
+        TitleBlock {
+            closed,
+            seen: Vec::new(),
+        }
+    }
+
+    pub(super) fn is_closed(&self) -> bool {
+        self.closed
+    }
+
     /// Takes note of a statement; every one but blank lines, asides and the block's own lines closes the block.
     pub(super) fn pass(&mut self, opening: Opening) {
         let passes = matches!(
