@@ -4,6 +4,7 @@ pub mod generate;
 pub mod golden;
 pub mod laws;
 pub mod mutate;
+pub mod outside;
 pub mod random;
 pub mod schema;
 pub mod xml;

@@ -78,6 +78,13 @@ fn everything(count: &mut Count) -> Result<(), String> {
             broken.push(name);
         }
     }
+    println!("== outside");
+    let compared = tests::outside::compare("")?;
+    count.passed += compared.passed;
+    count.failed += compared.failed;
+    if compared.failed > 0 {
+        broken.push("outside");
+    }
     println!("== page");
     pack::build::page(&paths).map_err(said)?;
     println!("== browser");
