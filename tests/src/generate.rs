@@ -4,8 +4,10 @@ use crate::random::Random;
 use std::fmt::Write as _;
 
 /// Lengths and forces in several units, by the same number of metres and newtons.
-const LENGTHS: [(&str, f64); 4] = [("m", 1.0), ("ft", 0.3048), ("in", 0.0254), ("mm", 0.001)];
-const FORCES: [(&str, f64); 3] = [("N", 1.0), ("lb", 4.448_221_615_260_5), ("daN", 10.0)];
+const LENGTHS: [(&str, f64); 4] = [("m", 1.0), ("mm", 0.001), ("ft", 0.3048), ("in", 0.0254)];
+const FORCES: [(&str, f64); 3] = [("N", 1.0), ("daN", 10.0), ("lb", 4.448_221_615_260_5)];
+/// How many of each list are metric.
+const METRIC: usize = 2;
 
 /// What a generated symbol is.
 #[derive(Clone, Copy, PartialEq)]
@@ -28,6 +30,17 @@ struct Axis {
     name: String,
     labels: Vec<String>,
     numbers: bool,
+}
+
+/// Which numbers and signs a generated sheet may have.
+#[derive(Clone, Copy, PartialEq)]
+pub enum Style {
+    /// Anything, in metric units: their factors are exact, so that other ones change no bit.
+    Metric,
+    /// Anything, in all units.
+    Mixed,
+    /// All units, but nothing that cancels or chooses, where a rounding of the last digit could be all that is left.
+    Tame,
 }
 
 /// A sheet in lines: those that declare axes, whose order counts, and the others, whose order does not.
@@ -84,18 +97,20 @@ struct Writer<'a> {
     axes: Vec<Axis>,
     known: Vec<Known>,
     functions: usize,
+    style: Style,
 }
 
 /// A sheet of which `random` decides what stands in it, and `units` in which units; the same sheet in other units is
 /// the same `random` with other `units`.
 #[must_use]
-pub fn generate(random: &mut Random, units: &mut Random) -> Generated {
+pub fn generate(random: &mut Random, units: &mut Random, style: Style) -> Generated {
     let mut writer = Writer {
         random,
         units,
         axes: Vec::new(),
         known: Vec::new(),
         functions: 0,
+        style,
     };
     let declared = writer.declare();
     let mut lines = writer.inputs();
@@ -119,15 +134,24 @@ impl Writer<'_> {
         let number = self.number();
         match kind {
             Kind::Number => format!("{number}"),
-            Kind::Length => {
-                let (unit, factor) = *self.units.of(&LENGTHS);
-                format!("{} {unit}", number / factor)
-            }
-            Kind::Force => {
-                let (unit, factor) = *self.units.of(&FORCES);
-                format!("{} {unit}", number / factor)
-            }
+            Kind::Length => self.in_unit(number, &LENGTHS),
+            Kind::Force => self.in_unit(number, &FORCES),
         }
+    }
+
+    fn in_unit(&mut self, number: f64, list: &[(&str, f64)]) -> String {
+        let all = match self.style {
+            Style::Metric => &list[..METRIC],
+            _ => list,
+        };
+        let (unit, factor) = *self.units.of(all);
+        // Numbers are short binary fractions, so that in metric units they are short decimals too.
+        let number = if factor < 0.01 {
+            number * 1000.0
+        } else {
+            number / factor
+        };
+        format!("{number} {unit}")
     }
 
     fn kind(&mut self) -> Kind {
@@ -270,6 +294,9 @@ impl Writer<'_> {
             };
         }
         let depth = depth - 1;
+        if self.style == Style::Tame {
+            return self.tame(kind, depth);
+        }
         match self.random.below(14) {
             0 | 1 => self.joined(kind, depth, " + "),
             2 => self.joined(kind, depth, " - "),
@@ -310,6 +337,22 @@ impl Writer<'_> {
             }
             13 => self.along(kind),
             _ => self.symbol(kind),
+        }
+    }
+
+    /// An expression of positive numbers in which nothing cancels.
+    fn tame(&mut self, kind: Kind, depth: usize) -> (String, u32) {
+        let (a, one) = self.expression(kind, depth);
+        let (b, two) = self.expression(kind, depth);
+        let (n, three) = self.expression(Kind::Number, depth);
+        match self.random.below(7) {
+            0 => (format!("({a}) + ({b})"), one | two),
+            1 => (format!("({n})*({a})"), one | three),
+            2 => (format!("({a})/({n})"), one | three),
+            3 => (format!("max({a}, {b})"), one | two),
+            4 => (format!("sqrt(({a})*({b}))"), one | two),
+            5 if kind == Kind::Number => self.ratio(depth),
+            _ => self.reduced(kind, depth),
         }
     }
 
@@ -426,7 +469,7 @@ impl Writer<'_> {
             "require {force} < {} ; allowable",
             self.constant(Kind::Force)
         ));
-        if self.random.below(2) == 0 {
+        if self.style != Style::Tame && self.random.below(2) == 0 {
             let (a, _) = self.symbol(Kind::Length);
             let low = self.units.below(2);
             let bounds = ["-50 and 50", "-(25*2) and 5*10"][low];

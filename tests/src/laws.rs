@@ -1,7 +1,7 @@
 //! Laws that hold for every sheet: print after parse, the order of lines, units, warm runs equal to cold ones, and that
 //! nothing whatever makes the program panic. Each is tried on the sheet of a seed and says what is wrong.
 
-use crate::generate::generate;
+use crate::generate::{Style, generate};
 use crate::random::Random;
 use formulas::Sheet;
 use formulas::parse::parse;
@@ -49,7 +49,7 @@ fn json(sheet: &Sheet) -> String {
 /// What differs.
 pub fn order(seed: u64) -> Result<(), String> {
     let random = &mut Random::new(seed);
-    let mut sheet = generate(random, &mut Random::new(7));
+    let mut sheet = generate(random, &mut Random::new(7), Style::Mixed);
     let before = sheet.text();
     sheet.shuffle(random);
     let after = sheet.text();
@@ -66,7 +66,7 @@ pub fn order(seed: u64) -> Result<(), String> {
 pub fn share_with_values(seeds: std::ops::Range<u64>) -> f64 {
     let count = (seeds.end - seeds.start) as f64;
     let good = seeds.filter(|seed| {
-        let sheet = generate(&mut Random::new(*seed), &mut Random::new(7));
+        let sheet = generate(&mut Random::new(*seed), &mut Random::new(7), Style::Mixed);
         let all = values(&sheet.text());
         let known = all.iter().filter(|(_, v)| v.iter().any(|v| v.is_finite()));
         known.count() * 4 >= all.len() * 3
@@ -74,21 +74,29 @@ pub fn share_with_values(seeds: std::ops::Range<u64>) -> f64 {
     good.count() as f64 / count
 }
 
-/// Other units change no value beyond rounding.
+/// Other units change no value beyond rounding, and metric ones no bit.
 ///
 /// # Errors
 /// What differs.
 pub fn units(seed: u64) -> Result<(), String> {
-    let of = |units: u64| generate(&mut Random::new(seed), &mut Random::new(units)).text();
-    let (one, two) = (of(seed + 1000), of(seed + 2000));
-    for ((name, a), (_, b)) in values(&one).iter().zip(values(&two).iter()) {
-        let finite = a.iter().chain(b).filter(|v| v.is_finite());
-        let size = finite.fold(0.0, |m: f64, v| m.max(v.abs()));
+    let of = |units: u64, style| {
+        let text = generate(&mut Random::new(seed), &mut Random::new(units), style);
+        text.text()
+    };
+    let (one, two) = (seed + 1000, seed + 2000);
+    let (metric, other) = (of(one, Style::Metric), of(two, Style::Metric));
+    let pairs = bits(&metric).into_iter().zip(bits(&other));
+    for (a, b) in pairs {
+        if a != b {
+            return Err(format!("{a:?} is not {b:?}\n{metric}\nbut\n{other}"));
+        }
+    }
+    let (mixed, other) = (of(one, Style::Tame), of(two, Style::Tame));
+    for ((name, a), (_, b)) in values(&mixed).iter().zip(values(&other).iter()) {
         for (a, b) in a.iter().zip(b) {
-            // Sums of terms that nearly cancel keep fewer digits than their terms have.
-            let near = (a - b).abs() <= 1e-9 * size.max(1.0);
+            let near = (a - b).abs() <= 1e-12 * a.abs();
             if a.is_nan() != b.is_nan() || !a.is_nan() && !near {
-                return Err(format!("{name}: {a} is not {b}\n{one}\nbut\n{two}"));
+                return Err(format!("{name}: {a} is not {b}\n{mixed}\nbut\n{other}"));
             }
         }
     }
@@ -100,7 +108,7 @@ pub fn units(seed: u64) -> Result<(), String> {
 /// # Errors
 /// What differs.
 pub fn printed(seed: u64) -> Result<(), String> {
-    let text = generate(&mut Random::new(seed), &mut Random::new(seed)).text();
+    let text = generate(&mut Random::new(seed), &mut Random::new(seed), Style::Mixed).text();
     let once = print(&parse(&text), &text);
     let twice = print(&parse(&once), &once);
     if once != twice {
@@ -118,7 +126,7 @@ pub fn printed(seed: u64) -> Result<(), String> {
 /// The sheet for which it does not.
 pub fn warm(seed: u64) -> Result<(), String> {
     let random = &mut Random::new(seed + 1);
-    let mut sheet = generate(random, &mut Random::new(seed));
+    let mut sheet = generate(random, &mut Random::new(seed), Style::Mixed);
     let editing = formulas::sheet::Around {
         editing: true,
         ..formulas::sheet::Around::default()

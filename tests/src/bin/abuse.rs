@@ -71,17 +71,19 @@ fn tries(name: &str, time: Duration, one: &dyn Fn(u64) -> (Result<(), String>, S
     broken
 }
 
-/// Keeps a text that broke something, where it can be written, and tells of it.
+/// Keeps what broke and how, where it can be written, and tells of it in a line.
 fn keep(name: &str, seed: u64, fault: &str, text: Option<String>) {
     let folder = std::path::Path::new(env!("CARGO_MANIFEST_DIR")).join("../target/abuse");
-    let file = folder.join(format!("{name}-{seed}.pitchwright"));
+    let file = folder.join(format!("{name}-{seed}.txt"));
+    let whole = format!("{fault}\n\n{}", text.unwrap_or_default());
     let kept = std::fs::create_dir_all(&folder)
-        .and_then(|()| std::fs::write(&file, text.unwrap_or_default()))
+        .and_then(|()| std::fs::write(&file, whole))
         .is_ok();
     let place = if kept {
         file.display().to_string()
     } else {
         String::new()
     };
-    println!("{name}, seed {seed}: {fault}\n{place}");
+    let first = fault.lines().next().unwrap_or("");
+    println!("{name}, seed {seed}: {first} {place}");
 }
