@@ -22,7 +22,7 @@ macro_rules! sheet {
 }
 
 /// The sheets, by the name of their file.
-const SHEETS: [(&str, &str); 17] = [
+const SHEETS: [(&str, &str); 20] = [
     sheet!("airspeeds"),
     sheet!("atmosphere"),
     sheet!("balancing-loads"),
@@ -30,7 +30,10 @@ const SHEETS: [(&str, &str); 17] = [
     sheet!("exact-sections"),
     sheet!("general-aviation-airplane"),
     sheet!("load-test"),
+    sheet!("loads-and-bodies"),
+    sheet!("mapped-sections"),
     sheet!("mean-lines"),
+    sheet!("measured-sections"),
     sheet!("mass-and-planform"),
     sheet!("model-and-elevator"),
     sheet!("moment-transfer"),
@@ -146,7 +149,7 @@ fn every_row_is_worked_out_or_left_out_for_a_reason() {
         // A tolerance as large as the value would let nought pass.
         let allowed = row.tolerance.of(row.expected);
         assert!(
-            row.expected == 0.0 || allowed < 0.5 * row.expected.abs(),
+            row.place.is_none() || row.expected == 0.0 || allowed < 0.5 * row.expected.abs(),
             "{} would pass whatever the program gives",
             row.id
         );
@@ -172,6 +175,8 @@ fn the_tables_are_whole() {
         ("units", 32),
         ("envelope", 70),
         ("structure", 14),
+        ("section", 140),
+        ("wing", 89),
     ];
     for (name, count) in counts {
         assert_eq!(rows::table(name).len(), count, "{name}");
