@@ -38,7 +38,8 @@ pub(super) fn inputs(out: &mut String, report: &Report, form: &Form) {
 
 /// All lines in the order of the sheet.
 pub(super) fn form(out: &mut String, input: &Input<'_>) {
-    *out += "<h2>Computation</h2>\n<table>\n<thead><tr><th class=\"n\">item</th><th>symbol</th><th>unit</th>\
+    *out += "<h2>Computation</h2>\n<table class=\"form\">\n<colgroup><col class=\"item\"/><col class=\"symbol\"/>\
+             <col class=\"unit\"/><col/><col class=\"value\"/><col class=\"remark\"/></colgroup>\n<thead><tr><th class=\"n\">item</th><th>symbol</th><th>unit</th>\
              <th>how obtained</th><th class=\"n\">value</th><th>remark</th></tr></thead>\n<tbody>\n";
     let items = items(input.form);
     let statements = input.tree.statements.iter();

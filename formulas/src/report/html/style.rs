@@ -17,14 +17,16 @@ dl div{display:flex;gap:2mm;border-top:.4pt solid #888;padding:.6mm 0}\
 dt{min-width:18mm;font-size:8.5pt}\
 dd{margin:0;overflow-wrap:anywhere}\
 table{border-collapse:collapse;width:100%;margin:1mm 0 2mm}\
+table.form{table-layout:fixed}col.item{width:5.5%}col.symbol{width:15%}col.unit{width:10%}\
+col.value{width:10.5%}col.remark{width:24%}\
 thead{display:table-header-group}\
 tr{break-inside:avoid}\
 th,td{border:.4pt solid #777;padding:.5mm 1.2mm;text-align:left;vertical-align:top;overflow-wrap:break-word}\
 th{font-weight:600;font-size:8.5pt;border-bottom:.8pt solid #000}\
 td.n,th.n{text-align:right;white-space:nowrap;overflow-wrap:normal}\
-td.f,td.r{overflow-wrap:anywhere}td.r{min-width:34mm}\
+td.f,td.r{overflow-wrap:anywhere}\
 td.f{font-family:ui-monospace,monospace;font-size:8.8pt}\
-tr.part td{font-weight:700;border-bottom:.8pt solid #000;padding-top:2mm}\
+tr.part,tr.sub{break-after:avoid}tr.part td{font-weight:700;border-bottom:.8pt solid #000;padding-top:2mm}\
 tr.sub td{font-style:italic}\
 table.block{width:auto;margin:.5mm 0;font-size:8.8pt}\
 .small,.from{font-size:8.5pt}\
