@@ -5,8 +5,10 @@ use crate::numeric::{Factorised, Sum};
 use crate::planform::half_area;
 use crate::quantity::constants::PI;
 
-/// Strips of one half, over all surfaces' spans together.
+/// Strips over the half span of the widest surface.
 const STRIPS: usize = 36;
+/// At least so many between a tip and the next station.
+const AT_TIP: usize = 6;
 /// Vortices along the chord.
 const ROWS: usize = 6;
 
@@ -29,9 +31,12 @@ pub(super) struct Strip {
     pub(super) surface: usize,
     /// The inner and the outer edge: y, z, leading edge, chord.
     edges: [[f64; 4]; 2],
-    /// Where its wake is looked at: in the middle, or at a tip in the middle of the angle by which strips grow close.
-    heart: f64,
+    /// y where the flow is looked at: in the middle of the angle by which strips grow close to tips and stations. With
+    /// points there the lift of a wing is met by few strips; in the middle of the strip they would read high.
+    pub(super) heart: f64,
+    /// Twist less zero-lift angle there.
     pub(super) angle: f64,
+    /// Mean of the section moment coefficient.
     pub(super) cm: f64,
 }
 
@@ -49,6 +54,9 @@ struct Horseshoe {
 pub(super) enum Layout {
     /// By itself.
     Own,
+    /// Half as many strips and rows.
+    #[cfg(test)]
+    Half,
     /// So many strips of equal width a surface, so many rows.
     #[cfg(test)]
     Equal(usize, usize),
@@ -121,6 +129,8 @@ impl Lattice {
         let rows = match layout {
             Layout::Own => ROWS,
             #[cfg(test)]
+            Layout::Half => ROWS / 2,
+            #[cfg(test)]
             Layout::Equal(_, rows) => rows,
         };
         let all = edges(shapes, layout);
@@ -174,7 +184,7 @@ impl Lattice {
     pub(super) fn drag(&self, circulation: &[f64]) -> f64 {
         let mut drag = Sum::default();
         for (at, gamma) in self.strips.iter().zip(circulation) {
-            let (y, z) = (at.heart, at.middle().1);
+            let (y, z) = (at.heart, at.at_heart(1));
             let mut wash = Sum::default();
             for (of, strength) in self.strips.iter().zip(circulation) {
                 for side in [1.0, -1.0] {
@@ -196,7 +206,7 @@ impl Lattice {
         let strength = if lifted { &self.lifted } else { &self.twisted };
         let (mut sum, mut weight) = (Sum::default(), Sum::default());
         for strip in self.strips.iter().filter(|s| s.surface == surface) {
-            let (y, z) = strip.middle();
+            let (y, z) = (strip.heart, strip.at_heart(1));
             let x = strip.line(0.25);
             let others = self.shoes.iter().zip(strength);
             let others = others.filter(|(s, _)| self.strips[s.strip].surface != surface);
@@ -218,21 +228,21 @@ impl Strip {
         (self.edges[0][3] + self.edges[1][3]) / 2.0
     }
 
-    /// y and z of the middle.
-    pub(super) fn middle(&self) -> (f64, f64) {
-        let mean = |at: usize| (self.edges[0][at] + self.edges[1][at]) / 2.0;
-        (mean(0), mean(1))
+    /// What the edges hold, at the heart: y, z, leading edge, chord.
+    fn at_heart(&self, index: usize) -> f64 {
+        let [inner, outer] = &self.edges;
+        let part = (self.heart - inner[0]) / self.width();
+        inner[index] + (outer[index] - inner[index]) * part
     }
 
-    /// Station of a part of the chord in the middle.
+    /// Station of a part of the chord at the heart.
     fn line(&self, part: f64) -> f64 {
-        let at = |edge: &[f64; 4]| edge[2] + part * edge[3];
-        (at(&self.edges[0]) + at(&self.edges[1])) / 2.0
+        self.at_heart(2) + part * self.at_heart(3)
     }
 }
 
-/// Strips between lines of constant y, each with its heart, which all surfaces share, so that the wake of one passes between the points of
-/// another: all stations, and between them close together at the tips.
+/// Strips between lines of constant y, each with its heart, which all surfaces share, so that the wake of one passes between
+/// the points of another: all stations, and between them closer together at both ends, by the cosine of an angle.
 fn edges(shapes: &[Shape], layout: Layout) -> Vec<[f64; 3]> {
     let mut breaks: Vec<f64> = shapes.iter().flat_map(|s| s.y.iter().copied()).collect();
     breaks.sort_by(f64::total_cmp);
@@ -242,29 +252,26 @@ fn edges(shapes: &[Shape], layout: Layout) -> Vec<[f64; 3]> {
     let mut edges = Vec::new();
     for pair in breaks.windows(2) {
         let (a, b) = (pair[0], pair[1]);
-        let count = match layout {
-            Layout::Own => ((STRIPS as f64 * (b - a) / far).ceil() as usize).max(3),
+        let least = if tips.contains(&b) { AT_TIP } else { 1 };
+        let own = ((STRIPS as f64 * (b - a) / far).ceil() as usize).max(least);
+        let (count, equal) = match layout {
+            Layout::Own => (own, false),
             #[cfg(test)]
-            Layout::Equal(strips, _) => strips,
+            Layout::Half => (own.div_ceil(2), false),
+            #[cfg(test)]
+            Layout::Equal(strips, _) => (strips, true),
         };
-        let at_tip = matches!(layout, Layout::Own) && tips.contains(&b);
-        for i in 0..count {
-            let place = |step: f64| {
-                let part = step / count as f64;
-                let part = if at_tip {
-                    elementary::sin(part * PI / 2.0)
-                } else {
-                    part
-                };
-                a + (b - a) * part
-            };
-            let outer = if i + 1 == count {
+        let place = |half_steps: usize| {
+            let part = half_steps as f64 / (2 * count) as f64;
+            if half_steps == 2 * count {
                 b
+            } else if equal {
+                a + (b - a) * part
             } else {
-                place((i + 1) as f64)
-            };
-            edges.push([place(i as f64), place(i as f64 + 0.5), outer]);
-        }
+                a + (b - a) * (1.0 - elementary::cos(part * PI)) / 2.0
+            }
+        };
+        edges.extend((0..count).map(|i| [place(2 * i), place(2 * i + 1), place(2 * i + 2)]));
     }
     edges
 }
@@ -274,13 +281,13 @@ fn strips_of(surface: usize, shape: &Shape, edges: &[[f64; 3]]) -> Vec<Strip> {
     let inside = edges.iter().filter(|e| e[0] >= root && e[2] <= tip);
     inside
         .map(|edge| {
-            let [y0, z0, x0, c0, a0, m0] = shape.at(edge[0], true);
-            let [y1, z1, x1, c1, a1, m1] = shape.at(edge[2], false);
+            let [y0, z0, x0, c0, _, m0] = shape.at(edge[0], true);
+            let [y1, z1, x1, c1, _, m1] = shape.at(edge[2], false);
             Strip {
                 surface,
                 edges: [[y0, z0, x0, c0], [y1, z1, x1, c1]],
                 heart: edge[1],
-                angle: (a0 + a1) / 2.0,
+                angle: shape.at(edge[1], true)[4],
                 cm: (m0 + m1) / 2.0,
             }
         })
@@ -291,12 +298,11 @@ fn strips_of(surface: usize, shape: &Shape, edges: &[[f64; 3]]) -> Vec<Strip> {
 fn horseshoe(at: usize, strip: &Strip, row: usize, rows: usize) -> Horseshoe {
     let part = |quarters: f64| (row as f64 + quarters / 4.0) / rows as f64;
     let bound = |edge: &[f64; 4]| [edge[2] + part(1.0) * edge[3], edge[0], edge[1]];
-    let (y, z) = strip.middle();
     Horseshoe {
         strip: at,
         from: bound(&strip.edges[0]),
         to: bound(&strip.edges[1]),
-        point: [strip.line(part(3.0)), y, z],
+        point: [strip.line(part(3.0)), strip.heart, strip.at_heart(1)],
     }
 }
 

@@ -91,14 +91,16 @@ impl LiftingSurfaces {
     /// Lays surfaces out and solves them; `None` where stations do not run outward, lines differ in length or a surface has
     /// no area.
     ///
-    /// A lattice of horseshoe vortices on thin surfaces, six along the chord and 36 strips over the half span together, close
-    /// together at the tips; strips of all surfaces lie behind one another, so that the wake of one passes between the points
-    /// of another. The flow is tangential at three quarters of each panel, twist less angle of no lift in its condition;
-    /// section slopes are 2 pi. The wake runs straight aft. Section moments are added. Area and chord of reference are those
-    /// of the largest surface.
+    /// A lattice of horseshoe vortices on thin surfaces, six along the chord and 36 strips over the widest half span, more
+    /// where stations ask for them; between stations strips are closer together at both ends, by the cosine of an angle, and
+    /// the flow is tangential in the middle of that angle, at three quarters of each panel. Strips of all surfaces lie
+    /// behind one another, so that the wake of one passes between the points of another. Twist less angle of no lift goes
+    /// into the condition; section slopes are 2 pi. The wake runs straight aft. Section moments are added. Area and chord of
+    /// reference are those of the largest surface.
     ///
-    /// Symmetrical, incompressible, attached flow at small angles; no body. Lift slopes within about 1 % of finer lattices,
-    /// induced drag within about 2 %. A surface close to the height of another's wake, and a wake that rolls up or is
+    /// Symmetrical, incompressible, attached flow at small angles; no body. Of the limit of ever finer lattices, lift slopes
+    /// are within 0.25 %, induced drag within 0.5 %, the aerodynamic centre or neutral point within 0.5 % of the mean chord
+    /// and downwash slopes within 0.01. A surface close to the height of another's wake, and a wake that rolls up or is
     /// displaced, are less well met.
     ///
     /// Source: J. J. Bertin and M. L. Smith, Aerodynamics for Engineers (vortex lattice); the law of Biot and Savart.
@@ -118,8 +120,12 @@ impl LiftingSurfaces {
     /// assert!((found.x_ac.si() - 0.25).abs() < 0.02);
     /// ```
     pub fn new(surfaces: &[Stations]) -> Option<Self> {
+        Self::laid_out(surfaces, Layout::Own)
+    }
+
+    fn laid_out(surfaces: &[Stations], layout: Layout) -> Option<Self> {
         let shapes: Vec<Shape> = surfaces.iter().map(Stations::shape).collect();
-        let lattice = Lattice::new(&shapes, Layout::Own)?;
+        let lattice = Lattice::new(&shapes, layout)?;
         let plans = surfaces.iter().map(|s| planform(&s.y, &s.chord, &s.x_le));
         let plans: Vec<_> = plans.collect();
         let areas: Vec<f64> = plans.iter().map(|p| p.area.si()).collect();
@@ -187,7 +193,7 @@ impl LiftingSurfaces {
         let strips = self.lattice.strips.iter().zip(circulation);
         let mut points: Vec<(f64, f64)> = vec![(0.0, 0.0)];
         let own = strips.filter(|(s, _)| s.surface == surface).rev();
-        points.extend(own.map(|(s, g)| (angle(s.middle().0), *g)));
+        points.extend(own.map(|(s, g)| (angle(s.heart), *g)));
         // At the plane of symmetry the circulation is flat.
         if let Some(last) = points.last().copied() {
             points.push((PI / 2.0 + 1e-9, last.1));
@@ -284,6 +290,82 @@ mod tests {
         // Far behind, the downwash slope is that of the wing's loading, a third to a half here; ahead there is an upwash.
         assert!(wash[1] > 0.3 && wash[1] < 0.6, "{wash:?}");
         assert!(up[1] < 0.0 && up[1] > -0.2, "{up:?}");
+    }
+
+    fn wing(y: &[f64], chord: &[f64], x_le: &[f64]) -> Stations {
+        let m = |v: &[f64]| v.iter().map(|v| Length::from_si(*v)).collect::<Vec<_>>();
+        let flat = vec![Angle::from_si(0.0); y.len()];
+        Stations {
+            y: m(y),
+            z: m(&vec![0.0; y.len()]),
+            chord: m(chord),
+            x_le: m(x_le),
+            twist: flat.clone(),
+            zero_lift: flat,
+            cm: vec![0.0; y.len()],
+        }
+    }
+
+    /// The wings of the accuracy stated: rectangular, swept and tapered, cranked, swept forward, elliptic by 25 stations. The
+    /// error of a lattice falls at least with the number of strips, so that what is left of it is no greater than its
+    /// difference from one with half as many.
+    #[test]
+    fn lattices_are_as_near_their_limit_as_stated() {
+        let out: Vec<f64> = (0..25)
+            .map(|i| elementary::sin(PI / 2.0 * f64::from(i) / 24.0))
+            .collect();
+        let round: Vec<f64> = out.iter().map(|y| (1.0 - y * y).max(0.0).sqrt()).collect();
+        let ellipse: Vec<f64> = out.iter().map(|y| 4.0 * y).collect();
+        let line: Vec<f64> = round.iter().map(|c| -c / 4.0).collect();
+        let wings = [
+            wing(&[0.0, 4.0], &[1.0; 2], &[0.0; 2]),
+            wing(&[0.0, 2.5], &[1.0; 2], &[0.0, 2.5]),
+            wing(&[0.0, 1.414], &[1.5, 0.5], &[0.0, 1.914]),
+            wing(&[0.0, 1.5, 4.5], &[1.4, 1.3, 0.7], &[0.0, 0.0, 0.3]),
+            wing(&[0.0, 4.0], &[1.2, 0.8], &[0.0, -1.5]),
+            wing(&ellipse, &round, &line),
+        ];
+        for (at, wing) in wings.iter().enumerate() {
+            let found = |layout| {
+                let surfaces = LiftingSurfaces::laid_out(std::slice::from_ref(wing), layout);
+                surfaces
+                    .unwrap()
+                    .at(Angle::from_si(0.1), Length::from_si(0.0))
+            };
+            let (own, half) = (found(Layout::Own), found(Layout::Half));
+            let part = |a: f64, b: f64| (a / b - 1.0).abs();
+            let slope = part(own.CL_alpha.si(), half.CL_alpha.si());
+            let drag = part(own.CDi, half.CDi);
+            let center = (own.x_ac.si() - half.x_ac.si()).abs() / own.mac.si();
+            assert!(
+                slope < 2.5e-3 && drag < 5e-3 && center < 5e-3,
+                "{at} {slope} {drag} {center}"
+            );
+        }
+    }
+
+    #[test]
+    fn wing_and_tail_or_canard_are_as_near_their_limit_as_stated() {
+        let wing = surface(0.0, 4.0, 1.0, 0.02, 0.0);
+        for other in [
+            surface(4.0, 1.2, 0.6, -0.02, 0.3),
+            surface(-3.0, 1.2, 0.6, 0.03, 0.2),
+        ] {
+            let surfaces = [wing.clone(), other];
+            let found = |layout| {
+                let surfaces = LiftingSurfaces::laid_out(&surfaces, layout);
+                surfaces
+                    .unwrap()
+                    .at(Angle::from_si(0.05), Length::from_si(0.25))
+            };
+            let (own, half) = (found(Layout::Own), found(Layout::Half));
+            let center = (own.x_ac.si() - half.x_ac.si()).abs() / own.mac.si();
+            let slope = (own.CL_alpha.si() / half.CL_alpha.si() - 1.0).abs();
+            assert!(slope < 2.5e-3 && center < 5e-3, "{slope} {center}");
+            for (a, b) in own.downwash_slope.iter().zip(&half.downwash_slope) {
+                assert!((a - b).abs() < 0.01, "{a} {b}");
+            }
+        }
     }
 
     #[test]
