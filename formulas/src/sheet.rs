@@ -304,6 +304,16 @@ impl Sheet {
     /// The report; `asked` names quantities whose values are written however many they are.
     #[must_use]
     pub fn report(&self, asked: &[String]) -> Report {
+        self.reported(asked, true)
+    }
+
+    /// The report without figures and without the drawings of free bodies, for whoever wants the numbers first.
+    #[must_use]
+    pub fn report_undrawn(&self, asked: &[String]) -> Report {
+        self.reported(asked, false)
+    }
+
+    fn reported(&self, asked: &[String], drawn: bool) -> Report {
         let findings = self.findings();
         let input = report::Input {
             text: &self.text,
@@ -317,6 +327,7 @@ impl Sheet {
                 .collect(),
             findings,
             asked,
+            drawn,
         };
         report::build(&input)
     }

@@ -8,6 +8,16 @@ pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
     Sheet::open_with(text, &|name| beside(sheets, name))
 }
 
+/// Opens a text that is going to be edited.
+pub(crate) fn open_for_edits(text: &str, sheets: Option<&Object>) -> Sheet {
+    let around = Around {
+        sheets: &|name| beside(sheets, name),
+        editing: true,
+        ..Around::default()
+    };
+    Sheet::open_around(text, &around)
+}
+
 /// Reads and checks a text only.
 pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
     let around = Around {
@@ -19,7 +29,7 @@ pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
 
 /// The text of another sheet. An object of JavaScript answers to the names of its prototype too; only its own entries are
 /// sheets.
-fn beside(sheets: Option<&Object>, name: &str) -> Option<String> {
+pub(crate) fn beside(sheets: Option<&Object>, name: &str) -> Option<String> {
     let sheets = sheets.filter(|sheets| Object::has_own(sheets, &name.into()))?;
     Reflect::get(sheets, &name.into()).ok()?.as_string()
 }

@@ -32,6 +32,8 @@ pub struct Input<'a> {
     pub findings: Vec<Finding>,
     /// Symbols whose values are written however many there are; a record stands for all its fields.
     pub asked: &'a [String],
+    /// Whether figures and free bodies are drawn; where not, figures are left out altogether.
+    pub drawn: bool,
 }
 
 /// Builds the report.
@@ -53,8 +55,12 @@ pub fn build(input: &Input) -> Report {
         quantities: quantities(input),
         governing: governing(input.tree, program, values),
         requirements: requirements(tree, program, values),
-        freebodies: freebodies(tree, program, values),
-        figures: figures(tree, program, values),
+        freebodies: freebodies(tree, program, values, input.drawn),
+        figures: if input.drawn {
+            figures(tree, program, values)
+        } else {
+            Vec::new()
+        },
         findings: input.findings.clone(),
         digits: match program.digits {
             digits @ 1..=15 => digits,
@@ -390,6 +396,7 @@ mod tests {
             others: Vec::new(),
             findings: Vec::new(),
             asked: &asked,
+            drawn: true,
         });
         let values = report.quantities[0].values.as_ref();
         assert_eq!(values.map(ValueList::len), Some(10_001));

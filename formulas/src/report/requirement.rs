@@ -107,7 +107,12 @@ pub(super) fn margin(op: BinaryOp, left: f64, right: f64) -> Option<f64> {
 }
 
 /// All free bodies in the order of the sheet.
-pub(super) fn freebodies(tree: &Tree, program: &Program, values: &Values) -> Vec<Freebody> {
+pub(super) fn freebodies(
+    tree: &Tree,
+    program: &Program,
+    values: &Values,
+    drawn: bool,
+) -> Vec<Freebody> {
     let pairs = program.freebodies.iter().enumerate();
     pairs
         .map(|(i, body)| {
@@ -133,7 +138,11 @@ pub(super) fn freebodies(tree: &Tree, program: &Program, values: &Values) -> Vec
                     })
                     .collect(),
                 taken_up_by: found.taken_up_by.clone(),
-                svg: found.drawn.as_ref().map(|d| draw(program, body, found, d)),
+                svg: found
+                    .drawn
+                    .as_ref()
+                    .filter(|_| drawn)
+                    .map(|d| draw(program, body, found, d)),
             }
         })
         .collect()

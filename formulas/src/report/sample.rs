@@ -55,6 +55,7 @@ impl Sample {
             others: Vec::new(),
             findings: Vec::new(),
             asked: &[],
+            drawn: true,
         })
     }
 }

@@ -1,15 +1,44 @@
 /** The engine in its own thread: the newest text wins, a crash costs one evaluation and never the sheet. */
-import workerSource from "../generated/worker.txt";
-import type { Report } from "./report.js";
+import type { Catalogue, Completions, Differences, Hover, Trail } from "./answers.js";
+import { unpacked, type Drawings, type Report } from "./report.js";
+
+/** What the page asks besides a report. */
+export type Question =
+  | { kind: "trail"; symbol: string; condition: Record<string, string> }
+  | { kind: "complete" | "hover"; text: string; line: number; column: number }
+  | { kind: "print"; text?: string }
+  | { kind: "catalogue" }
+  | { kind: "difference"; old: string; next: string };
+
+/** What is answered to each. */
+export interface Answers {
+  trail: Trail;
+  complete: Completions | null;
+  hover: Hover | null;
+  print: string;
+  catalogue: Catalogue;
+  difference: Differences;
+}
+
+export type ToWorker =
+  | { packed: string }
+  | { module: WebAssembly.Module }
+  | { serial: number; text: string; sheets: Record<string, string> | null }
+  | { id: number; question: Question };
 
 export type FromWorker =
   | { ready: true; module: WebAssembly.Module }
-  | { serial: number; report: Report }
+  | { serial: number; json: string; numbers: Float64Array }
+  | { serial: number; drawings: string }
+  | { id: number; answer: Answers[keyof Answers] }
+  | { id: number; refused: string }
   | { serial: number; failure: string };
 
 export interface EngineEvents {
   /** The report of the text that was given as `serial`. */
   report(report: Report, serial: number): void;
+  /** Its drawings, which come after it. */
+  drawings(drawings: Drawings, serial: number): void;
   /** The engine broke off on the text given as `serial`. */
   failure(message: string, serial: number): void;
   /** An evaluation has been running for a while, or no longer is. */
@@ -18,6 +47,11 @@ export interface EngineEvents {
 
 /** After this long an evaluation is shown to be running, with a way to stop it. */
 const BUSY_AFTER_MS = 200;
+
+interface Asked {
+  answered: (answer: never) => void;
+  refused: (why: Error) => void;
+}
 
 export class Engine {
   /** The compiled engine, for what the page itself asks of it. */
@@ -28,7 +62,10 @@ export class Engine {
   #module: WebAssembly.Module | null = null;
   #worker: Worker | null = null;
   #running: number | null = null;
-  #waiting: { serial: number; text: string } | null = null;
+  #waiting: { serial: number; text: string; sheets: Record<string, string> | null } | null = null;
+  #last: { serial: number; text: string; sheets: Record<string, string> | null } | null = null;
+  #asked = new Map<number, Asked>();
+  #questions = 0;
   #timer = 0;
 
   /** Starts the engine from the packed bytes in the page. */
@@ -40,9 +77,19 @@ export class Engine {
   }
 
   /** Evaluates `text` as soon as the thread is free; a text that was still waiting is passed over. */
-  evaluate(serial: number, text: string): void {
-    this.#waiting = { serial, text };
+  evaluate(serial: number, text: string, sheets: Record<string, string> | null): void {
+    this.#waiting = { serial, text, sheets };
     this.#next();
+  }
+
+  /** Asks something about the text last evaluated. */
+  ask<K extends Question["kind"]>(question: Question & { kind: K }): Promise<Answers[K]> {
+    const id = ++this.#questions;
+    return new Promise((answered, refused) => {
+      this.#asked.set(id, { answered, refused });
+      if (this.#worker) this.#worker.postMessage({ id, question } satisfies ToWorker);
+      else refused(new Error("the engine is not running"));
+    });
   }
 
   /** Breaks off what is running and goes on with what waits. */
@@ -52,36 +99,49 @@ export class Engine {
     this.#worker = null;
     this.#settle();
     this.#renew();
-    if (serial !== null) this.#events.failure("Stopped. The values are those from before.", serial);
+    if (serial !== null) this.#events.failure("stopped", serial);
   }
 
-  /** A thread of its own; until its engine is ready it keeps the text that it is given. */
+  /** A thread of its own; until its engine is ready it keeps what it is given. */
   #renew(): void {
-    const source = new Blob([workerSource], { type: "text/javascript" });
-    const address = URL.createObjectURL(source);
-    const worker = new Worker(address);
-    URL.revokeObjectURL(address);
+    for (const { refused } of this.#asked.values()) refused(new Error("the engine was started anew"));
+    this.#asked.clear();
+    const worker = window.pitchwrightFirst ?? window.pitchwrightThread();
+    window.pitchwrightFirst = undefined;
     worker.onmessage = (event: MessageEvent<FromWorker>) => this.#hear(worker, event.data);
     worker.onerror = (event) => this.#crash(event.message);
-    worker.postMessage(this.#module ? { module: this.#module } : { packed: this.#packed });
+    worker.postMessage((this.#module ? { module: this.#module } : { packed: this.#packed }) satisfies ToWorker);
     this.#worker = worker;
     this.#next();
   }
 
   #hear(worker: Worker, message: FromWorker): void {
-    if ("ready" in message) {
-      performance.mark("engine ready");
-      this.#module = message.module;
-      this.#compiled(message.module);
-    } else if ("failure" in message) {
-      worker.terminate();
-      this.#crash(message.failure, message.serial);
-    } else {
+    if (worker !== this.#worker) return;
+    if ("json" in message) {
       this.#settle();
       // The next text is on its way before this report is drawn.
       this.#next();
-      this.#events.report(message.report, message.serial);
+      this.#events.report(unpacked(message.json, message.numbers), message.serial);
+    } else if ("drawings" in message) {
+      this.#events.drawings(JSON.parse(message.drawings) as Drawings, message.serial);
+    } else if ("answer" in message) {
+      this.#answered(message.id)?.answered(message.answer as never);
+    } else if ("refused" in message) {
+      this.#answered(message.id)?.refused(new Error(message.refused));
+    } else if ("ready" in message) {
+      performance.mark("engine ready");
+      this.#module = message.module;
+      this.#compiled(message.module);
+    } else {
+      worker.terminate();
+      this.#crash(message.failure, message.serial);
     }
+  }
+
+  #answered(id: number): Asked | undefined {
+    const asked = this.#asked.get(id);
+    this.#asked.delete(id);
+    return asked;
   }
 
   #crash(message: string, of?: number): void {
@@ -98,8 +158,9 @@ export class Engine {
     const next = this.#waiting;
     this.#waiting = null;
     this.#running = next.serial;
+    this.#last = next;
     this.#timer = window.setTimeout(() => this.#events.busy(true), BUSY_AFTER_MS);
-    this.#worker.postMessage(next);
+    this.#worker.postMessage(next satisfies ToWorker);
   }
 
   #settle(): void {

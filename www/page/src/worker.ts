@@ -1,15 +1,16 @@
-/** The engine's thread: takes a text, gives its report. */
-import { evaluate, initSync, last_panic } from "../generated/engine.js";
-import type { FromWorker } from "./engine.js";
-import type { Report } from "./report.js";
+/** The engine's thread: takes a text, gives its report, then its drawings, and answers what the page asks of it. */
+import { catalogue, Desk, difference, initSync, last_panic, print } from "../generated/engine.js";
+import type { Answers, FromWorker, Question, ToWorker } from "./engine.js";
 
-type ToWorker = { packed: string } | { module: WebAssembly.Module } | { serial: number; text: string };
+/** Drawings wait this long for the next key. */
+const DRAW_AFTER_MS = 60;
 
 const answer = (message: FromWorker, transfer: Transferable[] = []) => self.postMessage(message, { transfer });
 
-let ready = false;
-/** The text that came before the engine was there. */
-let waiting: { serial: number; text: string } | null = null;
+let desk: Desk | null = null;
+/** What came before the engine was there. */
+let waiting: ToWorker[] = [];
+let drawing = 0;
 
 self.onmessage = (event: MessageEvent<ToWorker>) => {
   const message = event.data;
@@ -17,17 +18,20 @@ self.onmessage = (event: MessageEvent<ToWorker>) => {
     compile(message.packed).then(begin, (error: unknown) => answer({ serial: 0, failure: String(error) }));
   } else if ("module" in message) {
     begin(message.module);
-  } else if (ready) {
-    work(message.serial, message.text);
+  } else if (desk) {
+    take(desk, message);
   } else {
-    waiting = message;
+    waiting.push(message);
   }
 };
 
 /** The engine is unpacked here, beside the page that is being laid out. */
 async function compile(packed: string): Promise<WebAssembly.Module> {
-  const unpacked = new Blob([bytesOf(packed)]).stream().pipeThrough(new DecompressionStream("gzip"));
-  return WebAssembly.compileStreaming(new Response(unpacked, { headers: { "content-type": "application/wasm" } }));
+  const gunzip = new DecompressionStream("gzip");
+  const writer = gunzip.writable.getWriter();
+  void writer.write(bytesOf(packed));
+  void writer.close();
+  return WebAssembly.compileStreaming(new Response(gunzip.readable, { headers: { "content-type": "application/wasm" } }));
 }
 
 function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
@@ -37,24 +41,60 @@ function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
 
 function begin(module: WebAssembly.Module): void {
   initSync({ module });
-  ready = true;
-  const first = waiting;
-  waiting = null;
-  if (first) work(first.serial, first.text);
+  desk = new Desk();
+  for (const message of waiting) take(desk, message);
+  waiting = [];
   // The page's own highlighting is less urgent than the first values.
   answer({ ready: true, module });
 }
 
-function work(serial: number, text: string): void {
+function take(at: Desk, message: ToWorker): void {
+  if ("text" in message) work(at, message.serial, message.text, message.sheets);
+  else if ("question" in message) reply(at, message.id, message.question);
+}
+
+function work(at: Desk, serial: number, text: string, sheets: Record<string, string> | null): void {
+  clearTimeout(drawing);
   try {
-    const report = evaluate(text) as Report;
-    answer({ serial, report }, columns(report));
+    const json = at.take(text, sheets);
+    const numbers = at.numbers();
+    answer({ serial, json, numbers }, [numbers.buffer]);
+    drawing = self.setTimeout(() => draw(at, serial), DRAW_AFTER_MS);
   } catch (error) {
     answer({ serial, failure: last_panic() ?? String(error) });
   }
 }
 
-/** The columns of numbers go over to the page without a copy. */
-function columns(report: Report): Transferable[] {
-  return report.quantities.flatMap(({ values }) => (values instanceof Float64Array ? [values.buffer] : []));
+function draw(at: Desk, serial: number): void {
+  try {
+    answer({ serial, drawings: at.drawings() });
+  } catch (error) {
+    answer({ serial, failure: last_panic() ?? String(error) });
+  }
+}
+
+function reply(at: Desk, id: number, question: Question): void {
+  try {
+    answer({ id, answer: replied(at, question) });
+  } catch (error) {
+    const broken = last_panic();
+    answer(broken ? { serial: 0, failure: broken } : { id, refused: String(error) });
+  }
+}
+
+function replied(at: Desk, question: Question): Answers[Question["kind"]] {
+  switch (question.kind) {
+    case "trail":
+      return JSON.parse(at.trail(question.symbol, question.condition)) as Answers["trail"];
+    case "complete":
+      return JSON.parse(at.complete(question.text, question.line, question.column)) as Answers["complete"];
+    case "hover":
+      return JSON.parse(at.hover(question.text, question.line, question.column)) as Answers["hover"];
+    case "print":
+      return question.text === undefined ? at.print() : print(question.text);
+    case "catalogue":
+      return JSON.parse(catalogue()) as Answers["catalogue"];
+    case "difference":
+      return JSON.parse(difference(question.old, question.next)) as Answers["difference"];
+  }
 }
