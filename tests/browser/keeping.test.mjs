@@ -28,7 +28,7 @@ test("a reload in the middle of a row keeps what was typed", async () => {
 
 test("a sheet saved as a file and opened again is the same, byte for byte", async () => {
   const { page, context, offences } = await openPage(browser, { prepare: withoutPicker, acceptDownloads: true });
-  const [download] = await Promise.all([page.waitForEvent("download"), page.getByRole("button", { name: "Save" }).click()]);
+  const [download] = await Promise.all([page.waitForEvent("download"), page.getByRole("button", { name: "Save", exact: true }).click()]);
   assert.equal(download.suggestedFilename(), "osier-single-seater-horizontal-tail-balancing-loads.pitchwright");
   const file = join(folder, "saved.pitchwright");
   await download.saveAs(file);
@@ -37,7 +37,7 @@ test("a sheet saved as a file and opened again is the same, byte for byte", asyn
   await page.locator("input[type=file]").setInputFiles(file);
   await page.waitForFunction(() => document.querySelector("table.form").textContent.includes("155.0"));
   assert.equal(await sheetText(page), startingSheet.replace("= 142 ", "= 155 "));
-  const [again] = await Promise.all([page.waitForEvent("download"), page.getByRole("button", { name: "Save" }).click()]);
+  const [again] = await Promise.all([page.waitForEvent("download"), page.getByRole("button", { name: "Save", exact: true }).click()]);
   assert.equal(again.suggestedFilename(), "saved.pitchwright");
   assert.deepEqual(offences, []);
   await context.close();
@@ -76,7 +76,7 @@ test("a full or forbidden store is said plainly, with a way to save", async () =
   });
   const notice = page.locator('[data-notice="store"]');
   assert.match(await notice.textContent(), /keeps no draft/);
-  assert.equal(await notice.getByRole("button", { name: "Save" }).count(), 1);
+  assert.equal(await notice.getByRole("button", { name: "Save", exact: true }).count(), 1);
   assert.deepEqual(offences, []);
   await context.close();
 });

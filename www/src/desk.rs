@@ -103,7 +103,7 @@ impl Desk {
         })
     }
 
-    /// How a value came about, as JSON; see [`crate::trail`].
+    /// How a value came about, as JSON.
     ///
     /// # Errors
     /// A sentence where there is no such symbol, axis or label.
@@ -114,7 +114,7 @@ impl Desk {
         write(&trail)
     }
 
-    /// What could stand at a place of `text`, as JSON; see [`crate::complete`]. The text may be newer than the one taken.
+    /// What could stand at a place of `text`, as JSON. The text may be newer than the one taken.
     ///
     /// # Errors
     /// Only where the JSON cannot be written.
@@ -127,7 +127,7 @@ impl Desk {
         write(&completion::complete(&desk, desk.byte16(line, column16)))
     }
 
-    /// What stands at a place of `text`, as JSON; null where there is nothing to say. See [`crate::hover`].
+    /// What stands at a place of `text`, as JSON; null where there is nothing to say.
     ///
     /// # Errors
     /// Only where the JSON cannot be written.
@@ -140,7 +140,7 @@ impl Desk {
         write(&place::hover(&desk, desk.byte16(line, column16)))
     }
 
-    /// The printed report as an HTML document; see [`crate::print`].
+    /// The printed report as an HTML document, with nothing outside it and no script.
     ///
     /// # Errors
     /// Where no sheet is open.

@@ -3,6 +3,7 @@
 use formulas::sheet::{Around, Sheet};
 use js_sys::{Array, Object, Reflect};
 
+#[cfg(feature = "objects")]
 /// Opens a text; `sheets` holds the texts of other sheets by their names.
 pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
     Sheet::open_with(text, &|name| beside(sheets, name))
@@ -18,6 +19,7 @@ pub(crate) fn open_for_edits(text: &str, sheets: Option<&Object>) -> Sheet {
     Sheet::open_around(text, &around)
 }
 
+#[cfg(feature = "objects")]
 /// Reads and checks a text only.
 pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
     let around = Around {

@@ -22,7 +22,7 @@ pub struct Parts {
     pub bundle: Bundle,
     /// The engine.
     pub wasm: Vec<u8>,
-    /// The starting sheets: name without ending, and text, in the order of their names.
+    /// The starting sheets: name without ending, and text, in the order in which they are offered.
     pub sheets: Vec<(String, String)>,
 }
 
@@ -36,13 +36,17 @@ pub fn html(parts: &Parts) -> Outcome<String> {
         .filter(char::is_ascii_alphanumeric)
         .take(16)
         .collect();
+    let bundle = &parts.bundle;
     let texts = [
-        ("policy", policy(&parts.bundle.script, &nonce)),
+        ("policy", policy(bundle, &nonce)),
         ("nonce", nonce),
-        ("style", parts.bundle.style.trim_end().to_owned()),
-        ("sheets", sheet_data(&parts.sheets)),
-        ("engine", STANDARD.encode(gzip(&parts.wasm)?)),
-        ("script", parts.bundle.script.clone()),
+        ("style", bundle.style.trim_end().to_owned()),
+        ("boot", bundle.boot.clone()),
+        ("engine", packed(&parts.wasm)?),
+        ("sheet", first_sheet(&parts.sheets)),
+        ("script", bundle.script.clone()),
+        ("later", packed(bundle.later.as_bytes())?),
+        ("shelf", packed(sheet_data(&parts.sheets).as_bytes())?),
     ];
     match texts
         .iter()
@@ -55,7 +59,7 @@ pub fn html(parts: &Parts) -> Outcome<String> {
     }
 }
 
-/// Reads the starting sheets of `folder`.
+/// Reads the starting sheets of `folder`, those that its `order.txt` names first and in its order.
 ///
 /// # Errors
 /// When the folder or a sheet cannot be read.
@@ -78,17 +82,26 @@ pub fn read_sheets(folder: &Path) -> Outcome<Vec<(String, String)>> {
             sheets.push((name, text));
         }
     }
-    sheets.sort();
+    let order = folder.join("order.txt");
+    let order = fs::read_to_string(&order)
+        .map_err(while_doing(format!("cannot read {}", order.display())))?;
+    let place = |name: &str| order.lines().position(|line| line == name);
+    sheets.sort_by_cached_key(|(name, _)| (place(name).unwrap_or(usize::MAX), name.clone()));
     Ok(sheets)
 }
 
-/// Only the page's own script runs, only its own style applies, and nothing is ever asked for.
-fn policy(script: &str, nonce: &str) -> String {
+/// Only the page's own scripts run, only its own style applies, and nothing is ever asked for.
+fn policy(bundle: &Bundle, nonce: &str) -> String {
+    let scripts = [&bundle.boot, &bundle.script, &bundle.later];
+    let hashes: Vec<String> = scripts
+        .iter()
+        .map(|script| format!("'sha256-{}'", digest(script)))
+        .collect();
     format!(
-        "default-src 'none'; script-src 'sha256-{}' 'wasm-unsafe-eval'; style-src 'nonce-{nonce}'; img-src data: blob:; \
-         worker-src blob:; connect-src 'none'; font-src 'none'; form-action 'none'; base-uri 'none'; frame-src 'none'; \
+        "default-src 'none'; script-src {} 'wasm-unsafe-eval'; style-src 'nonce-{nonce}'; img-src data: blob:; \
+         worker-src blob:; connect-src 'none'; font-src 'none'; form-action 'none'; base-uri 'none'; frame-src 'self'; \
          object-src 'none'",
-        digest(script)
+        hashes.join(" ")
     )
 }
 
@@ -97,14 +110,43 @@ fn digest(text: &str) -> String {
     STANDARD.encode(Sha256::digest(text))
 }
 
+/// Bytes as the page unpacks them.
+fn packed(bytes: &[u8]) -> Outcome<String> {
+    Ok(STANDARD.encode(gzip(bytes)?))
+}
+
 fn gzip(bytes: &[u8]) -> Outcome<Vec<u8>> {
     let mut encoder = GzBuilder::new().write(Vec::new(), Compression::best());
     encoder
         .write_all(bytes)
-        .map_err(while_doing("cannot pack the engine"))?;
+        .map_err(while_doing("cannot pack a part of the page"))?;
     encoder
         .finish()
-        .map_err(while_doing("cannot pack the engine"))
+        .map_err(while_doing("cannot pack a part of the page"))
+}
+
+/// The sheet that the page opens with, and the titles of all, as JSON.
+fn first_sheet(sheets: &[(String, String)]) -> String {
+    let text = sheets.first().map_or("", |(_, text)| text.as_str());
+    let titles: Vec<_> = sheets
+        .iter()
+        .map(|(name, text)| format!("[{},{}]", quoted(name), quoted(title(name, text))))
+        .collect();
+    format!(
+        "{{\"text\":{},\"titles\":[{}]}}",
+        quoted(text),
+        titles.join(",")
+    )
+}
+
+/// What a sheet is called: its title line, else its name.
+fn title<'a>(name: &'a str, text: &'a str) -> &'a str {
+    let lines = text.lines();
+    lines
+        .filter_map(|line| line.strip_prefix("title "))
+        .map(str::trim)
+        .next()
+        .unwrap_or(name)
 }
 
 /// The sheets as JSON, with nothing in it that could end a script block.
@@ -160,9 +202,12 @@ mod tests {
 
     fn parts() -> Parts {
         Parts {
-            frame: "{{policy}}|{{nonce}}|{{style}}|{{sheets}}|{{engine}}|{{script}}".to_owned(),
+            frame: "{{policy}}|{{nonce}}|{{style}}|{{boot}}|{{engine}}|{{sheet}}|{{later}}|{{shelf}}|{{script}}"
+                .to_owned(),
             bundle: Bundle {
+                boot: "let b = 2;".to_owned(),
                 script: "let a = 1;".to_owned(),
+                later: "let c = 3;".to_owned(),
                 style: "p{}\n".to_owned(),
             },
             wasm: vec![0, 97, 115, 109],
@@ -174,14 +219,16 @@ mod tests {
     fn the_policy_admits_the_script_by_its_hash() {
         // printf 'let a = 1;' | openssl dgst -sha256 -binary | base64
         let page = html(&parts()).unwrap();
-        assert!(page.contains("script-src 'sha256-xY6QKfH9PRsQnLz56nj6MBwiK5oHg+im1Jkpdp1x/Ck=' 'wasm-unsafe-eval'"), "{page}");
+        let hash = "'sha256-xY6QKfH9PRsQnLz56nj6MBwiK5oHg+im1Jkpdp1x/Ck='";
+        assert!(page.contains(hash), "{page}");
+        assert_eq!(page.matches("'sha256-").count(), 3, "{page}");
     }
 
     #[test]
     fn a_sheet_cannot_end_the_data_block() {
         let page = html(&parts()).unwrap();
         assert!(
-            page.contains(r#"{"one":"title \"A\"\n\u003c/script>\n"}"#),
+            page.contains(r#"{"text":"title \"A\"\n\u003c/script>\n","titles":[["one","\"A\""]]}"#),
             "{page}"
         );
     }
@@ -195,7 +242,7 @@ mod tests {
     fn places_are_looked_for_in_the_frame_only() {
         let bundle = Bundle {
             script: "'{{engine}}'".to_owned(),
-            style: String::new(),
+            ..parts().bundle
         };
         assert!(
             html(&Parts { bundle, ..parts() })

@@ -10,13 +10,17 @@ use crate::paths::Paths;
 /// The page's own code, ready to be put into the file.
 #[derive(Clone, Debug)]
 pub struct Bundle {
-    /// The one script; it holds the worker's source as text.
+    /// The script that runs first and starts the engine's thread, whose source it holds as text.
+    pub boot: String,
+    /// The script that shows the sheet and its first values.
     pub script: String,
+    /// The script that is unpacked after them: editors and panels.
+    pub later: String,
     /// The one style sheet.
     pub style: String,
 }
 
-/// Type-checks and bundles the page. The worker comes first, because the page's script carries it as text.
+/// Type-checks and bundles the page. The worker comes first, because the first script carries it as text.
 ///
 /// # Errors
 /// When the types do not agree or the bundler fails.
@@ -24,7 +28,9 @@ pub fn build(paths: &Paths) -> Outcome<Bundle> {
     bundle(paths, "src/worker.ts", "worker.txt")?;
     run(node(paths, "node_modules/typescript/bin/tsc").args(["--project", "tsconfig.json"]))?;
     Ok(Bundle {
+        boot: bundle(paths, "src/boot.ts", "boot.js")?,
         script: bundle(paths, "src/main.ts", "page.js")?,
+        later: bundle(paths, "src/later-entry.ts", "later.js")?,
         style: bundle(paths, "src/page.css", "page.css")?,
     })
 }

@@ -47,6 +47,7 @@ fn compile(paths: &Paths) -> Outcome<PathBuf> {
         "--package",
         "www",
         "--lib",
+        "--no-default-features",
         "--profile",
         PROFILE,
         "--target",

@@ -1,5 +1,5 @@
 /** Which conditions the form shows: one axis across, the others each at a label or all where one quantity governs. */
-import { digitsOf, type Axis, type Condition, type Extreme, type Finding, type Governing, type Quantity, type Report } from "./report.js";
+import { digitsOf, labelAt, type Axis, type Condition, type Extreme, type Finding, type Governing, type Quantity, type Report } from "./report.js";
 
 /** What the person chose; what is left open is chosen by `shownBy`. */
 export interface Choice {
@@ -41,7 +41,7 @@ export function shownBy(report: Report, choice: Choice): Shown {
   const condition = (governing && governs(governing)?.condition) ?? {};
   const at: Condition = Object.create(null) as Condition;
   for (const { name, labels } of report.axes) {
-    const label = condition[name] ?? choice.at[name];
+    const label = labelAt(condition, name) ?? labelAt(choice.at, name);
     at[name] = label !== undefined && labels.includes(label) ? label : (labels[0] ?? "");
   }
   const quantities = new Map(report.quantities.map((quantity) => [quantity.symbol, quantity]));
@@ -75,7 +75,7 @@ export function governs(of: Pick<Governing, "largest" | "smallest">): Extreme | 
 
 /** A condition in words: its labels, in the order of the axes. */
 export function conditionText(report: Report, condition: Condition): string {
-  const labels = report.axes.flatMap(({ name }) => condition[name] ?? []);
+  const labels = report.axes.flatMap(({ name }) => labelAt(condition, name) ?? []);
   return labels.join(", ");
 }
 

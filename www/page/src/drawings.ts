@@ -1,6 +1,6 @@
 /** Figures and free bodies under the form: the engine's drawings, as they are in print. */
 import { el, fill } from "./dom.js";
-import type { Shown } from "./conditions.js";
+import type { Drawings as Drawn } from "./report.js";
 import { words } from "./strings.js";
 
 export class Drawings {
@@ -14,9 +14,8 @@ export class Drawings {
   }
 
   /** Shows the drawings of the report. */
-  show(shown: Shown): void {
-    const { figures, freebodies } = shown.report;
-    const drawn = [...(figures ?? []), ...(freebodies ?? [])].flatMap(({ name, line, svg }) => (svg ? [{ name, line, svg }] : []));
+  show({ figures, freebodies }: Drawn): void {
+    const drawn = [...figures, ...freebodies];
     this.element.hidden = drawn.length === 0;
     const key = JSON.stringify(drawn);
     if (key === this.#key) return;

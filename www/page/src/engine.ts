@@ -6,7 +6,7 @@ import { unpacked, type Drawings, type Report } from "./report.js";
 export type Question =
   | { kind: "trail"; symbol: string; condition: Record<string, string> }
   | { kind: "complete" | "hover"; text: string; line: number; column: number }
-  | { kind: "print"; text?: string }
+  | { kind: "print" }
   | { kind: "catalogue" }
   | { kind: "difference"; old: string; next: string };
 
@@ -63,7 +63,6 @@ export class Engine {
   #worker: Worker | null = null;
   #running: number | null = null;
   #waiting: { serial: number; text: string; sheets: Record<string, string> | null } | null = null;
-  #last: { serial: number; text: string; sheets: Record<string, string> | null } | null = null;
   #asked = new Map<number, Asked>();
   #questions = 0;
   #timer = 0;
@@ -158,7 +157,6 @@ export class Engine {
     const next = this.#waiting;
     this.#waiting = null;
     this.#running = next.serial;
-    this.#last = next;
     this.#timer = window.setTimeout(() => this.#events.busy(true), BUSY_AFTER_MS);
     this.#worker.postMessage(next satisfies ToWorker);
   }

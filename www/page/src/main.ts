@@ -1,10 +1,5 @@
-/** Starts the page. */
-import { Page } from "./page.js";
-
-performance.mark("script");
-// Nothing here talks to anybody. The policy in the head cannot close this door, so it is taken off its hinges.
-Reflect.deleteProperty(window, "RTCPeerConnection");
+/** Shows the sheet: the one in this file, the last draft, or the first of the starting sheets. */
+import { Page, type OwnSheet } from "./page.js";
 
 const data = (id: string) => document.getElementById(id)?.textContent ?? "";
-const sheets = JSON.parse(data("sheets")) as Record<string, string>;
-new Page(data("engine"), sheets, "osier-balancing-loads");
+new Page(data("engine"), JSON.parse(data("sheet")) as OwnSheet);

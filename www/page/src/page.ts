@@ -1,7 +1,6 @@
 /** The page: its parts, and how a change of the sheet goes through them. */
 import { shownBy, type Choice, type Shown } from "./conditions.js";
 import { el, setText } from "./dom.js";
-import { loadHighlighter } from "./editing.js";
 import { Drawings } from "./drawings.js";
 import { Engine } from "./engine.js";
 import { acceptDrops, fileField, nameFor, read, save } from "./files.js";
@@ -12,22 +11,34 @@ import { Selectors } from "./head.js";
 import { frame, type Controls } from "./layout.js";
 import { Notices } from "./notices.js";
 import { preparePrint } from "./print.js";
-import type { Fix, Report } from "./report.js";
+import type { Drawings as Drawn, Fix, Report } from "./report.js";
 import { RowDesk, tabbed } from "./row-desk.js";
 import { SheetText } from "./sheet-text.js";
 import { spoken } from "./speech.js";
 import { newId, Store, type Draft } from "./store.js";
 import { words } from "./strings.js";
 import { TitleBlock } from "./title-block.js";
-import { WholeText } from "./whole-text.js";
+import { later, prepareLater, unpack } from "./unpacking.js";
+import type { WholeText } from "./whole-text.js";
 
 /** How a sheet that is begun anew looks. */
 const FRESH_SHEET = "";
 
+/** The sheet in the file itself. */
+export interface OwnSheet {
+  /** A copy that carries a sheet of its own names it here. */
+  id?: string;
+  name?: string | null;
+  text: string;
+  /** The starting sheets by name and title. */
+  titles: [name: string, title: string][];
+}
+
 export class Page {
   #sheet: SheetText;
   #draft: Draft;
-  #starting: Record<string, string>;
+  #own: OwnSheet;
+  #shelf: Promise<Record<string, string>> | null = null;
   #store: Store;
   #engine: Engine;
   #serial = 0;
@@ -47,23 +58,23 @@ export class Page {
   #governing = new GoverningConditions();
   #drawings = new Drawings();
   #whole: WholeText | null = null;
+  #prepared = false;
 
-  /** Starts with the last draft, or with the `first` of the starting sheets where there is none. */
-  constructor(packedEngine: string, sheets: Record<string, string>, first: string) {
-    this.#starting = sheets;
-    const starting = sheets[first] ?? FRESH_SHEET;
+  /** Starts with the last draft, or with the sheet in the file where there is none. */
+  constructor(packedEngine: string, own: OwnSheet) {
+    this.#own = own;
     this.#store = new Store({ trouble: (trouble) => this.#trouble(trouble), otherWindow: () => this.#notices.show("window", words.otherWindow) });
-    this.#draft = this.#store.last() ?? { id: newId(), name: null, text: starting };
+    this.#draft = this.#first();
     this.#saved = this.#draft.text;
     this.#sheet = new SheetText(this.#draft.text);
     this.#engine = new Engine(packedEngine, {
       report: (report, serial) => this.#received(report, serial),
+      drawings: (drawings, serial) => this.#drawn(drawings, serial),
       failure: (message, serial) => this.#failed(message, serial),
       busy: (busy) => this.#busy(busy),
     });
     // The first text is worked out while the page is laid out.
     this.#changed();
-    void this.#engine.module.then(loadHighlighter);
     this.#titleBlock = new TitleBlock(this.#sheet);
     this.#selectors = new Selectors(this.#choice, (choice) => this.#choose(choice));
     this.#form = new Form({ open: (row, place) => this.#desk.open(row, place), key: (event) => this.#desk.key(event) });
@@ -83,16 +94,29 @@ export class Page {
       newSheet: () => this.#beginFresh(),
       open: () => field.click(),
       save: () => void this.#save(),
-      sheetText: () => this.#switch(),
+      sheetText: () => void this.#switch(),
       print: () => window.print(),
-      start: (name) => this.#begin({ id: newId(), name: null, text: this.#starting[name] ?? FRESH_SHEET }),
+      start: (name) => void this.#start(name),
       stop: () => this.#engine.stop(),
     }, {
       notices: this.#notices.element, titleBlock: this.#titleBlock.element, selectors: this.#selectors.element,
       form: this.#form.table, governing: this.#governing.element, drawings: this.#drawings.element, findings: this.#findings.element,
-    }, Object.entries(this.#starting).map(([name, text]) => [name, /^title (.*)$/m.exec(text)?.[1] ?? name]));
+    }, this.#own.titles);
     document.body.append(made.element, field, this.#live);
     return made;
+  }
+
+  /** A copy with a sheet of its own opens with that; any other page with the last draft. */
+  #first(): Draft {
+    const { id, name, text } = this.#own;
+    if (id !== undefined) return this.#store.read(id) ?? { id, name: name ?? null, text };
+    return this.#store.last() ?? { id: newId(), name: null, text };
+  }
+
+  async #start(name: string): Promise<void> {
+    this.#shelf ??= unpack("shelf").then((json) => JSON.parse(json) as Record<string, string>);
+    const text = (await this.#shelf)[name];
+    if (text !== undefined) this.#begin({ id: newId(), name: null, text });
   }
 
   #listen(): void {
@@ -111,9 +135,9 @@ export class Page {
   /** Every change of the text comes through here: it is kept, and worked out. */
   #changed(): void {
     this.#changedAt = performance.now();
+    this.#engine.evaluate(++this.#serial, this.#sheet.text, null);
     this.#draft.text = this.#sheet.text;
     this.#store.keep(this.#draft);
-    this.#engine.evaluate(++this.#serial, this.#sheet.text);
     document.documentElement.dataset["asked"] = String(this.#serial);
   }
 
@@ -124,10 +148,22 @@ export class Page {
     if (serial !== this.#serial) return;
     this.#report = report;
     this.#draw();
-    if (performance.getEntriesByName("first values").length === 0) performance.mark("first values");
+    if (!this.#prepared) this.#prepare();
     performance.clearMeasures("key to values");
     performance.measure("key to values", { start: this.#changedAt });
     document.documentElement.dataset["ready"] = String(serial);
+  }
+
+  /** The first values stand: now what is needed next is made ready. */
+  #prepare(): void {
+    performance.mark("first values");
+    this.#prepared = true;
+    void prepareLater();
+    void this.#engine.module.then(async (module) => (await later()).loadHighlighter(module));
+  }
+
+  #drawn(drawings: Drawn, serial: number): void {
+    if (serial === this.#serial) this.#drawings.show(drawings);
   }
 
   #draw(): void {
@@ -138,7 +174,6 @@ export class Page {
     this.#form.show(this.#report.form.rows.filter(({ kind }) => kind !== "title"), shown);
     this.#desk.show(shown);
     this.#governing.show(shown);
-    this.#drawings.show(shown);
     this.#findings.show(this.#report);
     this.#whole?.show(this.#report);
     this.#speak(shown);
@@ -151,7 +186,7 @@ export class Page {
 
   #failed(message: string, serial: number): void {
     const text = serial === 0 ? `${words.engineStarts}: ${message}` : words.engineBroke(message);
-    this.#notices.show("engine", text);
+    this.#notices.show("engine", message === "stopped" ? words.stopped : text);
   }
 
   #busy(busy: boolean): void {
@@ -239,7 +274,8 @@ export class Page {
     this.#say(words.saved(name));
   }
 
-  #switch(): void {
+  async #switch(): Promise<void> {
+    const { WholeText } = await later();
     if (this.#whole) {
       this.#whole.element.remove();
       this.#whole = null;

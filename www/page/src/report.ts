@@ -52,6 +52,29 @@ export interface Governing {
   largest: Extreme | null;
   smallest: Extreme | null;
   groups: Group[];
+  sensitivity: Sensitivity[];
+  corners: Corner[];
+  others: { of: End; conditions: Condition[] }[];
+}
+
+/** Which extreme. */
+export type End = "largest" | "smallest";
+
+/** What the tolerance of one input does to a governing value. */
+export interface Sensitivity {
+  of: End;
+  symbol: string;
+  condition: Condition;
+  effect: number;
+  share: number;
+}
+
+/** What the worst corner of the tolerances comes to. */
+export interface Corner {
+  of: End;
+  value: number;
+  condition: Condition;
+  inputs: { symbol: string; condition: Condition; end: "+" | "-" }[];
 }
 
 export interface Worst {
@@ -73,6 +96,7 @@ export interface Requirement {
   without_value: number;
   worst: Worst | null;
   met_at_worst: boolean | null;
+  sensitivity: { symbol: string; condition: Condition; effect: number; share: number }[];
 }
 
 export interface FreeBody {
@@ -80,13 +104,19 @@ export interface FreeBody {
   line: number;
   closes: boolean | null;
   by_construction: boolean;
-  svg?: string | null;
+  worst: Condition | null;
 }
 
-export interface Figure {
+/** A figure or free body as it is drawn. */
+export interface Drawing {
   name: string;
   line: number;
-  svg?: string | null;
+  svg: string;
+}
+
+export interface Drawings {
+  figures: Drawing[];
+  freebodies: Drawing[];
 }
 
 export interface Edit {
@@ -152,7 +182,6 @@ export interface Report {
   governing: Governing[];
   requirements: Requirement[];
   freebodies: FreeBody[];
-  figures: Figure[];
   findings: Finding[];
   form: { rows: FormRow[] };
 }
@@ -163,6 +192,23 @@ export function digitsOf(report: Report): number {
   return Number.isInteger(digits) && digits >= 1 && digits <= 15 ? digits : 4;
 }
 
+/** The report out of its JSON, whose numbers came beside it. */
+export function unpacked(json: string, numbers: Float64Array): Report {
+  const report = JSON.parse(json) as Report & { columns: (number | null)[] };
+  let from = 0;
+  report.quantities.forEach((quantity, index) => {
+    const length = report.columns[index] ?? null;
+    if (length === null) return;
+    quantity.values = numbers.subarray(from, from + length);
+    from += length;
+  });
+  return report;
+}
+
+/** The label of `condition` along `axis`. Axes may be called like what every object answers to. */
+export function labelAt(condition: Condition, axis: string): string | undefined {
+  return Object.hasOwn(condition, axis) ? condition[axis] : undefined;
+}
 
 /** The entries for `symbol`. */
 export function findAll<T extends { symbol: string }>(entries: readonly T[], symbol: string): T[] {

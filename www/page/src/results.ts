@@ -1,6 +1,6 @@
 /** Rows that state a result: governing conditions, requirements, free bodies, figures. */
 import { cell, howCell, symbolCell, unitCell, valueColumns, type CellSpec } from "./cells.js";
-import { conditionText, type Shown } from "./conditions.js";
+import { conditionText, findingsAt, type Shown } from "./conditions.js";
 import { el, symbolText, type Child } from "./dom.js";
 import { count, shown as numberText } from "./numbers.js";
 import type { FormRow, Governing, Group, Requirement, Worst } from "./report.js";
@@ -105,8 +105,9 @@ function freeBodyCell(row: FormRow, shown: Shown): CellSpec {
 }
 
 function figureCell(row: FormRow, shown: Shown): CellSpec {
-  const found = shown.report.figures.find(({ line }) => line >= row.line && line < row.line + row.lines);
-  return wide(shown, found?.svg ? words.drawnBelow : "", () => [found?.svg ? words.drawnBelow : ""]);
+  const broken = findingsAt(shown, row.line, row.lines).some(({ finding }) => finding.severity === "error");
+  const text = broken ? "" : words.drawnBelow;
+  return wide(shown, text, () => [text]);
 }
 
 function wide(shown: Shown, key: string, content: () => Child[]): CellSpec {

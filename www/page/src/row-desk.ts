@@ -3,10 +3,11 @@ import type { Shown } from "./conditions.js";
 import type { Form, Place } from "./form.js";
 import { typed } from "./numbers.js";
 import type { Fix, FormRow } from "./report.js";
-import { RowEditor, type Next } from "./row-editor.js";
+import type { Next, RowEditor } from "./row-editor.js";
 import { nameOf } from "./rows.js";
 import { linesOf, normalised, type SheetText } from "./sheet-text.js";
 import { words } from "./strings.js";
+import { later, laterNow } from "./unpacking.js";
 
 export interface DeskEvents {
   /** The row at `line` was taken; its value and findings are to be spoken. */
@@ -103,7 +104,29 @@ export class RowDesk {
 
   #openAt(line: number, count: number, label: string, place: Place): void {
     this.close();
-    const editor: RowEditor = new RowEditor(this.#sheet, line, count, this.#form.columns, label, {
+    if (laterNow()) this.#edit(line, count, label, place);
+    else void this.#editLater(line, count, label, place);
+  }
+
+  /** The editor is still being unpacked: what is typed meanwhile is kept for it. */
+  async #editLater(line: number, count: number, label: string, place: Place): Promise<void> {
+    let typedAhead = "";
+    const hold = (event: KeyboardEvent) => {
+      if (event.ctrlKey || event.metaKey || event.key.length !== 1) return;
+      event.preventDefault();
+      typedAhead += event.key;
+    };
+    document.addEventListener("keydown", hold, true);
+    await later();
+    document.removeEventListener("keydown", hold, true);
+    this.#edit(line, count, label, place);
+    if (typedAhead) this.#editor?.type(typedAhead);
+  }
+
+  #edit(line: number, count: number, label: string, place: Place): void {
+    const made = laterNow();
+    if (!made) return;
+    const editor: RowEditor = new made.RowEditor(this.#sheet, line, count, this.#form.columns, label, {
       changed: (at, removed, inserted) => this.#form.shift(at, removed, inserted),
       taken: (next) => this.#taken(editor, next),
       givenBack: () => this.#closeAt(editor, editor.line),

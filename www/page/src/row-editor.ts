@@ -65,6 +65,11 @@ export class RowEditor {
     this.#view.dispatch({ selection: { anchor: cursorFor(this.#view.state.doc.toString(), place) }, scrollIntoView: true });
   }
 
+  /** Puts `text` in at the cursor, as if it were typed. */
+  type(text: string): void {
+    this.#view.dispatch(this.#view.state.replaceSelection(text));
+  }
+
   /** Shows the findings of the open lines, with their fixes. */
   show(shown: Shown): void {
     if (this.#closed) return;

@@ -90,6 +90,7 @@ export const words = {
   working: "Working it out.",
   engineBroke: (why: string) =>
     `The engine broke off on this text (${why}). The sheet is untouched; the values are those from before. Change a row, and it starts anew.`,
+  stopped: "Stopped. The values are those from before.",
   engineStarts: "The engine cannot start in this browser",
   notKept: "This browser keeps no draft of the sheet: its store is full or closed to this page. Save the sheet to a file.",
   otherWindow: "The same sheet is being changed in another window. What is written last is kept; save this one to a file of its own.",

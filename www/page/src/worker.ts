@@ -1,5 +1,5 @@
 /** The engine's thread: takes a text, gives its report, then its drawings, and answers what the page asks of it. */
-import { catalogue, Desk, difference, initSync, last_panic, print } from "../generated/engine.js";
+import { catalogue, Desk, difference, initSync, last_panic } from "../generated/engine.js";
 import type { Answers, FromWorker, Question, ToWorker } from "./engine.js";
 
 /** Drawings wait this long for the next key. */
@@ -91,7 +91,7 @@ function replied(at: Desk, question: Question): Answers[Question["kind"]] {
     case "hover":
       return JSON.parse(at.hover(question.text, question.line, question.column)) as Answers["hover"];
     case "print":
-      return question.text === undefined ? at.print() : print(question.text);
+      return at.print();
     case "catalogue":
       return JSON.parse(catalogue()) as Answers["catalogue"];
     case "difference":

@@ -1,0 +1,4 @@
+/** The parts of the page that nobody needs before the first values stand. */
+export { loadHighlighter } from "./editing.js";
+export { RowEditor } from "./row-editor.js";
+export { WholeText } from "./whole-text.js";
