@@ -4,8 +4,12 @@
 use crate::golden::{applied, cases, files};
 use crate::random::Random;
 use formulas::Sheet;
+use formulas::diagnostics::Severity;
 use formulas::lex::lex;
 use formulas::parse::parse;
+use formulas::report::{Quantity, Report};
+use formulas::syntax::Statement;
+use std::collections::BTreeSet;
 use std::path::Path;
 
 /// A promise of a stage for any text.
@@ -147,10 +151,56 @@ pub fn report(text: &str) -> Result<(), String> {
         return Err("a finding without a place".to_owned());
     }
     formulas::report::json::write(&report).map_err(|e| e.to_string())?;
+    if let Some(symbol) = without_reason(&sheet, &report) {
+        return Err(format!("{symbol} has no values, and nothing says why"));
+    }
     let print = sheet.print();
     let body = print.strip_prefix("<!DOCTYPE html>\n").unwrap_or(&print);
     crate::xml::well_formed(body).map_err(|e| format!("the print: {e}"))?;
     parser(text)
+}
+
+/// A quantity that could not be worked out, though nothing is wrong with its line nor with anything that it names.
+fn without_reason(sheet: &Sheet, report: &Report) -> Option<String> {
+    let wrong = |statement: &&Statement| {
+        let lines = statement.line..statement.line + statement.lines;
+        let mut errors = report
+            .findings
+            .iter()
+            .filter(|f| f.severity == Severity::Error);
+        errors.any(|f| lines.contains(&f.line))
+    };
+    let statements = &sheet.tree().statements;
+    let known = &sheet.values().quantities;
+    let quantities = report.quantities.iter().zip(known);
+    let failed: Vec<&Quantity> = quantities
+        .filter(|(_, v)| !v.known)
+        .map(|(q, _)| q)
+        .collect();
+    let words = |s: &Statement| -> BTreeSet<String> {
+        let text = sheet.text().get(s.start..s.start + s.length).unwrap_or("");
+        let words = text.split(|c: char| !c.is_alphanumeric() && !"_'".contains(c));
+        words.map(str::to_owned).collect()
+    };
+    let mut suspect: BTreeSet<String> = failed
+        .iter()
+        .filter_map(|q| Some(q.symbol.split('.').next()?.to_owned()))
+        .collect();
+    let broken: Vec<&Statement> = statements.iter().filter(wrong).collect();
+    suspect.extend(broken.iter().flat_map(|s| words(s)));
+    let whole = report
+        .findings
+        .iter()
+        .any(|f| f.code.ends_with("-limit") || f.code == "circle");
+    let excused = |q: &&&Quantity| {
+        let lines = |s: &&Statement| (s.line..s.line + s.lines).contains(&q.line);
+        statements.iter().find(lines).is_some_and(|s| {
+            let own = q.symbol.split('.').next().unwrap_or("");
+            wrong(&s) || words(s).iter().any(|w| w != own && suspect.contains(w))
+        })
+    };
+    let first = failed.iter().find(|q| !excused(q))?;
+    (!whole).then(|| first.symbol.clone())
 }
 
 /// A safe fix leaves a text that can be read, without the finding.

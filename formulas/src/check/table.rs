@@ -72,17 +72,21 @@ impl Checker<'_> {
 
     fn key_place(&mut self, table: &Table, row: &Row, at: usize, axis: AxisId) -> Option<usize> {
         let key = row.keys.get(at)?;
-        if self.program.axes[axis.0 as usize].values.is_none() {
+        let labelled = table.keys.get(at)?.unit.is_none();
+        // Under a key without bracket, a number is one in the unit of the axis declared before.
+        if labelled || self.program.axes[axis.0 as usize].values.is_none() {
             return self.place_of_label(axis, key);
         }
         let expr = row.key_values.get(at)?.as_ref()?;
         let name = table.keys.get(at)?.name.text.clone();
         let unit = table.keys.get(at)?.unit.clone();
         let bracket = self.bracket(unit.as_ref(), &name).ok()?;
-        let mut problems = std::mem::take(&mut self.problems);
+        let told = self.problems.len();
         let typed = self.value_under(expr, bracket.as_ref());
-        // The same expression was read when the axis was declared; what was wrong with it is told already.
-        std::mem::swap(&mut self.problems, &mut problems);
+        if self.program.axes[axis.0 as usize].statement == self.statement {
+            // The same expression was read when the axis was declared; what was wrong with it is told already.
+            self.problems.truncate(told);
+        }
         let value = typed.and_then(|t| self.constant_of(t.node))?;
         let values = self.program.axes[axis.0 as usize].values.as_ref()?;
         let found = values
