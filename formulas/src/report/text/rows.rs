@@ -6,29 +6,42 @@ use crate::report::form::{FormHead, FormTable, RowKind};
 use crate::report::{Form, FormRow, Quantity, Report};
 
 /// Widths of the columns: item, symbol, unit, how obtained, value, remark; with the blanks between they fill a line.
-const WIDTHS: [usize; 6] = [4, 14, 12, 42, 12, 31];
+type Widths = [usize; 6];
+
+/// The widths where no symbol is long; a longer one takes from how it was obtained, up to this many.
+const WIDTHS: Widths = [4, 14, 12, 42, 12, 31];
+const SYMBOL_MOST: usize = 30;
+
+fn widths(report: &Report) -> Widths {
+    let [item, least, unit, how, value, remark] = WIDTHS;
+    let symbols = report.quantities.iter().map(|q| q.symbol.chars().count());
+    let symbol = symbols.max().unwrap_or(0).clamp(least, SYMBOL_MOST);
+    [item, symbol, unit, how + least - symbol, value, remark]
+}
+
 const HEADS: [&str; 6] = ["item", "symbol", "unit", "how obtained", "value", "remark"];
 
 pub(super) fn write(page: &mut Page, report: &Report, form: &Form) {
+    let widths = &widths(report);
     page.blank();
-    cells(page, HEADS);
+    cells(page, widths, HEADS);
     page.rule("=");
     for row in &form.rows {
-        write_row(page, report, row);
+        write_row(page, widths, report, row);
     }
     page.rule("-");
 }
 
-fn cells(page: &mut Page, texts: [&str; 6]) {
+fn cells(page: &mut Page, widths: &Widths, texts: [&str; 6]) {
     let mut cells: Vec<Cell> = Vec::new();
-    for (i, (text, width)) in texts.iter().zip(WIDTHS).enumerate() {
+    for (i, (text, width)) in texts.iter().zip(*widths).enumerate() {
         let right = i == 0 || i == 4;
         cells.push(Cell { text, width, right });
     }
     page.cells(&cells);
 }
 
-fn write_row(page: &mut Page, report: &Report, row: &FormRow) {
+fn write_row(page: &mut Page, widths: &Widths, report: &Report, row: &FormRow) {
     match row.kind {
         RowKind::Title | RowKind::Aside | RowKind::Blank => {}
         RowKind::Part => {
@@ -40,11 +53,11 @@ fn write_row(page: &mut Page, report: &Report, row: &FormRow) {
         RowKind::Note | RowKind::Prose => {
             page.paragraph("     ", &with_marks(Some(&row.how), &marks(report, row)));
         }
-        _ => statement(page, report, row),
+        _ => statement(page, widths, report, row),
     }
 }
 
-fn statement(page: &mut Page, report: &Report, row: &FormRow) {
+fn statement(page: &mut Page, widths: &Widths, report: &Report, row: &FormRow) {
     let quantities = own_quantities(report, row);
     let only = match quantities.as_slice() {
         [only] if row.table.is_none() => Some(*only),
@@ -57,6 +70,7 @@ fn statement(page: &mut Page, report: &Report, row: &FormRow) {
     let item = row.item.map_or_else(String::new, |item| item.to_string());
     cells(
         page,
+        widths,
         [
             &item,
             row.symbol.as_deref().unwrap_or(""),
@@ -71,15 +85,17 @@ fn statement(page: &mut Page, report: &Report, row: &FormRow) {
     } else if let Some(quantity) = only {
         values::block(page, report, quantity);
     } else {
-        quantities.iter().for_each(|q| member(page, report, q));
+        quantities
+            .iter()
+            .for_each(|q| member(page, widths, report, q));
     }
 }
 
 /// One of several quantities that a row gives: a field of a record, one of several unknowns.
-fn member(page: &mut Page, report: &Report, quantity: &Quantity) {
+fn member(page: &mut Page, widths: &Widths, report: &Report, quantity: &Quantity) {
     let unit = quantity.unit.as_deref().unwrap_or("");
     let value = values::single(report, quantity).unwrap_or_default();
-    cells(page, ["", &quantity.symbol, unit, "", &value, ""]);
+    cells(page, widths, ["", &quantity.symbol, unit, "", &value, ""]);
     values::block(page, report, quantity);
 }
 
