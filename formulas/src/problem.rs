@@ -441,6 +441,13 @@ pub enum Fault {
     AxisSteps {
         axis: String,
     },
+    /// Steps that pass over the end of the axis; the span is the step.
+    AxisEndLeftOut {
+        axis: String,
+        /// The last point, and the end that is left out, as shown.
+        last: String,
+        end: String,
+    },
     AxisPointTwice {
         axis: String,
         value: String,

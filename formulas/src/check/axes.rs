@@ -116,6 +116,7 @@ impl Checker<'_> {
                 let (a, b) = (unit.unit.from_si(a?), unit.unit.from_si(b?));
                 let d = step_bracket.map_or(d?, |s| s.unit.unit.from_si(d.unwrap_or(0.0)));
                 let count = self.steps(name, step.span, a, b, d)?;
+                self.advise_end(name, step.span, (a + count as f64 * d, b, d), &unit);
                 let values = (0..=count)
                     .map(|i| unit.unit.to_si(a + i as f64 * d))
                     .collect();
@@ -148,6 +149,27 @@ impl Checker<'_> {
                 ))
             }
         }
+    }
+
+    /// Advice where the last point is not the end that is written.
+    fn advise_end(
+        &mut self,
+        axis: &str,
+        span: Span,
+        (last, b, d): (f64, f64, f64),
+        unit: &ShownUnit,
+    ) {
+        if (b - last).abs() <= 1e-9 * d.abs().max(b.abs()) {
+            return;
+        }
+        let text = (!unit.text.is_empty()).then_some(&*unit.text);
+        let shown = crate::numbers::labels(&[last, b], self.program.digits, text);
+        let [last, end] = shown.as_slice() else {
+            return;
+        };
+        let (last, end) = (last.clone(), end.clone());
+        let axis = axis.to_string();
+        self.report(span, Fault::AxisEndLeftOut { axis, last, end });
     }
 
     pub(super) fn within_labels(&mut self, axis: &str, span: Span, found: f64) -> Option<()> {

@@ -8,6 +8,7 @@ mod argument_range;
 mod argument_speed_kind;
 mod argument_twice;
 mod axis_empty;
+mod axis_end_left_out;
 mod axis_limit;
 mod axis_not_varied;
 mod axis_numbers;
@@ -189,6 +190,7 @@ pub const CODES: &[&Code] = &[
     &two_axes::ROW,
     &axis_order::ROW,
     &axis_numbers::ROW,
+    &axis_end_left_out::ROW,
     &axis_steps::ROW,
     &axis_point_twice::ROW,
     &axis_empty::ROW,
@@ -318,6 +320,7 @@ told_by! {
     TwoAxes { axes } => two_axes::draft(site, axes),
     AxisOrder { axis } => axis_order::draft(axis),
     AxisNumbers { axis } => axis_numbers::draft(site, axis),
+    AxisEndLeftOut { axis, last, end } => axis_end_left_out::draft(site, axis, last, end),
     AxisSteps { axis } => axis_steps::draft(site, axis),
     AxisPointTwice { axis, value } => axis_point_twice::draft(axis, value),
     AxisEmpty { axis } => axis_empty::draft(axis),
