@@ -1,4 +1,5 @@
 /** The computation form: a ruled table that is patched in place after each evaluation. */
+import { askedIn, askedOf, type Asked } from "./asking.js";
 import type { CellSpec } from "./cells.js";
 import { el, fill } from "./dom.js";
 import { drawHead } from "./head.js";
@@ -15,6 +16,8 @@ export interface FormEvents {
   open(row: FormRow | null, place: Place): void;
   /** A key went down on a closed row. */
   key(event: KeyboardEvent): void;
+  /** A value was chosen, to see how it came about. */
+  trail(asked: Asked): void;
 }
 
 /** A drawn statement. */
@@ -45,6 +48,7 @@ export class Form {
   #current = 0;
   #anchor = 0;
   #width = 0;
+  #shown: Shown | null = null;
 
   constructor(events: FormEvents) {
     const add = el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": words.newRow }, "+");
@@ -81,6 +85,7 @@ export class Form {
   /** Draws `rows` under the conditions shown. Only what differs is touched; an open editor stays where it is. */
   show(rows: readonly FormRow[], shown: Shown): void {
     const focused = document.activeElement !== null && document.activeElement === this.#button(this.#current);
+    this.#shown = shown;
     drawHead(this.#head, this.#columns, shown);
     this.#widen(shown.across?.labels.length ?? 1);
     this.#views = aligned(this.#views, rows);
@@ -143,6 +148,20 @@ export class Form {
   get chosenRows(): HTMLTableRowElement[] {
     const { from, to } = this.chosen;
     return this.#views.slice(from, to + 1).flatMap(({ body }) => Array.from(body.rows));
+  }
+
+  /** The first value of the row that the keyboard is at. */
+  get askedNow(): Asked | null {
+    const view = this.#views[this.#current];
+    return view && this.#shown ? askedOf(view.row, 0, this.#shown) : null;
+  }
+
+  #askedAt(position: number, target: Element): Asked | null {
+    const view = this.#views[position];
+    const cell = target.closest("table.form > tbody > tr > *");
+    if (!view || !cell || !this.#shown) return null;
+    const index = Array.from(view.body.rows).indexOf(cell.parentElement as HTMLTableRowElement);
+    return askedIn(cell, view.row, index, this.#shown);
   }
 
   /** The paper has to be as wide as its form, which the form's style alone could not tell it. */
@@ -225,7 +244,9 @@ export class Form {
       return;
     }
     this.#current = this.#anchor = position;
-    events.open(this.#views[position]?.row ?? null, placeOf(target));
+    const asked = this.#askedAt(position, target);
+    if (asked) events.trail(asked);
+    else events.open(this.#views[position]?.row ?? null, placeOf(target));
   }
 }
 

@@ -2,3 +2,4 @@
 export { loadHighlighter } from "./editing.js";
 export { RowEditor } from "./row-editor.js";
 export { WholeText } from "./whole-text.js";
+export { Lookup } from "./lookup.js";

@@ -7,6 +7,7 @@ export interface Acts {
   open(): void;
   save(): void;
   sheetText(): void;
+  catalogue(): void;
   print(): void;
   /** Begins with a starting sheet. */
   start(name: string): void;
@@ -36,9 +37,10 @@ export function frame(acts: Acts, parts: Parts, starting: [name: string, title: 
   const button = (text: string, act: () => void) => el("button", { type: "button", onclick: act }, text);
   const sheetText = button(words.sheetText, () => acts.sheetText());
   const working = el("span", { class: "working", role: "status", hidden: true }, words.working, " ", button(words.stop, () => acts.stop()));
+  const catalogue = el("button", { type: "button", class: "beside", onclick: () => acts.catalogue() }, words.catalogue);
   const controls = el("nav", { class: "controls", "aria-label": "Sheet" },
     button(words.newSheet, () => acts.newSheet()), chooser(starting, acts), button(words.open, () => acts.open()), button(words.save, () => acts.save()),
-    sheetText, button(words.print, () => acts.print()));
+    sheetText, catalogue, button(words.print, () => acts.print()));
   const masthead = el("header", { class: "masthead" }, el("h1", {}, words.program), working, controls);
   const formPlace = el("div", { class: "form-place" }, parts.selectors, parts.form, keyList());
   const element = el("div", { class: "paper" }, masthead, parts.notices,

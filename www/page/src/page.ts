@@ -1,4 +1,6 @@
 /** The page: its parts, and how a change of the sheet goes through them. */
+import type { Asked } from "./asking.js";
+import type { Assistance } from "./assisting.js";
 import { shownBy, type Choice, type Shown } from "./conditions.js";
 import { el, setText } from "./dom.js";
 import { Drawings } from "./drawings.js";
@@ -18,6 +20,7 @@ import { spoken } from "./speech.js";
 import { newId, Store, type Draft } from "./store.js";
 import { words } from "./strings.js";
 import { TitleBlock } from "./title-block.js";
+import type { Lookup } from "./lookup.js";
 import { later, prepareLater, unpack } from "./unpacking.js";
 import type { WholeText } from "./whole-text.js";
 
@@ -58,6 +61,7 @@ export class Page {
   #governing = new GoverningConditions();
   #drawings = new Drawings();
   #whole: WholeText | null = null;
+  #lookup: Lookup | null = null;
   #prepared = false;
 
   /** Starts with the last draft, or with the sheet in the file where there is none. */
@@ -77,11 +81,13 @@ export class Page {
     this.#changed();
     this.#titleBlock = new TitleBlock(this.#sheet);
     this.#selectors = new Selectors(this.#choice, (choice) => this.#choose(choice));
-    this.#form = new Form({ open: (row, place) => this.#desk.open(row, place), key: (event) => this.#desk.key(event) });
+    this.#form = new Form({ open: (row, place) => this.#desk.open(row, place), key: (event) => this.#desk.key(event), trail: (asked) => void this.#trail(asked) });
     this.#desk = new RowDesk(this.#form, this.#sheet, {
       taken: (line) => this.#speakNext(line),
       fix: (fix) => this.#fix(fix),
       say: (text) => this.#say(text),
+      trail: () => void this.#trail(this.#form.askedNow),
+      assistance: this.#assistance(),
     });
     this.#findings = new Findings({ fix: (fix) => this.#fix(fix), goTo: (line) => this.#goTo(line) });
     this.#controls = this.#layOut();
@@ -95,6 +101,7 @@ export class Page {
       open: () => field.click(),
       save: () => void this.#save(),
       sheetText: () => void this.#switch(),
+      catalogue: () => void this.#lookUp().then((lookup) => lookup.catalogue()),
       print: () => window.print(),
       start: (name) => void this.#start(name),
       stop: () => this.#engine.stop(),
@@ -176,6 +183,7 @@ export class Page {
     this.#governing.show(shown);
     this.#findings.show(this.#report);
     this.#whole?.show(this.#report);
+    this.#lookup?.refresh();
     this.#speak(shown);
   }
 
@@ -213,6 +221,32 @@ export class Page {
     else this.#desk.openLine(line);
   }
 
+  /** What the editors ask of the engine, about the text as it is now. */
+  #assistance(): Assistance {
+    const at = (line: number, column: number) => ({ text: this.#sheet.text, line, column });
+    return {
+      complete: (line, column) => this.#engine.ask({ kind: "complete", ...at(line, column) }),
+      hover: (line, column) => this.#engine.ask({ kind: "hover", ...at(line, column) }),
+      findings: (line) => this.#report?.findings.filter((each) => each.line === line) ?? [],
+      fix: (fix) => this.#fix(fix),
+    };
+  }
+
+  async #lookUp(): Promise<Lookup> {
+    const { Lookup } = await later();
+    this.#lookup ??= new Lookup({
+      engine: this.#engine,
+      goTo: (line) => this.#goTo(line),
+      insert: (text) => (this.#whole ? this.#whole.type(text) : this.#desk.insert(text)),
+      closed: () => this.#form.choose(this.#form.current),
+    });
+    return this.#lookup;
+  }
+
+  async #trail(asked: Asked | null): Promise<void> {
+    if (asked) (await this.#lookUp()).trail(asked);
+  }
+
   #speakNext(line: number): void {
     this.#spokenLine = line;
     if (this.#report && document.documentElement.dataset["ready"] === String(this.#serial)) this.#speak(shownBy(this.#report, this.#choice));
@@ -233,6 +267,7 @@ export class Page {
   #begin(draft: Draft): void {
     const before = this.#draft;
     this.#desk.close();
+    this.#lookup?.close();
     this.#store.flush();
     this.#draft = draft;
     this.#saved = draft.text;
@@ -281,7 +316,7 @@ export class Page {
       this.#whole = null;
     } else {
       this.#desk.close();
-      this.#whole = new WholeText(this.#sheet);
+      this.#whole = new WholeText(this.#sheet, this.#assistance());
       this.#controls.formPlace.before(this.#whole.element);
       if (this.#report) this.#whole.show(this.#report);
     }

@@ -1,4 +1,5 @@
 /** Working on rows: opening and taking them, adding, moving, deleting, cutting and pasting, by key and by click. */
+import type { Assistance } from "./assisting.js";
 import type { Shown } from "./conditions.js";
 import type { Form, Place } from "./form.js";
 import { typed } from "./numbers.js";
@@ -14,6 +15,9 @@ export interface DeskEvents {
   taken(line: number): void;
   fix(fix: Fix): void;
   say(text: string): void;
+  /** The trail of the value in the row that the keyboard is at. */
+  trail(): void;
+  assistance: Assistance;
 }
 
 export class RowDesk {
@@ -92,6 +96,16 @@ export class RowDesk {
     this.#form.choose(from);
   }
 
+  /** Puts `text` in at the cursor of the open row; where none is open, of a fresh one beneath the chosen rows. */
+  insert(text: string): void {
+    if (!this.#editor) {
+      const { line, count } = this.#chosenLines();
+      this.openFresh(line + count);
+    }
+    this.#editor?.type(text);
+    this.#editor?.refocus();
+  }
+
   /** Puts the lines of `text` behind the chosen rows. */
   paste(text: string): void {
     const lines = linesOf(normalised(text));
@@ -131,6 +145,7 @@ export class RowDesk {
       taken: (next) => this.#taken(editor, next),
       givenBack: () => this.#closeAt(editor, editor.line),
       fix: (fix) => this.#events.fix(fix),
+      assistance: this.#events.assistance,
       undoBefore: () => {
         this.#closeAt(editor, editor.line);
         this.undo();
@@ -188,6 +203,7 @@ export class RowDesk {
       case "Enter": return () => this.open(row, "how");
       case "Insert": return () => this.openFresh(row?.line ?? this.#sheet.lines.length + 1);
       case "Ctrl Enter": return () => this.openFresh(row ? row.line + row.lines : this.#sheet.lines.length + 1);
+      case "t": return () => this.#events.trail();
       case "Delete": return () => this.remove();
       case "Alt ArrowUp": return () => this.#move(-1);
       case "Alt ArrowDown": return () => this.#move(1);

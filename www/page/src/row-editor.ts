@@ -2,6 +2,7 @@
 import { standardKeymap } from "@codemirror/commands";
 import { EditorState, type Extension } from "@codemirror/state";
 import { EditorView, keymap, type KeyBinding } from "@codemirror/view";
+import { assisting, type Assistance } from "./assisting.js";
 import { findingsAt, type Shown } from "./conditions.js";
 import { el, fill } from "./dom.js";
 import { foundation, underline } from "./editing.js";
@@ -20,6 +21,7 @@ export interface EditorEvents {
   taken(next: Next): void;
   givenBack(): void;
   fix(fix: Fix): void;
+  assistance: Assistance;
   /** Undo reached what lies before this row was opened. */
   undoBefore(): void;
 }
@@ -65,6 +67,11 @@ export class RowEditor {
     this.#view.dispatch({ selection: { anchor: cursorFor(this.#view.state.doc.toString(), place) }, scrollIntoView: true });
   }
 
+  /** Gives the keyboard back to the row. */
+  refocus(): void {
+    this.#view.focus();
+  }
+
   /** Puts `text` in at the cursor, as if it were typed. */
   type(text: string): void {
     this.#view.dispatch(this.#view.state.replaceSelection(text));
@@ -107,6 +114,7 @@ export class RowEditor {
 
   #extensions(label: string): Extension[] {
     return [
+      assisting(this.#events.assistance, () => this.line),
       keymap.of([...this.#keys(), ...standardKeymap]),
       EditorState.allowMultipleSelections.of(false),
       foundation(label),
@@ -185,7 +193,9 @@ export class RowEditor {
 
   #left(event: FocusEvent): void {
     const to = event.relatedTarget;
-    if (this.#closed || !(to instanceof Node) || this.body.contains(to)) return;
+    // What is looked up on the slip beside the form goes into the row that is still open.
+    const beside = to instanceof Element && to.closest(".slip, .beside") !== null;
+    if (this.#closed || !(to instanceof Node) || this.body.contains(to) || beside) return;
     this.#events.taken("stay");
   }
 }

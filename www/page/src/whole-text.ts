@@ -1,6 +1,7 @@
 /** The whole sheet as plain text, for those who prefer to type it through. */
 import { standardKeymap } from "@codemirror/commands";
 import { EditorView, keymap } from "@codemirror/view";
+import { assisting, type Assistance } from "./assisting.js";
 import { el } from "./dom.js";
 import { foundation, underline } from "./editing.js";
 import type { Report } from "./report.js";
@@ -13,7 +14,7 @@ export class WholeText {
   #sheet: SheetText;
   #following = false;
 
-  constructor(sheet: SheetText) {
+  constructor(sheet: SheetText, assistance: Assistance) {
     this.#sheet = sheet;
     const keys = [
       { key: "Mod-z", run: () => this.#step(() => sheet.undo()), preventDefault: true },
@@ -24,6 +25,7 @@ export class WholeText {
       doc: sheet.text,
       parent: this.element,
       extensions: [
+        assisting(assistance, () => 1),
         keymap.of([...keys, ...standardKeymap]),
         foundation(words.sheetText),
         EditorView.updateListener.of((update) => {
@@ -45,6 +47,12 @@ export class WholeText {
   /** Underlines the findings. */
   show(report: Report): void {
     underline(this.#view, report.findings, 1);
+  }
+
+  /** Puts `text` in at the cursor. */
+  type(text: string): void {
+    this.#view.dispatch(this.#view.state.replaceSelection(text));
+    this.#view.focus();
   }
 
   /** Puts the cursor at the beginning of `line`. */
