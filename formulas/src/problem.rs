@@ -502,6 +502,17 @@ pub enum Fault {
         text: String,
         conditions: Conditions,
     },
+    /// Arguments that a method takes but that are suspect: `text` says what of them, and with which numbers.
+    ReferenceTrap {
+        function: String,
+        text: String,
+        conditions: Conditions,
+    },
+    /// Downwash by both functions for it in one sheet; `function` is the later one, `other` the one called before.
+    DownwashTwice {
+        function: String,
+        other: String,
+    },
     /// `basis` is the line that names other rules than those, where there is one.
     RulesMixed {
         rules: Vec<String>,

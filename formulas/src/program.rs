@@ -1,7 +1,7 @@
 //! The checked program: every line with its axes, dimension and unit settled. Made by `check`, only read afterwards.
 
 use crate::axes::{AxisId, AxisSet};
-use crate::catalogue::Entry;
+use crate::catalogue::{Entry, Validity};
 use crate::span::Span;
 use crate::syntax::BinaryOp;
 use engine::quantity::{Dimension, SpeedKind, Unit};
@@ -452,7 +452,11 @@ pub struct Guard {
     pub span: Span,
     /// The function.
     pub entry: &'static Entry,
-    /// Its arguments, with the units in which they are shown.
+    /// What is asked of them.
+    pub validity: Validity,
+    /// Whether it is a suspicion rather than the range of the method.
+    pub trap: bool,
+    /// Its arguments, with the units in which they are shown; of a whole line one of its values.
     pub arguments: Vec<Option<(NodeId, Option<ShownUnit>)>>,
     /// The axes of all of them.
     pub axes: AxisSet,

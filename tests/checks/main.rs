@@ -10,6 +10,7 @@ use formulas::diagnostics::Severity;
 use formulas::report::{Report, ValueList};
 use rows::Row;
 use std::collections::{BTreeMap, BTreeSet};
+use std::sync::OnceLock;
 
 /// The text of a sheet beside this file, with its name.
 macro_rules! sheet {
@@ -45,12 +46,15 @@ const SHEETS: [(&str, &str); 20] = [
     sheet!("wings"),
 ];
 
-/// The reports of all sheets.
-fn reports() -> BTreeMap<&'static str, Report> {
-    SHEETS
-        .iter()
-        .map(|(name, text)| (*name, Sheet::open(text).report(&[])))
-        .collect()
+/// The reports of all sheets, worked out once.
+fn reports() -> &'static BTreeMap<&'static str, Report> {
+    static REPORTS: OnceLock<BTreeMap<&str, Report>> = OnceLock::new();
+    REPORTS.get_or_init(|| {
+        SHEETS
+            .iter()
+            .map(|(name, text)| (*name, Sheet::open(text).report(&[])))
+            .collect()
+    })
 }
 
 /// What a row gives in its report, in the unit of the row; a sentence where it gives nothing.
@@ -106,7 +110,7 @@ fn published_values_come_out_of_sheets() {
         "row", "quantity", "expected", "obtained", "difference", "tolerance"
     );
     for row in rows::all().iter().filter(|row| row.place.is_some()) {
-        let value = match obtained(row, &reports) {
+        let value = match obtained(row, reports) {
             Ok(value) => value,
             Err(why) => {
                 wrong.push(format!("{}: {why}", row.id));

@@ -5,7 +5,7 @@
 //! f64`, a default in SI behind a `=`, a whole line of values as `[Length]`, a record as its fields in braces. A mark with
 //! an `@` before an argument or a result says what its type cannot: `@lift_slope slope: PerAngle`, `-> @percent f64`.
 
-use super::row::{Entry, Field, Gives, Line, Parameter, Validity, Wants};
+use super::row::{Entry, Extreme, Field, Gives, Line, Parameter, Validity, Wants};
 use crate::values::is_excluded;
 use engine::quantity::{Dimension, Typed};
 
@@ -191,7 +191,45 @@ pub(super) fn numbers<T: Typed>(line: Vec<T>) -> Vec<f64> {
 /// The row with the range where its method holds.
 pub(super) const fn within(holds: fn(&[f64]) -> bool, advice: &'static str, entry: Entry) -> Entry {
     Entry {
-        validity: Some(Validity { holds, advice }),
+        validity: Some(Validity {
+            holds,
+            advice,
+            lines: &[],
+        }),
+        ..entry
+    }
+}
+
+/// A function of whole lines with the range in which it holds, by one value of each line that is listed.
+pub(super) const fn within_lines(
+    lines: &'static [(usize, Extreme)],
+    holds: fn(&[f64]) -> bool,
+    advice: &'static str,
+    entry: Entry,
+) -> Entry {
+    Entry {
+        validity: Some(Validity {
+            holds,
+            advice,
+            lines,
+        }),
+        ..entry
+    }
+}
+
+/// A function whose arguments are suspect where `sound` is false, though its method holds.
+pub(super) const fn trap(
+    lines: &'static [(usize, Extreme)],
+    sound: fn(&[f64]) -> bool,
+    advice: &'static str,
+    entry: Entry,
+) -> Entry {
+    Entry {
+        trap: Some(Validity {
+            holds: sound,
+            advice,
+            lines,
+        }),
         ..entry
     }
 }
@@ -268,6 +306,7 @@ macro_rules! entry {
             compute: $compute,
             makes: None,
             validity: None,
+            trap: None,
             what: $what,
             method: $method,
             holds: $holds,

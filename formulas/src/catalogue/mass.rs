@@ -1,7 +1,7 @@
 //! Geometry and mass.
 
-use super::macros::{Argument, each, points, positive, within};
-use super::row::{Compute, Entry, Parameter};
+use super::macros::{Argument, at, each, points, positive, within, within_lines};
+use super::row::{Compute, Entry, Extreme, Parameter};
 use engine::quantity::{Angle, Area, Force, Length, Mass, MomentOfInertia, Torque, Typed};
 
 const GROUP: &str = "Geometry and mass";
@@ -11,7 +11,11 @@ const LEFT_OUT: &str =
     "An item with an excluded value is left out; the total weight is not to be 0.";
 
 pub(super) static ROWS: &[Entry] = &[
-    points!(GROUP, planform::planform(y: [Length], chord: [Length], x_le: [Length]) -> {
+    within_lines(
+        &[(0, Extreme::Least)],
+        |given| at(given, 0) == 0.0,
+        "the method holds for a first station in the plane of symmetry, y = 0: the part inside of it is not counted",
+        points!(GROUP, planform::planform(y: [Length], chord: [Length], x_le: [Length]) -> {
             area: Area = "area of both halves",
             span: Length = "from tip to tip",
             aspect_ratio: f64 = "span squared over area",
@@ -34,6 +38,7 @@ pub(super) static ROWS: &[Entry] = &[
          end\n\
          wing = planform(y, c, x over station)\n\
          S [ft^2] = wing.area\n"),
+    ),
     within(
         |given| positive(given, [2, 3]),
         "the method holds for a wing area above 0 m^2 and a mean aerodynamic chord above 0 m",

@@ -16,7 +16,9 @@ mod structure;
 mod tail;
 mod wing;
 
-pub use row::{Compute, Entry, Field, Gives, Line, Makes, Parameter, Prepared, Validity, Wants};
+pub use row::{
+    Compute, Entry, Extreme, Field, Gives, Line, Makes, Parameter, Prepared, Validity, Wants,
+};
 use rustc_hash::FxHashMap;
 use std::sync::OnceLock;
 

@@ -1,6 +1,6 @@
 //! Moment book-keeping: coefficients and moments from one point and reference to another.
 
-use super::macros::{Argument, at, each, points, positive, within};
+use super::macros::{Argument, at, each, points, positive, trap, within};
 use super::row::{Compute, Entry, Parameter};
 use engine::moment::CN_ZERO;
 use engine::quantity::{Angle, Area, Force, Length, Pressure, Torque, Typed};
@@ -10,19 +10,26 @@ const RESOLVED: &str = "resolution of the force, as in E. L. Houghton and P. W. 
                         Students";
 const REFERENCE: &str = "the method holds for a dynamic pressure not below 0 Pa, a reference area above 0 m^2 and a \
                          reference chord above 0 m";
+/// The least magnitude of Cm0 that CS 22.331 lets a sailplane be balanced with.
+const LEAST_MOMENT: f64 = 0.025;
 const CHORD: &str = "the method holds for a reference chord above 0 m";
 
 pub(super) static ROWS: &[Entry] = &[
-    within(
-        |given| at(given, 1) >= 0.0 && positive(given, [2, 3]),
-        REFERENCE,
-        each!(GROUP, moment::pitching_moment(Cm: f64, q: Pressure, S: Area, c: Length) -> Torque;
+    trap(
+        &[],
+        |given| at(given, 0).abs() >= LEAST_MOMENT,
+        "a moment coefficient next to 0; that of the airplane less tail is taken as at least 0.025 in magnitude (CS 22.331)",
+        within(
+            |given| at(given, 1) >= 0.0 && positive(given, [2, 3]),
+            REFERENCE,
+            each!(GROUP, moment::pitching_moment(Cm: f64, q: Pressure, S: Area, c: Length) -> Torque;
             "Pitching moment of a coefficient, nose up positive.",
             "Cm q S c, about the point that the coefficient is about.",
             "Everywhere, as a definition.",
             "definition",
             "q = dynamic_pressure_of_eas(90 KEAS)\n\
              M [ft.lb] = pitching_moment(-0.062, q, 142 ft^2, 4.6 ft)\n"),
+        ),
     ),
     within(
         |given| at(given, 1) >= 0.0 && positive(given, [2, 3]),

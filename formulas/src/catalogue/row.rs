@@ -18,6 +18,8 @@ pub struct Entry {
     pub makes: Option<Makes>,
     /// Where the method holds, if that can be told from the arguments.
     pub validity: Option<Validity>,
+    /// What its arguments make suspect where it holds, if that can be told from them.
+    pub trap: Option<Validity>,
     /// What it computes, in a sentence.
     pub what: &'static str,
     /// The method, with signs.
@@ -167,11 +169,22 @@ pub struct Prepared {
 }
 
 /// Where a method holds.
-#[derive(Clone, Copy)]
+#[derive(Clone, Copy, Debug)]
 pub struct Validity {
     /// Whether the arguments (in SI, defaults filled in) lie where the method holds. An optional argument that is not
     /// given is a NaN; required ones that are missing are not asked about.
     pub holds: fn(&[f64]) -> bool,
     /// The advice where they do not: a sentence without its full stop that names the range with units.
     pub advice: &'static str,
+    /// Of an argument that is a whole line, by its index, the value that is looked at; lines that are not listed are a NaN.
+    pub lines: &'static [(usize, Extreme)],
+}
+
+/// One of a line's values.
+#[derive(Clone, Copy, PartialEq, Eq, Debug)]
+pub enum Extreme {
+    /// The smallest.
+    Least,
+    /// The largest.
+    Most,
 }

@@ -2,9 +2,9 @@
 
 use super::macros::{
     Argument, along, at, each, entry, field, field_of, line, made, numbers, of_first, one,
-    parameter, put_along, within,
+    parameter, put_along, within, within_lines,
 };
-use super::row::{Compute, Entry, Field, Makes, Parameter, Prepared, Wants};
+use super::row::{Compute, Entry, Extreme, Field, Makes, Parameter, Prepared, Wants};
 use crate::missing::lost;
 use crate::problem::Cause;
 use engine::quantity::{Angle, PerAngle, Typed};
@@ -83,7 +83,11 @@ pub(super) static ROWS: &[Entry] = &[
         GLAUERT,
         "s = thin_section(\"2412\")\n\
          cm = s.cm_quarter\n"),
-    entry!(GROUP, thin_section_of,
+    within_lines(
+        &[(0, Extreme::Most), (1, Extreme::Most)],
+        |given| at(given, 1) <= 0.12 * at(given, 0),
+        "the method holds for small camber, up to about a tenth of the chord",
+        entry!(GROUP, thin_section_of,
         &[coordinate("x"), coordinate("z")],
         &THIN_FIELDS,
         Compute::Lines(|given, _, out| {
@@ -101,6 +105,7 @@ pub(super) static ROWS: &[Entry] = &[
          3 | 1 | 0\n\
          end\n\
          s = thin_section_of(x, z over point)\n"),
+    ),
     Entry {
         makes: Some(Makes::Count(1)),
         ..entry!(GROUP, section_points,
@@ -125,7 +130,10 @@ pub(super) static ROWS: &[Entry] = &[
             "s = section_points(\"2412\", 81)\n\
              top = max(s.z)\n")
     },
-    entry!(GROUP, section_flow,
+    within(
+        |given| at(given, 2).abs() <= 0.262,
+        "the method holds for attached flow, angles of attack up to about 15 degrees",
+        entry!(GROUP, section_flow,
         &[coordinate("x"), coordinate("z"), parameter!(alpha: Angle)],
         &[
             field!("cl", f64, "lift coefficient"),
@@ -164,6 +172,7 @@ pub(super) static ROWS: &[Entry] = &[
         "s = section_points(\"2412\", 101)\n\
          f = section_flow(s.x, s.z, 4 deg over s)\n\
          cl = f.cl\n"),
+    ),
     within(
         |given| (0.02..=0.6).contains(&at(given, 0)) && at(given, 1) < 1.0,
         "holds for a flap chord from 2 to 60 % and reads 15 to 30 % high at real gaps and angles, which a section factor below \

@@ -63,7 +63,12 @@ fn every_row_says_what_it_does_and_where_from() {
         }
         let advice = row.validity.map_or("holds", |v| v.advice);
         assert!(advice.contains("hold") || advice.contains("coded"));
-        assert!(!advice.ends_with('.'), "{advice}");
+        for validity in row.validity.iter().chain(&row.trap) {
+            assert!(!validity.advice.ends_with('.'), "{}", validity.advice);
+            for (at, _) in validity.lines {
+                assert!(row.parameters[*at].line, "{} takes no line there", row.name);
+            }
+        }
     }
 }
 

@@ -2,9 +2,9 @@
 
 use super::macros::{
     Argument, along, at, each, entry, field, line, made, numbers, one, parameter, points, positive,
-    put_along, within,
+    put_along, trap, within, within_lines,
 };
-use super::row::{Compute, Entry, Field, Line, Makes, Parameter, Prepared, Wants};
+use super::row::{Compute, Entry, Extreme, Field, Line, Makes, Parameter, Prepared, Wants};
 use engine::body;
 use engine::quantity::{Angle, Area, Force, ForcePerLength, Length, PerAngle, Typed};
 use engine::wing::{self, LiftingLine, LiftingSurfaces, Stations};
@@ -14,6 +14,13 @@ const TWO_PI: f64 = 2.0 * std::f64::consts::PI;
 const STATIONS: &str = "Stations of one half from root to tip, everything straight between them; two at one place hold a jump.";
 
 const LATTICE: &str = "J. J. Bertin and M. L. Smith, Aerodynamics for Engineers (vortex lattice)";
+
+const REFLEXED: &str = "sections with an angle of no lift below 0 have a moment below 0 too, nose down, unless they are reflexed";
+
+/// Whether the flow can stay on a wing at an angle of attack; 15 degrees and a rounding of it.
+fn attached(alpha: f64) -> bool {
+    alpha.abs() <= 0.262
+}
 
 /// The text by which stations are told apart.
 const SURFACE: Parameter = Parameter {
@@ -88,7 +95,11 @@ pub(super) static ROWS: &[Entry] = &[
             "A = 6.2 ; drawing of the wing\n\
              a_w = elliptic_lift_slope(A)\n"),
     ),
-    entry!(GROUP, lifting_line,
+    within_lines(
+        &[(0, Extreme::Most), (1, Extreme::Most)],
+        |given| 2.0 * at(given, 0) >= 3.0 * at(given, 1) && attached(at(given, 5)),
+        "the method holds for slender wings, of an aspect ratio of about 4 and more, and angles of attack up to 15 degrees",
+        entry!(GROUP, lifting_line,
         &[parameter!(y: [Length]), parameter!(chord: [Length]), parameter!(twist: [Angle]),
           parameter!(zero_lift: [Angle]), parameter!(@lift_slope section_slope: [PerAngle]), parameter!(alpha: Angle)],
         &[
@@ -130,7 +141,17 @@ pub(super) static ROWS: &[Entry] = &[
          end\n\
          wing = lifting_line(y, c, eps, a0, 6.1 /rad, 4 deg over station)\n\
          CL_w = wing.CL\n"),
-    entry!(GROUP, lifting_surface,
+    ),
+    trap(
+        &[(4, Extreme::Most), (5, Extreme::Most)],
+        |given| at(given, 4) >= 0.0 || at(given, 5) <= 0.0,
+        REFLEXED,
+        within_lines(
+            &[(0, Extreme::Least)],
+            |given| at(given, 0) == 0.0 && attached(at(given, 6)),
+            "the method holds for a first station in the plane of symmetry, y = 0, with no gap between the halves, and angles of \
+         attack up to 15 degrees",
+            entry!(GROUP, lifting_surface,
         &[parameter!(y: [Length]), parameter!(chord: [Length]), parameter!(x_le: [Length]), parameter!(twist: [Angle]),
           parameter!(zero_lift: [Angle]), parameter!(cm: [f64]), parameter!(alpha: Angle), parameter!(x_ref: Length)],
         &[
@@ -182,9 +203,18 @@ pub(super) static ROWS: &[Entry] = &[
          end\n\
          w = lifting_surface(y, c, x, eps, a0, cm, 4 deg, 6 ft over station)\n\
          CL_w = w.CL\n"),
-    Entry {
-        makes: Some(Makes::Texts(0)),
-        ..entry!(GROUP, lifting_surfaces,
+        ),
+    ),
+    trap(
+        &[(6, Extreme::Most), (7, Extreme::Most)],
+        |given| at(given, 6) >= 0.0 || at(given, 7) <= 0.0,
+        REFLEXED,
+        within(
+            |given| attached(at(given, 8)),
+            "the method holds for angles of attack up to 15 degrees",
+            Entry {
+                makes: Some(Makes::Texts(0)),
+                ..entry!(GROUP, lifting_surfaces,
             &[SURFACE, parameter!(y: [Length]), parameter!(z: [Length]), parameter!(chord: [Length]),
               parameter!(x_le: [Length]), parameter!(twist: [Angle]), parameter!(zero_lift: [Angle]), parameter!(cm: [f64]),
               parameter!(alpha: Angle), parameter!(x_ref: Length)],
@@ -227,8 +257,14 @@ pub(super) static ROWS: &[Entry] = &[
              4 | \"tail\" | 4.6 | 1 | 2.6 | 16.6 | -1\n\
              end\n\
              a = lifting_surfaces(unit, y, z, c, x, i, 0 deg, 0, 3 deg, 6 ft over station)\n")
-    },
-    points!(GROUP, wing::wing_moment(y: [Length], chord: [Length], x_le: [Length], cm: [f64], cl_basic: [f64],
+            },
+        ),
+    ),
+    within_lines(
+        &[(0, Extreme::Least)],
+        |given| at(given, 0) == 0.0,
+        "the method holds for a first station in the plane of symmetry, y = 0: the part inside of it is not counted",
+        points!(GROUP, wing::wing_moment(y: [Length], chord: [Length], x_le: [Length], cm: [f64], cl_basic: [f64],
             cl_additional: [f64]) -> {
             Cm0: f64 = "moment coefficient about the aerodynamic centre, nose up, on S and mac of the planform",
             x_ac: Length = "station of the aerodynamic centre",
@@ -244,7 +280,12 @@ pub(super) static ROWS: &[Entry] = &[
          end\n\
          m = wing_moment(y, c, x, cm, clb, cla over station)\n\
          Cm_w = m.Cm0\n"),
-    entry!(GROUP, schrenk_load,
+    ),
+    within_lines(
+        &[(0, Extreme::Least)],
+        |given| at(given, 0) == 0.0,
+        "the method holds for a first station in the plane of symmetry, y = 0: the lift is shared out over what is given",
+        entry!(GROUP, schrenk_load,
         &[parameter!(y: [Length]), parameter!(chord: [Length]), parameter!(lift: Force)],
         &[along(field!("", ForcePerLength, ""))],
         Compute::Lines(|given, _, out| {
@@ -262,6 +303,7 @@ pub(super) static ROWS: &[Entry] = &[
          3 | 14 | 3.6\n\
          end\n\
          w [lb/ft] = schrenk_load(y, c, 2100 lb over station)\n"),
+    ),
     within(
         |given| (0.1..=0.7).contains(&at(given, 4)),
         "holds for a quarter chord of the wing root from 0.1 to 0.7 of the body's length",
@@ -275,7 +317,12 @@ pub(super) static ROWS: &[Entry] = &[
             "w = 2.6 ft ; drawing of the fuselage\n\
              Cm_b = body_moment_slope(19 ft, w, 142 ft^2, 4.6 ft, 0.3)\n"),
     ),
-    entry!(GROUP, slender_body_moment_slope,
+    within_lines(
+        &[(2, Extreme::Least)],
+        |given| at(given, 2) >= 0.0,
+        "the method holds for flow slopes not below 0: 1 undisturbed, above 1 ahead of the wing, 1 less the downwash slope \
+         behind it",
+        entry!(GROUP, slender_body_moment_slope,
         &[parameter!(x: [Length]), parameter!(width: [Length]), parameter!(flow_slope: [f64]),
           parameter!(wing_area: Area), parameter!(mac: Length)],
         &[field!("", PerAngle, "")],
@@ -296,7 +343,11 @@ pub(super) static ROWS: &[Entry] = &[
          3 | 18 | 0.6 | 0.6\n\
          end\n\
          Cm_b = slender_body_moment_slope(x, w, f, 142 ft^2, 4.6 ft over frame)\n"),
-    entry!(GROUP, body_moment_zero,
+    ),
+    within(
+        |given| at(given, 6) >= 4.0,
+        "the method holds for slender bodies, of a fineness of about 4 and more",
+        entry!(GROUP, body_moment_zero,
         &[parameter!(x: [Length]), parameter!(width: [Length]), parameter!(incidence: [Angle]),
           parameter!(zero_lift: Angle), parameter!(wing_area: Area), parameter!(mac: Length), parameter!(fineness: f64)],
         &[field!("", f64, "")],
@@ -317,4 +368,5 @@ pub(super) static ROWS: &[Entry] = &[
          3 | 18 | 0.6 | -2\n\
          end\n\
          Cm_0 = body_moment_zero(x, w, i, -3 deg, 142 ft^2, 4.6 ft, 6.9 over frame)\n"),
+    ),
 ];

@@ -4,7 +4,7 @@ use super::{Checker, Marks, Typed};
 use crate::axes::{AxisId, AxisSet};
 use crate::catalogue::{Compute, Entry, Gives, Parameter, Wants};
 use crate::problem::{Fault, Mend};
-use crate::program::{Guard, Kind, NodeId, NumberKind, Op};
+use crate::program::{Kind, NodeId, NumberKind, Op};
 use crate::span::Span;
 use crate::syntax::{Argument, BinaryOp, Expr, ExprKind, Name};
 use engine::quantity::{Dimension, SpeedKind, constants};
@@ -178,7 +178,8 @@ impl Checker<'_> {
             },
             axes,
         );
-        self.guard(entry, &typed, axes, span);
+        self.guards(entry, &typed, axis, axes, span);
+        self.note_downwash(entry.name, span);
         let operands: Vec<Typed> = typed.into_iter().flatten().collect();
         self.call_results.insert(node, (dimensions, operands));
         if entry.is_record() {
@@ -412,21 +413,6 @@ impl Checker<'_> {
             return None;
         }
         Some(())
-    }
-
-    /// Has the arguments of a call looked at, where its method says in which range it holds.
-    fn guard(&mut self, entry: &'static Entry, typed: &[Option<Typed>], axes: AxisSet, span: Span) {
-        if entry.validity.is_none() || entry.takes_lines() {
-            return;
-        }
-        let argument = |t: &Option<Typed>| t.as_ref().map(|t| (t.node, t.unit.clone()));
-        self.program.guards.push(Guard {
-            statement: self.statement,
-            span,
-            entry,
-            arguments: typed.iter().map(argument).collect(),
-            axes,
-        });
     }
 
     /// The axis that a whole-line function consumes.

@@ -8,9 +8,11 @@ mod builder;
 mod call;
 mod compare;
 mod definition;
+mod downwash;
 mod expression;
 mod figure;
 mod general;
+mod guards;
 mod linking;
 mod made;
 mod operand;
@@ -165,6 +167,7 @@ pub(crate) struct Checker<'a> {
     pub(crate) call_results: FxHashMap<NodeId, (Vec<Dimension>, Vec<Typed>)>,
     /// The sets of rules that calls ask for.
     rules_asked: Vec<rules::RuleAsked>,
+    downwash_asked: Vec<downwash::DownwashAsked>,
     remarks: Rc<[Option<String>]>,
     parts: Rc<[Option<String>]>,
 }
@@ -276,6 +279,7 @@ impl<'a> Checker<'a> {
             constants: FxHashMap::default(),
             call_results: FxHashMap::default(),
             rules_asked: Vec::new(),
+            downwash_asked: Vec::new(),
             remarks: tree
                 .statements
                 .iter()
@@ -435,6 +439,7 @@ impl<'a> Checker<'a> {
         self.advise_unused();
         self.advise_sources();
         self.advise_rules();
+        self.advise_downwash();
     }
 }
 

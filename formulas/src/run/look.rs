@@ -131,7 +131,7 @@ impl GuardLook {
             .map(|(p, a)| (a.is_some(), p.default.unwrap_or(f64::NAN)))
             .collect();
         GuardLook {
-            holds: guard.entry.validity.map_or(|_| true, |v| v.holds),
+            holds: guard.validity.holds,
             given,
             numbers: vec![0.0; guard.entry.parameters.len()],
             outside: Outside::default(),

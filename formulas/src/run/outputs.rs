@@ -102,11 +102,21 @@ impl Machine<'_> {
                 Some(format!("{} {number}{unit}", parameter.name))
             })
             .collect();
-        let advice = guard.entry.validity.map_or("", |v| v.advice);
-        let fault = Fault::Validity {
-            function: guard.entry.name.to_string(),
-            text: format!("{advice} (here {})", named.join(", ")),
-            conditions: conditions(self.program, &shape, outside.count, &outside.first),
+        let function = guard.entry.name.to_string();
+        let text = format!("{} (here {})", guard.validity.advice, named.join(", "));
+        let conditions = conditions(self.program, &shape, outside.count, &outside.first);
+        let fault = if guard.trap {
+            Fault::ReferenceTrap {
+                function,
+                text,
+                conditions,
+            }
+        } else {
+            Fault::Validity {
+                function,
+                text,
+                conditions,
+            }
         };
         self.problems
             .push(located(guard.statement, guard.span, fault));

@@ -28,6 +28,7 @@ mod dangling_sign;
 mod decimal_comma;
 mod dimension_limit;
 mod dimension_mismatch;
+mod downwash_twice;
 mod duplicate_symbol;
 mod end_without_table;
 mod equation_count;
@@ -71,6 +72,7 @@ mod outside_validity;
 mod over_missing;
 mod over_not_taken;
 mod record_as_number;
+mod reference_trap;
 mod row_length;
 mod rows_missing;
 mod rules_mixed;
@@ -204,6 +206,8 @@ pub const CODES: &[&Code] = &[
     &free_body_units::ROW,
     &input_without_source::ROW,
     &outside_validity::ROW,
+    &reference_trap::ROW,
+    &downwash_twice::ROW,
     &rules_mixed::ROW,
     &further_solutions::ROW,
     &equation_count::ROW,
@@ -335,6 +339,8 @@ told_by! {
     FreebodyUnits { name } => free_body_units::draft(name),
     InputWithoutSource { symbol } => input_without_source::draft(symbol),
     Validity { function, text, conditions } => outside_validity::draft(function, text, conditions),
+    ReferenceTrap { function, text, conditions } => reference_trap::draft(function, text, conditions),
+    DownwashTwice { function, other } => downwash_twice::draft(function, other),
     RulesMixed { rules, basis } => rules_mixed::draft(rules, basis),
     FurtherSolutions { symbol, conditions } => further_solutions::draft(symbol, conditions),
     EquationCount { unknowns, equations } => equation_count::draft(*unknowns, *equations),
