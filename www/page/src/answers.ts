@@ -117,7 +117,7 @@ export interface GoverningDifference {
   symbol: string;
   unit: string | null;
   of: "largest" | "smallest";
-  condition: Condition;
+  group: Condition;
   old: Extreme | null;
   new: Extreme | null;
   change: number | null;

@@ -8,6 +8,7 @@ export interface Acts {
   save(): void;
   sheetText(): void;
   catalogue(): void;
+  reports(): void;
   print(): void;
   /** Begins with a starting sheet. */
   start(name: string): void;
@@ -20,6 +21,8 @@ export interface Parts {
   selectors: HTMLElement;
   form: HTMLElement;
   governing: HTMLElement;
+  /** Where what is unpacked later stands: the sensitivity. */
+  sensitivity: HTMLElement;
   drawings: HTMLElement;
   findings: HTMLElement;
 }
@@ -40,11 +43,11 @@ export function frame(acts: Acts, parts: Parts, starting: [name: string, title: 
   const catalogue = el("button", { type: "button", class: "beside", onclick: () => acts.catalogue() }, words.catalogue);
   const controls = el("nav", { class: "controls", "aria-label": "Sheet" },
     button(words.newSheet, () => acts.newSheet()), chooser(starting, acts), button(words.open, () => acts.open()), button(words.save, () => acts.save()),
-    sheetText, catalogue, button(words.print, () => acts.print()));
+    sheetText, catalogue, button(words.reports, () => acts.reports()), button(words.print, () => acts.print()));
   const masthead = el("header", { class: "masthead" }, el("h1", {}, words.program), working, controls);
   const formPlace = el("div", { class: "form-place" }, parts.selectors, parts.form, keyList());
   const element = el("div", { class: "paper" }, masthead, parts.notices,
-    el("main", {}, parts.titleBlock, formPlace, el("div", { class: "gathering" }, parts.governing, parts.drawings, parts.findings)),
+    el("main", {}, parts.titleBlock, formPlace, el("div", { class: "gathering" }, parts.governing, parts.sensitivity, parts.drawings, parts.findings)),
     el("footer", {}, words.cautions.map((caution) => el("p", {}, caution))));
   return {
     element,

@@ -13,8 +13,9 @@ import { Selectors } from "./head.js";
 import { frame, type Controls } from "./layout.js";
 import { Notices } from "./notices.js";
 import { preparePrint } from "./print.js";
-import type { Drawings as Drawn, Fix, Report } from "./report.js";
+import { digitsOf, type Drawings as Drawn, type Fix, type Report } from "./report.js";
 import { RowDesk, tabbed } from "./row-desk.js";
+import type { SensitivitySection } from "./sensitivity.js";
 import { SheetText } from "./sheet-text.js";
 import { spoken } from "./speech.js";
 import { newId, Store, type Draft } from "./store.js";
@@ -62,6 +63,8 @@ export class Page {
   #drawings = new Drawings();
   #whole: WholeText | null = null;
   #lookup: Lookup | null = null;
+  #sensitivityPlace = el("div");
+  #sensitivity: SensitivitySection | null = null;
   #prepared = false;
 
   /** Starts with the last draft, or with the sheet in the file where there is none. */
@@ -87,6 +90,7 @@ export class Page {
       fix: (fix) => this.#fix(fix),
       say: (text) => this.#say(text),
       trail: () => void this.#trail(this.#form.askedNow),
+      converted: (said) => this.#notices.show("converted", said, [{ text: words.takeBack, act: () => this.#desk.undo() }]),
       assistance: this.#assistance(),
     });
     this.#findings = new Findings({ fix: (fix) => this.#fix(fix), goTo: (line) => this.#goTo(line) });
@@ -102,12 +106,13 @@ export class Page {
       save: () => void this.#save(),
       sheetText: () => void this.#switch(),
       catalogue: () => void this.#lookUp().then((lookup) => lookup.catalogue()),
-      print: () => window.print(),
+      reports: () => void this.#lookUp().then((lookup) => lookup.reports()),
+      print: () => void this.#preview(),
       start: (name) => void this.#start(name),
       stop: () => this.#engine.stop(),
     }, {
       notices: this.#notices.element, titleBlock: this.#titleBlock.element, selectors: this.#selectors.element,
-      form: this.#form.table, governing: this.#governing.element, drawings: this.#drawings.element, findings: this.#findings.element,
+      form: this.#form.table, governing: this.#governing.element, sensitivity: this.#sensitivityPlace, drawings: this.#drawings.element, findings: this.#findings.element,
     }, this.#own.titles);
     document.body.append(made.element, field, this.#live);
     return made;
@@ -166,7 +171,13 @@ export class Page {
     performance.mark("first values");
     this.#prepared = true;
     void prepareLater();
-    void this.#engine.module.then(async (module) => (await later()).loadHighlighter(module));
+    void this.#engine.module.then(async (module) => {
+      const { loadHighlighter, SensitivitySection } = await later();
+      loadHighlighter(module);
+      this.#sensitivity = new SensitivitySection();
+      this.#sensitivityPlace.append(this.#sensitivity.element);
+      if (this.#report) this.#sensitivity.show(shownBy(this.#report, this.#choice));
+    });
   }
 
   #drawn(drawings: Drawn, serial: number): void {
@@ -184,6 +195,7 @@ export class Page {
     this.#findings.show(this.#report);
     this.#whole?.show(this.#report);
     this.#lookup?.refresh();
+    this.#sensitivity?.show(shown);
     this.#speak(shown);
   }
 
@@ -239,8 +251,21 @@ export class Page {
       goTo: (line) => this.#goTo(line),
       insert: (text) => (this.#whole ? this.#whole.type(text) : this.#desk.insert(text)),
       closed: () => this.#form.choose(this.#form.current),
+      now: () => this.#draft,
+      digits: () => (this.#report ? digitsOf(this.#report) : 4),
+      begin: (draft) => this.#begin(draft),
+      titles: this.#own.titles,
+      say: (text) => this.#say(text),
     });
     return this.#lookup;
+  }
+
+  /** The report as it is printed, made by the engine. */
+  async #preview(): Promise<void> {
+    const [{ preview }, html] = await Promise.all([later(), this.#engine.ask({ kind: "print" })]);
+    const nonce = document.querySelector<HTMLStyleElement>("style[nonce]")?.nonce ?? "";
+    const name = nameFor(String(this.#report?.sheet["title"] ?? "")).replace(/\.pitchwright$/, ".html");
+    preview(html, name, nonce, { closed: () => this.#form.choose(this.#form.current) });
   }
 
   async #trail(asked: Asked | null): Promise<void> {

@@ -17,6 +17,8 @@ export interface DeskEvents {
   say(text: string): void;
   /** The trail of the value in the row that the keyboard is at. */
   trail(): void;
+  /** What was pasted became something else; `said` tells what was changed. */
+  converted(said: string): void;
   assistance: Assistance;
 }
 
@@ -108,12 +110,14 @@ export class RowDesk {
 
   /** Puts the lines of `text` behind the chosen rows. */
   paste(text: string): void {
-    const lines = linesOf(normalised(text));
+    const table = laterNow()?.converted(text) ?? null;
+    const lines = table?.lines ?? linesOf(normalised(text));
     if (lines.length === 0) return;
     const { line, count } = this.#chosenLines();
     this.#sheet.replaceLines(line + count, 0, lines);
     this.#form.shift(line + count, 0, lines.length);
     this.#events.taken(line + count);
+    if (table) this.#events.converted(table.said);
   }
 
   #openAt(line: number, count: number, label: string, place: Place): void {
@@ -146,6 +150,7 @@ export class RowDesk {
       givenBack: () => this.#closeAt(editor, editor.line),
       fix: (fix) => this.#events.fix(fix),
       assistance: this.#events.assistance,
+      converted: (said) => this.#events.converted(said),
       undoBefore: () => {
         this.#closeAt(editor, editor.line);
         this.undo();

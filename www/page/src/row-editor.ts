@@ -8,6 +8,7 @@ import { el, fill } from "./dom.js";
 import { foundation, underline } from "./editing.js";
 import { fixButtons } from "./findings.js";
 import type { Place } from "./form.js";
+import { converted } from "./pasting.js";
 import type { Fix } from "./report.js";
 import { difference, type SheetText } from "./sheet-text.js";
 import { words } from "./strings.js";
@@ -22,6 +23,8 @@ export interface EditorEvents {
   givenBack(): void;
   fix(fix: Fix): void;
   assistance: Assistance;
+  /** What was pasted became a table; `said` tells what was changed. */
+  converted(said: string): void;
   /** Undo reached what lies before this row was opened. */
   undoBefore(): void;
 }
@@ -157,7 +160,9 @@ export class RowEditor {
     const text = (event.clipboardData?.getData("text/plain") ?? "").replace(/\r\n?/g, "\n").replace(/\n$/, "");
     if (!text.includes("\n") || this.#view.state.doc.length > 0) return false;
     event.preventDefault();
-    this.#view.dispatch(this.#view.state.replaceSelection(text));
+    const table = converted(text);
+    this.#view.dispatch(this.#view.state.replaceSelection(table?.lines.join("\n") ?? text));
+    if (table) this.#events.converted(table.said);
     return this.#take("stay");
   }
 

@@ -18,7 +18,9 @@ export interface StoreEvents {
 // All local files share one store in some browsers, so every key carries the program's name and the sheet's.
 const PREFIX = "pitchwright:";
 const LAST = `${PREFIX}last`;
-const keyOf = (id: string) => `${PREFIX}sheet:${id}`;
+/** What stands before a sheet's own name in its key. */
+export const SHEET_PREFIX = `${PREFIX}sheet:`;
+const keyOf = (id: string) => SHEET_PREFIX + id;
 
 /** Longer texts are not written with every key. */
 const AT_ONCE_MOST = 100_000;
