@@ -1,7 +1,7 @@
 /** How long the page takes from the disk to its first value, and from a key to the values. */
 import assert from "node:assert/strict";
 import { test } from "node:test";
-import { launch, openPage, rowOf, settled } from "./support.mjs";
+import { launch, openPage, rowOf, settled, valuesOf } from "./support.mjs";
 
 const median = (numbers) => [...numbers].sort((a, b) => a - b)[Math.floor(numbers.length / 2)];
 const ms = (number) => `${number.toFixed(1)} ms`;
@@ -31,5 +31,51 @@ test("values follow a key within a frame or few", async (t) => {
   }
   t.diagnostic(`key to values: median ${ms(median(times))}, longest ${ms(Math.max(...times))}`);
   assert.ok(median(times) < 100);
+  await browser.close();
+});
+
+/** Runs in the page before its scripts: the last draft is a sheet of 2,000 rows under 200 conditions. */
+function longSheet() {
+  if (localStorage.getItem("pitchwright:last")) return;
+  const lines = ["title Long", "vary k [1]: 1 to 200 step 1", "x_0 [ft] = 1 ft"];
+  for (let row = 1; row < 2000; row++) lines.push(`x_${row} [ft] = ${row % 7 ? "" : "k*"}${row} ft + 0*x_${row - 1} ; remark ${row}`);
+  localStorage.setItem("pitchwright:sheet:long", JSON.stringify({ name: null, text: `${lines.join("\n")}\n` }));
+  localStorage.setItem("pitchwright:last", "long");
+}
+
+test("a form of 2,000 rows under 200 conditions opens soon, scrolls, and takes keys at once", async (t) => {
+  const browser = await launch();
+  const { page, offences } = await openPage(browser, { prepare: longSheet });
+  const opened = await page.evaluate(() => performance.getEntriesByName("first values")[0].startTime);
+  t.diagnostic(`2,000 rows under 200 conditions: first values after ${ms(opened)}`);
+  assert.ok(opened < 6000);
+  // Only what is in sight and about it stands in the document.
+  assert.ok(await page.locator("table.form > tbody").count() < 200);
+  await page.evaluate(() => window.scrollTo(0, document.documentElement.scrollHeight / 2));
+  await page.locator("td.symbol", { hasText: /^x_?1000$/ }).waitFor();
+  assert.deepEqual(await valuesOf(page, "x_1000"), ["1000"]);
+  await rowOf(page, "x_1000").locator("button.opens").focus();
+  await page.keyboard.press("End");
+  await page.keyboard.press("ArrowUp");
+  assert.match(await page.evaluate(() => document.activeElement.getAttribute("aria-label")), /x_1999/);
+  await page.keyboard.press("Home");
+  await page.keyboard.press("ArrowDown");
+  await page.keyboard.press("ArrowDown");
+  await page.keyboard.press("Enter");
+  await page.locator(".typing .cm-content").waitFor();
+  await page.evaluate(() => {
+    window.taken = [];
+    document.addEventListener("keydown", () => (window.pressed = performance.now()), true);
+    document.addEventListener("input", () => window.taken.push(performance.now() - window.pressed));
+  });
+  for (let key = 0; key < 10; key++) {
+    await page.keyboard.press("0");
+    await settled(page);
+  }
+  const taken = await page.evaluate(() => window.taken);
+  t.diagnostic(`a key in it keeps the page busy for a median of ${ms(median(taken))}`);
+  assert.equal(taken.length, 10);
+  assert.ok(median(taken) < 100);
+  assert.deepEqual(offences, []);
   await browser.close();
 });

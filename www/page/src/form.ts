@@ -7,6 +7,7 @@ import type { Shown } from "./conditions.js";
 import type { FormRow } from "./report.js";
 import { rowSpec, type RowSpec } from "./rows.js";
 import { words } from "./strings.js";
+import { RowWindow, type Tall } from "./window.js";
 
 /** The columns that a row can be opened at. */
 export type Place = "symbol" | "unit" | "how" | "remark";
@@ -21,10 +22,12 @@ export interface FormEvents {
 }
 
 /** A drawn statement. */
-interface RowView {
+interface RowView extends Tall {
   body: HTMLTableSectionElement;
   row: FormRow;
   spec: RowSpec | null;
+  /** The conditions that it was drawn under last. */
+  drawn?: Shown;
 }
 
 /** An open editor and the line it stands at. */
@@ -49,6 +52,7 @@ export class Form {
   #anchor = 0;
   #width = 0;
   #shown: Shown | null = null;
+  #window: RowWindow;
 
   constructor(events: FormEvents) {
     const add = el("button", { type: "button", class: "opens", tabindex: -1, "aria-label": words.newRow }, "+");
@@ -60,6 +64,9 @@ export class Form {
       if (!this.#inEditor(event.target)) events.key(event);
     });
     this.table.addEventListener("focusin", (event) => this.#focused(event));
+    this.#window = new RowWindow(this.table, () => {
+      if (this.#window.look(this.#views)) this.#redraw();
+    });
   }
 
   /** The drawn rows, in order. */
@@ -89,9 +96,8 @@ export class Form {
     drawHead(this.#head, this.#columns, shown);
     this.#widen(shown.across?.labels.length ?? 1);
     this.#views = aligned(this.#views, rows);
-    for (const view of this.#views) draw(view, shown);
-    this.#arrange();
-    this.#mark();
+    this.#window.look(this.#views);
+    this.#redraw();
     // A new item number comes with a new button.
     if (focused) this.#button(this.#current)?.focus({ preventScroll: true });
   }
@@ -120,6 +126,7 @@ export class Form {
   /** Moves the keyboard to a position, extending the choice or starting it anew. */
   choose(position: number, extend = false): void {
     this.#current = Math.max(0, Math.min(position, this.#views.length));
+    this.#reach(this.#current);
     if (!extend) this.#anchor = this.#current;
     this.#mark();
     this.#button(this.#current)?.focus();
@@ -147,7 +154,9 @@ export class Form {
   /** The table rows of the chosen statements. */
   get chosenRows(): HTMLTableRowElement[] {
     const { from, to } = this.chosen;
-    return this.#views.slice(from, to + 1).flatMap(({ body }) => Array.from(body.rows));
+    const views = this.#views.slice(from, to + 1);
+    for (const view of views) if (this.#shown && view.drawn !== this.#shown) draw(view, this.#shown);
+    return views.flatMap(({ body }) => Array.from(body.rows));
   }
 
   /** The first value of the row that the keyboard is at. */
@@ -172,6 +181,20 @@ export class Form {
     this.#foot.querySelector("td")?.setAttribute("colspan", String(this.columns));
   }
 
+  /** Draws the rows that are in the window, and marks those that are chosen. */
+  #redraw(): void {
+    this.#arrange();
+    this.#mark();
+  }
+
+  /** Brings the window over the row at `position`, so that it can have the keyboard. */
+  #reach(position: number): void {
+    if (position >= this.#views.length || this.#window.holds(position)) return;
+    const top = this.table.getBoundingClientRect().top + window.scrollY;
+    window.scrollTo({ top: top + this.#window.offset(this.#views, position) - window.innerHeight / 2, behavior: "instant" });
+    if (this.#window.look(this.#views)) this.#redraw();
+  }
+
   #bodyAt(position: number): HTMLTableSectionElement {
     return this.#views[position]?.body ?? this.#foot;
   }
@@ -184,6 +207,7 @@ export class Form {
     const { from, to } = this.chosen;
     this.#current = Math.min(this.#current, this.#views.length);
     for (let position = 0; position <= this.#views.length; position++) {
+      if (position < this.#views.length && !this.#window.holds(position)) continue;
       const chosen = from < to && position >= from && position <= to;
       const body = this.#bodyAt(position);
       if (body.classList.contains("chosen") !== chosen) body.classList.toggle("chosen", chosen);
@@ -195,21 +219,27 @@ export class Form {
 
   #arrange(): void {
     const editor = this.#editor;
-    const bodies: HTMLElement[] = [];
+    const bodies: (HTMLElement | Tall)[] = [];
     let placed = false;
-    for (const { body, row } of this.#views) {
+    for (const [position, view] of this.#views.entries()) {
+      const { body, row } = view;
       const covered = editor !== null && row.line >= editor.line && row.line < editor.line + editor.count;
       if (editor && !placed && row.line >= editor.line) {
         bodies.push(editor.body);
         placed = true;
       }
+      if (!covered && !this.#window.holds(position)) {
+        bodies.push(view);
+        continue;
+      }
+      if (this.#shown && view.drawn !== this.#shown) draw(view, this.#shown);
       if (body.classList.contains("open") !== covered) body.classList.toggle("open", covered);
       const hidden = covered && TEXT_ONLY.has(row.kind);
       if (body.hidden !== hidden) body.hidden = hidden;
       bodies.push(body);
     }
     if (editor && !placed) bodies.push(editor.body);
-    arrange(this.table, this.#head, [...bodies, this.#foot]);
+    arrange(this.table, this.#head, this.#window.spaced([...bodies, this.#foot]));
   }
 
   #inEditor(target: EventTarget | null): boolean {
@@ -288,6 +318,7 @@ function draw(view: RowView, shown: Shown): void {
   const spec = rowSpec(view.row, shown);
   const before = view.spec;
   view.spec = spec;
+  view.drawn = shown;
   if (view.body.dataset["kind"] !== spec.className) view.body.dataset["kind"] = spec.className;
   while (view.body.rows.length > spec.rows.length) view.body.lastElementChild?.remove();
   spec.rows.forEach((cells, index) => {
