@@ -10,15 +10,15 @@ before(async () => {
 });
 after(() => browser.close());
 
-async function serious(page) {
-  const { violations } = await new AxeBuilder({ page }).analyze();
+async function serious(page, part = "html") {
+  const { violations } = await new AxeBuilder({ page }).include(part).analyze();
   return violations.filter(({ impact }) => impact === "serious" || impact === "critical")
     .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html.slice(0, 120)).join(" ")}`);
 }
 
 // Each width with one of the colour schemes: a full look takes long, and the rules for the one say nothing of the other.
 for (const [colorScheme, width] of [["light", 1440], ["dark", 390]]) {
-  test(`nothing serious is found, ${colorScheme}, ${width} wide: the form, an open row with a finding, the sheet text`, async () => {
+  test(`nothing serious is found, ${colorScheme}, ${width} wide: the form, an open row with a finding, the sheet text, what is looked up`, async () => {
     const { page, context } = await openPage(browser, { colorScheme, viewport: { width, height: 900 } });
     assert.deepEqual(await serious(page), []);
     await rowOf(page, "L_w").locator("td.how").click();
@@ -27,6 +27,15 @@ for (const [colorScheme, width] of [["light", 1440], ["dark", 390]]) {
     assert.deepEqual(await serious(page), []);
     await page.getByRole("button", { name: "Sheet text" }).click();
     assert.deepEqual(await serious(page), []);
+    for (const name of ["Catalogue", "Reports"]) {
+      await page.getByRole("button", { name }).click();
+      await page.locator("aside.slip h2", { hasText: name }).waitFor();
+      assert.deepEqual(await serious(page, "aside.slip"), []);
+    }
+    await page.getByRole("button", { name: "Computation form" }).click();
+    await rowOf(page, "P_t").locator("td.value").first().click();
+    await page.locator("aside.slip ol.way").waitFor();
+    assert.deepEqual(await serious(page, "aside.slip"), []);
     await context.close();
   });
 }

@@ -21,7 +21,7 @@ export function comparison(differences: Differences, digits: number): Child {
   const verdict = (each: { met: boolean | null } | null): string =>
     each === null ? common.noValue : each.met === null ? common.notShown : each.met ? common.met : common.notMet;
   const required = requirements.map((each) => line(`${words.requirement}: ${each.text}`, "", "", verdict(each.old), verdict(each.new), changed(each.change, digits)));
-  return el("div", { class: "scrolls" }, el("table", { class: "gathered" },
+  return el("div", { class: "scrolls", tabindex: 0, role: "region", "aria-label": words.comparison }, el("table", { class: "gathered" },
     el("thead", {}, el("tr", {}, [words.symbol, words.where, common.unit, words.before, words.now, words.change].map((text) => el("th", { scope: "col" }, text)))),
     el("tbody", {}, governed, required, quantities.map((each) => quantityLines(each, digits)))));
 }

@@ -300,7 +300,7 @@ export class Page {
     this.#sheet.reset(draft.text);
     this.#whole?.follow();
     if (before.text.trim() === "" || before.text === draft.text || !this.#store.works) return;
-    const name = before.name ?? words.untitled;
+    const name = before.text.match(/^title[ \t]+(.+)$/m)?.[1] ?? before.name ?? words.untitled;
     this.#notices.show("before", words.replaced(name), [{ text: words.backToIt, act: () => this.#back(before) }]);
   }
 

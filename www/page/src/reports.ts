@@ -55,7 +55,7 @@ export class ReportsSlip {
       el("td", { class: "revisions" }, this.#revisions(sheet)),
       el("td", {}, sheet.id === now.id ? words.thisSheet : [plain(words.openIt, () => this.#services.begin(sheet)), " ", this.#remover(sheet)])));
     const heads = [words.report, words.file, words.revisions, words.doing].map((text) => el("th", { scope: "col" }, text));
-    return el("div", { class: "scrolls" }, el("table", { class: "gathered kept" },
+    return el("div", { class: "scrolls", tabindex: 0, role: "region", "aria-label": words.reports }, el("table", { class: "gathered kept" },
       el("thead", {}, el("tr", {}, heads)), el("tbody", {}, lines)));
   }
 

@@ -3,7 +3,7 @@ import { cell, howCell, symbolCell, unitCell, valueColumns, type CellSpec } from
 import { conditionText, findingsAt, type Shown } from "./conditions.js";
 import { el, symbolText, type Child } from "./dom.js";
 import { count, shown as numberText } from "./numbers.js";
-import type { FormRow, Governing, Group, Requirement, Worst } from "./report.js";
+import { labelAt, type Extreme, type FormRow, type Governing, type Group, type Requirement, type Worst } from "./report.js";
 import { words } from "./strings.js";
 import { extremeText } from "./values.js";
 
@@ -51,14 +51,21 @@ function extremesCell(entry: Governing, shown: Shown): CellSpec {
   const groups: Group[] = entry.groups.length > 0 ? entry.groups : [{ condition: {}, ...entry }];
   const lines = groups.map((group) => ({
     where: conditionText(shown.report, group.condition),
-    largest: extremeText(group.largest, entry.unit, shown),
-    smallest: extremeText(group.smallest, entry.unit, shown),
+    largest: extremeText(within(group.largest, group), entry.unit, shown),
+    smallest: extremeText(within(group.smallest, group), entry.unit, shown),
   }));
   const content = (): Child[] => lines.map(({ where, largest, smallest }) => el("span", { class: "extremes" },
     where && el("b", {}, where),
     el("span", {}, el("i", {}, words.largest), " ", largest),
     el("span", {}, el("i", {}, words.smallest), " ", smallest)));
   return wide(shown, JSON.stringify(lines), content);
+}
+
+/** The extreme without the labels of its group, which stand before it. */
+function within(extreme: Extreme | null, { condition }: Group): Extreme | null {
+  if (!extreme) return null;
+  const rest = Object.entries(extreme.condition).filter(([axis]) => labelAt(condition, axis) === undefined);
+  return { value: extreme.value, condition: Object.fromEntries(rest) };
 }
 
 function requirementCell(row: FormRow, shown: Shown): CellSpec {

@@ -116,7 +116,7 @@ export class TrailSlip {
       el("td", {}, under.remark ?? "")));
     return [
       el("h3", { id: "rests-on" }, words.restsOn),
-      el("div", { class: "scrolls" }, el("table", { class: "gathered rests", "aria-labelledby": "rests-on" },
+      el("div", { class: "scrolls", tabindex: 0, role: "region", "aria-label": words.restsOn }, el("table", { class: "gathered rests", "aria-labelledby": "rests-on" },
         el("thead", {}, el("tr", {}, head(words.symbol), head(words.value, "number"), head(words.howObtained), head(words.remark))), el("tbody", {}, lines))),
       trail.cut && el("p", { class: "faint" }, words.cut),
     ];
