@@ -60,6 +60,10 @@ pub(super) fn by_known(
 
 /// What is divided by, with its reciprocals.
 #[derive(Clone, Copy)]
+#[cfg_attr(
+    not(target_arch = "x86_64"),
+    expect(dead_code, reason = "only the short division reads them")
+)]
 enum Divisor<'a> {
     Value(f64, f64),
     Block(&'a [f64], &'a [f64]),
