@@ -1,5 +1,8 @@
 //! Dense linear systems: factorised once, solved for any number of right sides.
 
+/// Columns that are eliminated in one pass over the matrix.
+const TOGETHER: usize = 4;
+
 /// A square matrix, factorised with the largest pivot of each column.
 ///
 /// # Example
@@ -24,28 +27,14 @@ impl Factorised {
             return None;
         }
         let mut order: Vec<usize> = (0..size).collect();
-        for column in 0..size {
-            let larger = |best: usize, row: usize| {
-                let at = |row: usize| rows[row * size + column].abs();
-                if at(row) > at(best) { row } else { best }
-            };
-            let pivot = (column..size).fold(column, larger);
-            if rows[pivot * size + column] == 0.0 {
-                return None;
+        let mut from = 0;
+        while from < size {
+            let to = (from + TOGETHER).min(size);
+            for column in from..to {
+                eliminate(&mut rows, &mut order, size, column, to)?;
             }
-            if pivot != column {
-                order.swap(pivot, column);
-                (0..size).for_each(|k| rows.swap(pivot * size + k, column * size + k));
-            }
-            let (above, below) = rows.split_at_mut((column + 1) * size);
-            let lead = &above[column * size..];
-            for row in below.chunks_exact_mut(size) {
-                let factor = row[column] / lead[column];
-                row[column] = factor;
-                for k in column + 1..size {
-                    row[k] -= factor * lead[k];
-                }
-            }
+            finish(&mut rows, size, from, to);
+            from = to;
         }
         Some(Factorised { rows, order, size })
     }
@@ -68,6 +57,77 @@ impl Factorised {
             x[row] = (x[row] - known) / line[row];
         }
         x
+    }
+}
+
+/// Brings the largest value of a column to its diagonal, and takes the column out of the rows below as far as the columns
+/// of this pass go. `None` where there is none but 0.
+fn eliminate(
+    rows: &mut [f64],
+    order: &mut [usize],
+    size: usize,
+    column: usize,
+    to: usize,
+) -> Option<()> {
+    let larger = |best: usize, row: usize| {
+        let at = |row: usize| rows[row * size + column].abs();
+        if at(row) > at(best) { row } else { best }
+    };
+    let pivot = (column..size).fold(column, larger);
+    if rows[pivot * size + column] == 0.0 {
+        return None;
+    }
+    if pivot != column {
+        order.swap(pivot, column);
+        let (above, below) = rows.split_at_mut(pivot * size);
+        above[column * size..(column + 1) * size].swap_with_slice(&mut below[..size]);
+    }
+    let (above, below) = rows.split_at_mut((column + 1) * size);
+    let lead = &above[column * size..];
+    let (diagonal, lead) = (lead[column], &lead[column + 1..to]);
+    for row in below.chunks_exact_mut(size) {
+        let factor = row[column] / diagonal;
+        row[column] = factor;
+        for (value, lead) in row[column + 1..to].iter_mut().zip(lead) {
+            *value -= factor * lead;
+        }
+    }
+    Some(())
+}
+
+/// Takes the columns of a pass out of all later ones. Each value is read and written once for all of them, in the order in
+/// which they would be taken one by one, so that the bits are the same.
+fn finish(rows: &mut [f64], size: usize, from: usize, to: usize) {
+    let (above, below) = rows.split_at_mut(to * size);
+    let mut leads: Vec<&mut [f64]> = above[from * size..].chunks_exact_mut(size).collect();
+    for at in 1..leads.len() {
+        let (known, rest) = leads.split_at_mut(at);
+        let Some(row) = rest.first_mut() else { break };
+        let (factors, row) = row.split_at_mut(to);
+        for (lead, factor) in known.iter().zip(&factors[from..]) {
+            for (value, lead) in row.iter_mut().zip(&lead[to..]) {
+                *value -= factor * lead;
+            }
+        }
+    }
+    let leads: Vec<&[f64]> = leads.iter().map(|lead| &lead[to..]).collect();
+    for row in below.chunks_exact_mut(size) {
+        let (factors, row) = row.split_at_mut(to);
+        match (leads.as_slice(), &factors[from..]) {
+            ([a, b, c, d], [e, f, g, h]) => {
+                let leads = a.iter().zip(*b).zip(c.iter().zip(*d));
+                for (value, ((a, b), (c, d))) in row.iter_mut().zip(leads) {
+                    *value = *value - e * a - f * b - g * c - h * d;
+                }
+            }
+            (leads, factors) => {
+                for (lead, factor) in leads.iter().zip(factors) {
+                    for (value, lead) in row.iter_mut().zip(*lead) {
+                        *value -= factor * lead;
+                    }
+                }
+            }
+        }
     }
 }
 

@@ -86,13 +86,15 @@ impl Panels {
         let count = x.len();
         let size = count + 1;
         let closed = elementary::hypot(x[0] - x[count - 1], z[0] - z[count - 1]) <= SAME * chord;
+        let apart = Apart::new(x, z, chord);
+        let panels: Vec<Panel> = (1..count).map(|j| Panel::new(x, z, j, chord)).collect();
         let mut rows = vec![0.0; size * size];
         let (mut along, mut across) = (vec![0.0; size], vec![0.0; size]);
         for i in 0..count {
             let row = &mut rows[i * size..(i + 1) * size];
-            for j in 0..count - 1 {
-                let [first, second] =
-                    influence((x[i], z[i]), (x[j], z[j]), (x[j + 1], z[j + 1]), chord);
+            for (j, panel) in panels.iter().enumerate() {
+                let at = ((x[i] - x[j]) / chord, (z[i] - z[j]) / chord);
+                let [first, second] = panel.influence(at, apart.of(i, j), apart.of(i, j + 1));
                 row[j] += first;
                 row[j + 1] += second;
             }
@@ -218,31 +220,91 @@ fn farthest(x: &[f64], z: &[f64], from: (f64, f64)) -> (f64, f64) {
     )
 }
 
-/// Stream function at a point of a panel whose strength is 1 at its first end and 0 at its second, and the reverse.
-fn influence(at: (f64, f64), from: (f64, f64), to: (f64, f64), chord: f64) -> [f64; 2] {
-    let (dx, dz) = ((to.0 - from.0) / chord, (to.1 - from.1) / chord);
-    let (px, pz) = ((at.0 - from.0) / chord, (at.1 - from.1) / chord);
-    let length = elementary::hypot(dx, dz);
-    let (a, y) = ((px * dx + pz * dz) / length, (pz * dx - px * dz) / length);
-    let b = a - length;
-    // u ln r and r^2 (ln r - 1/2) go to 0 with r.
-    let parts = |u: f64| {
-        let square = u * u + y * y;
-        if square == 0.0 {
-            return (0.0, 0.0);
+/// For each pair of points the square of their distance, its logarithm, and the direction from the first to the second: each
+/// of the costly functions is taken once for a pair.
+struct Apart {
+    count: usize,
+    pairs: Vec<[f64; 3]>,
+}
+
+impl Apart {
+    fn new(x: &[f64], z: &[f64], chord: f64) -> Self {
+        let count = x.len();
+        let mut pairs = vec![[0.0; 3]; count * count];
+        for i in 0..count {
+            for j in 0..i {
+                let (dx, dz) = ((x[j] - x[i]) / chord, (z[j] - z[i]) / chord);
+                let square = dx * dx + dz * dz;
+                if square == 0.0 {
+                    continue;
+                }
+                let (log, direction) = (elementary::ln(square), elementary::atan2(dz, dx));
+                let back = if direction > 0.0 {
+                    direction - PI
+                } else {
+                    direction + PI
+                };
+                pairs[i * count + j] = [square, log, direction];
+                pairs[j * count + i] = [square, log, back];
+            }
         }
-        let log = elementary::ln(square) / 2.0;
-        (u * log, square * (log - 0.5))
-    };
-    let ((first, first_square), (second, second_square)) = (parts(a), parts(b));
-    let turn = if y == 0.0 {
-        0.0
+        Apart { count, pairs }
+    }
+
+    fn of(&self, from: usize, to: usize) -> [f64; 3] {
+        self.pairs[from * self.count + to]
+    }
+}
+
+/// A panel: its direction and length, over the chord.
+struct Panel {
+    direction: (f64, f64),
+    length: f64,
+}
+
+impl Panel {
+    /// The panel that ends at a point.
+    fn new(x: &[f64], z: &[f64], end: usize, chord: f64) -> Self {
+        let (dx, dz) = (x[end] - x[end - 1], z[end] - z[end - 1]);
+        let length = elementary::hypot(dx, dz);
+        Panel {
+            direction: (dx / length, dz / length),
+            length: length / chord,
+        }
+    }
+
+    /// Stream function at a point, seen from the panel's first end, of a strength that is 1 at that end and 0 at the other,
+    /// and of the reverse; `from` and `to` are how the point stands to both ends.
+    fn influence(&self, at: (f64, f64), from: [f64; 3], to: [f64; 3]) -> [f64; 2] {
+        let (dx, dz) = self.direction;
+        let length = self.length;
+        let (a, y) = (at.0 * dx + at.1 * dz, at.1 * dx - at.0 * dz);
+        let b = a - length;
+        // u ln r and r^2 (ln r - 1/2) go to 0 with r.
+        let parts =
+            |u: f64, [square, log, _]: [f64; 3]| (u * log / 2.0, square * (log - 1.0) / 2.0);
+        let ((first, first_square), (second, second_square)) = (parts(a, from), parts(b, to));
+        // The angle that the panel takes up, seen from the point; none from its own ends.
+        let turn = if from[0] == 0.0 || to[0] == 0.0 {
+            0.0
+        } else {
+            y * within_half_turn(to[2] - from[2])
+        };
+        let plain = first - second - length + turn;
+        let rising = (a * plain - (first_square - second_square) / 2.0) / length;
+        [(plain - rising) / (2.0 * PI), rising / (2.0 * PI)]
+    }
+}
+
+/// The same angle between half a turn back and half a turn on.
+fn within_half_turn(angle: f64) -> f64 {
+    if angle > PI {
+        angle - 2.0 * PI
+    } else if angle < -PI {
+        angle + 2.0 * PI
     } else {
-        y * (elementary::atan(a / y) - elementary::atan(b / y))
-    };
-    let plain = first - second - length + turn;
-    let rising = (a * plain - (first_square - second_square) / 2.0) / length;
-    [(plain - rising) / (2.0 * PI), rising / (2.0 * PI)]
+        angle
+    }
 }
 
 #[cfg(test)]

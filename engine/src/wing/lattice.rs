@@ -159,6 +159,11 @@ impl Lattice {
         })
     }
 
+    /// How many horseshoe vortices there are.
+    pub(super) fn size(&self) -> usize {
+        self.shoes.len()
+    }
+
     /// The solution for one radian of angle of attack, or for the surfaces' own angles.
     pub(super) fn sums(&self, lifted: bool, surfaces: usize) -> Sums {
         let strength = if lifted { &self.lifted } else { &self.twisted };

@@ -145,6 +145,12 @@ impl LiftingSurfaces {
         })
     }
 
+    /// How many panels the lattice has: unknowns of the system that was solved.
+    #[must_use]
+    pub fn size(&self) -> usize {
+        self.lattice.size()
+    }
+
     /// The surfaces at an angle of attack of the datum line, moments about a station.
     pub fn at(&self, alpha: Angle, x_ref: Length) -> SurfaceResult {
         let (alpha, x_ref) = (alpha.si(), x_ref.si());
