@@ -1,6 +1,7 @@
 //! `cargo bench --bench solves`: how long the solvers take, as ratios to factorising and solving a dense system of the same
 //! size with the library nalgebra, on the same machine in the same run. Ends with a failure where a ratio is over its most.
 
+use engine::numeric::Factorised;
 use engine::quantity::{Angle, Length, Typed};
 use engine::section::{Panels, section_points};
 use engine::wing::{LiftingSurfaces, Stations};
@@ -66,11 +67,18 @@ fn sweep(panels: &Panels, angles: usize) {
 
 fn main() -> ExitCode {
     let contour = section_points("2412", 201);
-    let solve = || Panels::new(black_box(&contour.x), black_box(&contour.z)).expect("a contour");
     let (matrix, right) = system(202);
+    let list: Vec<f64> = matrix.transpose().iter().copied().collect();
+    let own = || {
+        let factors = Factorised::new(black_box(list.clone()), 202).expect("factors");
+        black_box(factors.solve(right.as_slice()));
+        black_box(factors.solve(right.as_slice()));
+    };
+    let dense = quickest(own, || library(&matrix, &right));
+    let solve = || Panels::new(black_box(&contour.x), black_box(&contour.z)).expect("a contour");
     let section = quickest(|| sweep(&solve(), 1), || library(&matrix, &right));
     let angles = quickest(|| sweep(&solve(), 50), || sweep(&solve(), 1));
-    let airplane = [surface(0.0, 4.0, 1.2, 0.0), surface(4.0, 1.2, 0.7, 0.4)];
+    let airplane = [surface(0.0, 4.0, 1.2, 0.0), surface(4.0, 3.0, 0.9, 0.4)];
     let lay_out = || LiftingSurfaces::new(black_box(&airplane)).expect("surfaces");
     let size = lay_out().size();
     let (matrix, right) = system(size);
@@ -80,6 +88,7 @@ fn main() -> ExitCode {
         || library(&matrix, &right),
     );
     let rows = [
+        ("dense system of 202, to the library's solution", dense, 1.2),
         (
             "section of 200 panels, one angle, to the library's solution",
             section,

@@ -86,20 +86,25 @@ impl Panels {
         let count = x.len();
         let size = count + 1;
         let closed = elementary::hypot(x[0] - x[count - 1], z[0] - z[count - 1]) <= SAME * chord;
-        let apart = Apart::new(x, z, chord);
-        let panels: Vec<Panel> = (1..count).map(|j| Panel::new(x, z, j, chord)).collect();
+        let over_chord = |line: &[f64]| line.iter().map(|v| v / chord).collect::<Vec<f64>>();
+        let (unit_x, unit_z) = (over_chord(x), over_chord(z));
+        let apart = Apart::new(&unit_x, &unit_z);
+        let panels: Vec<Panel> = (1..count)
+            .map(|j| Panel::new(&unit_x, &unit_z, j))
+            .collect();
         let mut rows = vec![0.0; size * size];
         let (mut along, mut across) = (vec![0.0; size], vec![0.0; size]);
         for i in 0..count {
             let row = &mut rows[i * size..(i + 1) * size];
             for (j, panel) in panels.iter().enumerate() {
-                let at = ((x[i] - x[j]) / chord, (z[i] - z[j]) / chord);
+                let at = (unit_x[i] - unit_x[j], unit_z[i] - unit_z[j]);
                 let [first, second] = panel.influence(at, apart.of(i, j), apart.of(i, j + 1));
                 row[j] += first;
                 row[j + 1] += second;
             }
+            // All is taken 2 pi times, as influences are.
             row[count] = -1.0;
-            (along[i], across[i]) = (-z[i] / chord, x[i] / chord);
+            (along[i], across[i]) = (-2.0 * PI * unit_z[i], 2.0 * PI * unit_x[i]);
         }
         if closed {
             let row = &mut rows[(count - 1) * size..count * size];
@@ -228,12 +233,12 @@ struct Apart {
 }
 
 impl Apart {
-    fn new(x: &[f64], z: &[f64], chord: f64) -> Self {
+    fn new(x: &[f64], z: &[f64]) -> Self {
         let count = x.len();
         let mut pairs = vec![[0.0; 3]; count * count];
         for i in 0..count {
             for j in 0..i {
-                let (dx, dz) = ((x[j] - x[i]) / chord, (z[j] - z[i]) / chord);
+                let (dx, dz) = (x[j] - x[i], z[j] - z[i]);
                 let square = dx * dx + dz * dz;
                 if square == 0.0 {
                     continue;
@@ -260,20 +265,23 @@ impl Apart {
 struct Panel {
     direction: (f64, f64),
     length: f64,
+    /// One over the length.
+    part: f64,
 }
 
 impl Panel {
     /// The panel that ends at a point.
-    fn new(x: &[f64], z: &[f64], end: usize, chord: f64) -> Self {
+    fn new(x: &[f64], z: &[f64], end: usize) -> Self {
         let (dx, dz) = (x[end] - x[end - 1], z[end] - z[end - 1]);
         let length = elementary::hypot(dx, dz);
         Panel {
             direction: (dx / length, dz / length),
-            length: length / chord,
+            length,
+            part: 1.0 / length,
         }
     }
 
-    /// Stream function at a point, seen from the panel's first end, of a strength that is 1 at that end and 0 at the other,
+    /// Stream function, 2 pi times, at a point, seen from the panel's first end, of a strength that is 1 at that end and 0 at the other,
     /// and of the reverse; `from` and `to` are how the point stands to both ends.
     fn influence(&self, at: (f64, f64), from: [f64; 3], to: [f64; 3]) -> [f64; 2] {
         let (dx, dz) = self.direction;
@@ -291,8 +299,8 @@ impl Panel {
             y * within_half_turn(to[2] - from[2])
         };
         let plain = first - second - length + turn;
-        let rising = (a * plain - (first_square - second_square) / 2.0) / length;
-        [(plain - rising) / (2.0 * PI), rising / (2.0 * PI)]
+        let rising = (a * plain - (first_square - second_square) / 2.0) * self.part;
+        [plain - rising, rising]
     }
 }
 

@@ -144,9 +144,10 @@ impl Lattice {
             .flat_map(|(at, strip)| (0..rows).map(move |row| horseshoe(at, strip, row, rows)))
             .collect();
         let n = shoes.len();
+        let (ends, pairs) = ends_of(&shoes, rows);
         let mut matrix = Vec::with_capacity(n * n);
         for at in &shoes {
-            matrix.extend(shoes.iter().map(|of| down(at.point, of)));
+            all_down(at.point, &ends, &pairs, &mut matrix);
         }
         let matrix = Factorised::new(matrix, n)?;
         let lifted = matrix.solve(&vec![1.0; n]);
@@ -313,38 +314,89 @@ fn horseshoe(at: usize, strip: &Strip, row: usize, rows: usize) -> Horseshoe {
 
 /// Downward velocity at a point for a circulation of 1, of a vortex and of its image in the other half.
 fn down(at: [f64; 3], shoe: &Horseshoe) -> f64 {
-    let mirrored = [at[0], -at[1], at[2]];
-    one_half(at, shoe) + one_half(mirrored, shoe)
+    let of = |at: [f64; 3]| upward(&seen(at, shoe.from), &seen(at, shoe.to));
+    -(of(at) + of(mirrored(at))) / (4.0 * PI)
 }
 
-/// The law of Biot and Savart for a bound part and two straight parts that run aft for ever, the third component.
-fn one_half(at: [f64; 3], shoe: &Horseshoe) -> f64 {
-    let a = minus(at, shoe.from);
-    let b = minus(at, shoe.to);
-    let bound = minus(shoe.to, shoe.from);
+/// The same of all vortices. Most ends belong to two vortices, and each is looked at once.
+fn all_down(at: [f64; 3], ends: &[[f64; 3]], pairs: &[(usize, usize)], row: &mut Vec<f64>) {
+    let near: Vec<Seen> = ends.iter().map(|end| seen(at, *end)).collect();
+    let image = mirrored(at);
+    let far: Vec<Seen> = ends.iter().map(|end| seen(image, *end)).collect();
+    row.extend(pairs.iter().map(|(from, to)| {
+        let both = upward(&near[*from], &near[*to]) + upward(&far[*from], &far[*to]);
+        -both / (4.0 * PI)
+    }));
+}
+
+/// The ends of all bound vortices, each once, and which two each vortex has.
+fn ends_of(shoes: &[Horseshoe], rows: usize) -> (Vec<[f64; 3]>, Vec<(usize, usize)>) {
+    let mut ends: Vec<[f64; 3]> = Vec::new();
+    let mut pairs: Vec<(usize, usize)> = Vec::with_capacity(shoes.len());
+    for (at, shoe) in shoes.iter().enumerate() {
+        // The strip inside has its vortices, as many, just before.
+        let before = at.checked_sub(rows).and_then(|at| pairs.get(at));
+        let shared = before
+            .map(|pair| pair.1)
+            .filter(|end| ends[*end] == shoe.from);
+        let from = shared.unwrap_or_else(|| {
+            ends.push(shoe.from);
+            ends.len() - 1
+        });
+        ends.push(shoe.to);
+        pairs.push((from, ends.len() - 1));
+    }
+    (ends, pairs)
+}
+
+fn mirrored(at: [f64; 3]) -> [f64; 3] {
+    [at[0], -at[1], at[2]]
+}
+
+/// An end of a bound vortex seen from a point: the way from it, how far, and what a straight vortex from there aft for ever
+/// does, upward.
+struct Seen {
+    way: [f64; 3],
+    length: f64,
+    trailing: f64,
+}
+
+fn seen(at: [f64; 3], end: [f64; 3]) -> Seen {
+    let way = minus(at, end);
+    let length = dot(way, way).sqrt();
+    let square = way[1] * way[1] + way[2] * way[2];
+    let trailing = if square == 0.0 {
+        0.0
+    } else {
+        way[1] * (length + way[0]) / (square * length)
+    };
+    Seen {
+        way,
+        length,
+        trailing,
+    }
+}
+
+/// The law of Biot and Savart for a bound part and two straight parts that run aft for ever, the third component, times 4 pi.
+fn upward(from: &Seen, to: &Seen) -> f64 {
+    let (a, b) = (from.way, to.way);
+    let bound = minus(a, b);
     let cross = [
         a[1] * b[2] - a[2] * b[1],
         a[2] * b[0] - a[0] * b[2],
         a[0] * b[1] - a[1] * b[0],
     ];
     let square = dot(cross, cross);
-    let (la, lb) = (dot(a, a).sqrt(), dot(b, b).sqrt());
-    let mut up = 0.0;
-    // A point on the line of the bound part feels nothing of it.
-    if square > 1e-20 * dot(bound, bound) * (la * la).max(lb * lb) {
-        up += cross[2] / square * (dot(bound, a) / la - dot(bound, b) / lb);
+    let lengths = from.length * to.length;
+    let longer = from.length.max(to.length);
+    // A point on the line of the bound part feels nothing of it. The inner leg comes from behind, the outer one goes there.
+    let legs = to.trailing - from.trailing;
+    if square > 1e-20 * dot(bound, bound) * (longer * longer) {
+        legs + cross[2] * (dot(bound, a) * to.length - dot(bound, b) * from.length)
+            / (square * lengths)
+    } else {
+        legs
     }
-    let trailing = |r: [f64; 3], length: f64| {
-        let square = r[1] * r[1] + r[2] * r[2];
-        if square == 0.0 {
-            0.0
-        } else {
-            r[1] / square * (1.0 + r[0] / length)
-        }
-    };
-    // The inner leg comes from behind, the outer one goes there.
-    up += -trailing(a, la) + trailing(b, lb);
-    -up / (4.0 * PI)
 }
 
 fn minus(a: [f64; 3], b: [f64; 3]) -> [f64; 3] {
