@@ -195,25 +195,33 @@ fn check(x: &[f64], z: &[f64]) -> Result<f64, Trouble> {
     if (1..n).any(|i| apart(i, i - 1) <= SAME * chord) {
         return Err(Trouble::Repeated);
     }
-    for i in 0..n - 1 {
-        for j in i + 2..n - 1 {
-            let ends = i == 0 && j == n - 2;
-            if !ends && crosses((x, z), i, j) {
-                return Err(Trouble::Crossing);
-            }
-        }
+    if crosses_itself(x, z) {
+        return Err(Trouble::Crossing);
     }
     Ok(chord)
 }
 
 /// Whether two panels cross.
-fn crosses((x, z): (&[f64], &[f64]), i: usize, j: usize) -> bool {
+fn crosses_itself(x: &[f64], z: &[f64]) -> bool {
+    let n = x.len();
     let side = |a: usize, b: usize, p: usize| {
         (x[b] - x[a]) * (z[p] - z[a]) - (z[b] - z[a]) * (x[p] - x[a])
     };
     let apart = |a: f64, b: f64| (a > 0.0 && b < 0.0) || (a < 0.0 && b > 0.0);
-    apart(side(i, i + 1, j), side(i, i + 1, j + 1))
-        && apart(side(j, j + 1, i), side(j, j + 1, i + 1))
+    (0..n - 1).any(|i| {
+        let mut before = if i + 2 < n {
+            side(i, i + 1, i + 2)
+        } else {
+            0.0
+        };
+        (i + 2..n - 1).any(|j| {
+            let after = side(i, i + 1, j + 1);
+            let astride = apart(before, after);
+            before = after;
+            let ends = i == 0 && j == n - 2;
+            astride && !ends && apart(side(j, j + 1, i), side(j, j + 1, i + 1))
+        })
+    })
 }
 
 fn farthest(x: &[f64], z: &[f64], from: (f64, f64)) -> (f64, f64) {
