@@ -332,6 +332,20 @@ impl Sheet {
         report::build(&input)
     }
 
+    /// One quantity as the report has it, with its values however many they are; `None` where nothing has that symbol.
+    /// Its values are `None` where there were too many to keep and they were not asked for when the sheet was opened.
+    ///
+    /// # Example
+    /// ```
+    /// let sheet = formulas::Sheet::open("S [ft^2] = 142\nq = 12 lb/ft^2\nF = q*S\n");
+    /// assert_eq!(sheet.quantity("F").unwrap().largest.unwrap().value, 1704.0);
+    /// assert!(sheet.quantity("G").is_none());
+    /// ```
+    #[must_use]
+    pub fn quantity(&self, symbol: &str) -> Option<report::Quantity> {
+        report::quantity_named(&self.program, &self.values, symbol)
+    }
+
     /// The rows of the computation form.
     #[must_use]
     pub fn form(&self) -> report::Form {

@@ -8,6 +8,7 @@ mod answer;
 mod assist;
 mod catalogue;
 mod desk;
+mod embedded;
 mod marks;
 mod panic;
 #[cfg(feature = "objects")]
@@ -22,6 +23,7 @@ pub use answer::evaluate;
 pub use assist::{complete, fix, hover};
 pub use catalogue::catalogue;
 pub use desk::{Desk, difference};
+pub use embedded::OpenSheet;
 pub use marks::{kinds, marks};
 pub use panic::last_panic;
 #[cfg(feature = "objects")]

@@ -1,5 +1,7 @@
 //! Sheets among the texts that JavaScript hands over.
 
+use std::collections::BTreeMap;
+
 use formulas::sheet::{Around, Sheet};
 use js_sys::{Array, Object, Reflect};
 
@@ -34,6 +36,11 @@ pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
 pub(crate) fn beside(sheets: Option<&Object>, name: &str) -> Option<String> {
     let sheets = sheets.filter(|sheets| Object::has_own(sheets, &name.into()))?;
     Reflect::get(sheets, &name.into()).ok()?.as_string()
+}
+
+/// The texts of an object by their names.
+pub(crate) fn texts(object: &Object) -> BTreeMap<String, String> {
+    entries(object).into_iter().collect()
 }
 
 /// The texts of an object by their names, in its order.

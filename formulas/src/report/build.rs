@@ -125,19 +125,31 @@ fn axis(axis: &program::Axis) -> Axis {
 
 fn quantities(input: &Input) -> Vec<Quantity> {
     let unknown = QuantityValues::default();
-    let pairs = input.program.quantities.iter().enumerate();
+    let program = input.program;
+    let pairs = program.quantities.iter().enumerate();
     pairs
         .filter(|(_, line)| line.listed)
         .filter_map(|(i, line)| {
             let found = input.values.quantities.get(i).unwrap_or(&unknown);
-            quantity(input, line, found)
+            quantity(program, input.asked, line, found)
         })
         .collect()
 }
 
+/// One quantity by itself, with its values however many they are, where its column was kept.
+pub(crate) fn quantity_named(program: &Program, values: &Values, symbol: &str) -> Option<Quantity> {
+    let mut lines = program.quantities.iter().zip(&values.quantities);
+    let (line, found) = lines.find(|(line, _)| line.listed && line.symbol == symbol)?;
+    quantity(program, &[symbol.to_owned()], line, found)
+}
+
 /// A record itself is none: its fields are.
-fn quantity(input: &Input, line: &program::Quantity, found: &QuantityValues) -> Option<Quantity> {
-    let program = input.program;
+fn quantity(
+    program: &Program,
+    asked: &[String],
+    line: &program::Quantity,
+    found: &QuantityValues,
+) -> Option<Quantity> {
     let kind = match line.kind {
         Kind::Number(_) => QuantityKind::Number,
         Kind::Condition => QuantityKind::Condition,
@@ -148,7 +160,7 @@ fn quantity(input: &Input, line: &program::Quantity, found: &QuantityValues) -> 
     let summary = summary_of(found);
     let number = kind == QuantityKind::Number;
     let end = |at| extreme(&program.axes, &found.shape, scale, at).filter(|_| number);
-    let written = is_written(input.asked, &line.symbol, found.shape.conditions());
+    let written = is_written(asked, &line.symbol, found.shape.conditions());
     Some(Quantity {
         symbol: line.symbol.clone(),
         line: line.line,

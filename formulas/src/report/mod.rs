@@ -17,6 +17,7 @@ mod sensitivity;
 pub mod svg;
 pub mod text;
 
+pub(crate) use build::quantity_named;
 pub use build::{Input, build};
 pub(crate) use convert::{Scale, condition};
 pub use form::{Form, FormRow, form};
