@@ -5,12 +5,13 @@ use std::fs;
 use crate::assemble::{self, Parts};
 use crate::bundle;
 use crate::failure::{Outcome, while_doing};
+use crate::package;
 use crate::paths::Paths;
 use crate::setup;
 use crate::wasm;
 
-/// Builds the page into `paths.output`, setting up what is missing first. Two builds of the same sources give the
-/// same bytes.
+/// Builds the page into `paths.output` and the package beside it, setting up what is missing first. Two builds of the same
+/// sources give the same bytes.
 ///
 /// # Errors
 /// When a tool is missing, or a step fails.
@@ -28,7 +29,8 @@ pub fn page(paths: &Paths) -> Outcome<()> {
         wasm: fs::read(&wasm).map_err(while_doing(format!("cannot read {}", wasm.display())))?,
         sheets: assemble::read_sheets(&paths.sheets)?,
     })?;
-    write(paths, &page)
+    write(paths, &page)?;
+    package::build(paths)
 }
 
 fn write(paths: &Paths, page: &str) -> Outcome<()> {

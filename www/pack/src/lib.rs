@@ -2,13 +2,15 @@
 //! puts everything into one HTML file that needs nothing else.
 //!
 //! In reading order: [`setup`] installs, [`wasm`] compiles, [`bundle`] checks and packs TypeScript and CSS,
-//! [`assemble`] writes the one file, [`build`] runs them in turn, [`opening`] shows the result.
+//! [`assemble`] writes the one file, [`package`] the package for other pages and for Node, [`build`] runs them in turn,
+//! [`opening`] shows the result.
 
 pub mod assemble;
 pub mod build;
 pub mod bundle;
 pub mod failure;
 pub mod opening;
+pub mod package;
 pub mod paths;
 pub mod setup;
 pub mod wasm;

@@ -1,0 +1,4 @@
+/** The package's entry. */
+import "./browser.js";
+
+export * from "./names.js";
