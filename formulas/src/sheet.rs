@@ -50,8 +50,8 @@ pub struct Sheet {
 /// What a sheet leaves to the one that follows an edit.
 struct Before {
     memo: Memo,
-    /// Its text and tree, where it needs them no more.
-    read: Option<(String, Tree)>,
+    /// Its text and tree.
+    read: (String, Tree),
 }
 
 /// Beside what, and within what limits, a sheet is worked out.
@@ -227,7 +227,7 @@ impl Sheet {
         );
         Before {
             memo: self.memo.take().unwrap_or_default(),
-            read: Some(read),
+            read,
         }
     }
 
@@ -244,10 +244,8 @@ impl Sheet {
             asked: &self.asked,
             editing: true,
         };
-        let mut reader = Reader::again(sheets, self.limits, &self.used);
-        if let Some((text, tree)) = before.read {
-            reader = reader.edited_from(text, tree);
-        }
+        let (old, tree) = before.read;
+        let reader = Reader::again(sheets, self.limits, &self.used).edited_from(old, tree);
         Self::read(text, &around, reader, Some(before.memo))
     }
 
@@ -463,22 +461,23 @@ impl Sheet {
     pub fn set(&mut self, symbol: &str, expression: &str) -> Result<(), String> {
         let text =
             crate::setting::replaced(&self.text, &self.tree, &self.program, symbol, expression)?;
-        let before = Before {
-            memo: self.memo.take().unwrap_or_default(),
-            read: None,
-        };
-        let mut other = self.again(&text, &|name| self.text_of(name), before);
-        let errors = |s: &Sheet| {
-            s.findings()
-                .into_iter()
-                .filter(|f| f.severity == diagnostics::Severity::Error)
-        };
-        let known: Vec<String> = errors(self).map(|f| f.message).collect();
-        if let Some(finding) = errors(&other).find(|f| !known.contains(&f.message)) {
-            self.memo = other.memo.take();
-            return Err(finding.message);
+        let known = self.errors();
+        let before = self.text.clone();
+        self.update(&text);
+        let found = self.errors();
+        if let Some(message) = found.into_iter().find(|m| !known.contains(m)) {
+            self.update(&before);
+            return Err(message);
         }
-        *self = other;
         Ok(())
+    }
+
+    /// What the errors among the findings say.
+    fn errors(&self) -> Vec<String> {
+        let findings = self.findings().into_iter();
+        findings
+            .filter(|finding| finding.severity == diagnostics::Severity::Error)
+            .map(|finding| finding.message)
+            .collect()
     }
 }
