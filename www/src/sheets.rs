@@ -5,12 +5,6 @@ use std::collections::BTreeMap;
 use formulas::sheet::{Around, Sheet};
 use js_sys::{Array, Object, Reflect};
 
-#[cfg(feature = "objects")]
-/// Opens a text; `sheets` holds the texts of other sheets by their names.
-pub(crate) fn open(text: &str, sheets: Option<&Object>) -> Sheet {
-    Sheet::open_with(text, &|name| beside(sheets, name))
-}
-
 /// Opens a text that is going to be edited.
 pub(crate) fn open_for_edits(text: &str, sheets: Option<&Object>) -> Sheet {
     let around = Around {
@@ -19,16 +13,6 @@ pub(crate) fn open_for_edits(text: &str, sheets: Option<&Object>) -> Sheet {
         ..Around::default()
     };
     Sheet::open_around(text, &around)
-}
-
-#[cfg(feature = "objects")]
-/// Reads and checks a text only.
-pub(crate) fn read(text: &str, sheets: Option<&Object>) -> Sheet {
-    let around = Around {
-        sheets: &|name| beside(sheets, name),
-        ..Around::default()
-    };
-    Sheet::open_unrun(text, &around)
 }
 
 /// The text of another sheet. An object of JavaScript answers to the names of its prototype too; only its own entries are

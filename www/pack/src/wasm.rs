@@ -47,7 +47,6 @@ fn compile(paths: &Paths) -> Outcome<PathBuf> {
         "--package",
         "www",
         "--lib",
-        "--no-default-features",
         "--profile",
         PROFILE,
         "--target",
