@@ -41,7 +41,7 @@ async function open(path) {
   return { page, context, asked, offences: () => offences.filter((text) => !text.includes("favicon")) };
 }
 
-const shown = (page, id = "one") => page.waitForFunction((of) => document.getElementById(of)?.result, id);
+const shown = (page, id = "one") => page.waitForFunction((of) => document.getElementById(of)?.result, id, { timeout: 10_000 });
 
 test("a plain page opens sheets, on its own thread and in another, with the bits that Node has", async () => {
   const { page, context, offences } = await open("/plain.html");

@@ -29,13 +29,13 @@ export const smallSheet = [
   "",
 ].join("\n");
 
-const TYPES = { ".html": "text/html", ".js": "text/javascript", ".mjs": "text/javascript", ".wasm": "application/wasm", ".pitchwright": "text/plain" };
+const TYPES = { ".html": "text/html; charset=utf-8", ".js": "text/javascript", ".wasm": "application/wasm" };
 
 /** Serves folders by the first part of the path, single texts, and a folder for the rest; gives the address and how to stop. */
 export function serve(folders, texts = {}, top = null) {
   const server = createServer((request, response) => {
     const path = normalize(decodeURIComponent(new URL(request.url, "http://localhost").pathname));
-    const send = (body) => response.writeHead(200, { "content-type": `${TYPES[extname(path)] ?? "text/plain"}; charset=utf-8` }).end(body);
+    const send = (body) => response.writeHead(200, { "content-type": TYPES[extname(path)] ?? "text/plain; charset=utf-8" }).end(body);
     const none = () => response.writeHead(404).end();
     if (path in texts) return send(texts[path]);
     const [, first, ...rest] = path.split("/");

@@ -11,7 +11,8 @@ async function compile(source: EngineSource | undefined): Promise<WebAssembly.Mo
   const address = source ?? new URL("./engine_bg.wasm", import.meta.url);
   const response = await fetch(typeof address === "string" ? address : address.href);
   if (!response.ok) throw new Error(`the engine is not at ${response.url}: ${response.status}`);
-  const streams = response.headers.get("content-type")?.startsWith("application/wasm") ?? false;
+  // Only this very type is taken as it streams in, and not every server has it.
+  const streams = response.headers.get("content-type") === "application/wasm";
   return streams ? WebAssembly.compileStreaming(response) : WebAssembly.compile(await response.arrayBuffer());
 }
 

@@ -46,11 +46,16 @@ function item(row: FormRow, around: Surroundings): HTMLTableRowElement {
   const wide = row.table ? el("td", { colspan: 1 + around.columns }, tableOf(row.table)) : el("td", { class: "how" }, how(row, around));
   return el("tr", { class: row.kind },
     el("td", { class: "item" }, row.item === null ? "" : String(row.item)),
-    el("th", { class: "symbol", scope: "row" }, row.table ? (row.word ?? "") : symbol),
+    head(row.table ? (row.word ?? "") : symbol),
     el("td", { class: "unit" }, unitOf(row, around)),
     wide,
     ...values,
     el("td", { class: "remark" }, marks(row, around), row.remark ?? ""));
+}
+
+/** What names the row; a row without a name has no head. */
+function head(symbol: string): HTMLTableCellElement {
+  return symbol === "" ? el("td", {}) : el("th", { class: "symbol", scope: "row" }, symbol);
 }
 
 function unitOf(row: FormRow, { shown }: Surroundings): string {
