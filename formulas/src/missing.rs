@@ -6,6 +6,9 @@ use crate::values::{EXCLUDED, NONE, is_excluded};
 
 const LOST_BITS: u64 = 0x7ff8_0000_0000_0100;
 
+/// The bits that hold the cause and two numbers of points.
+const NUMBERED: u64 = 0x0000_ffff_ffff_00ff;
+
 const CAUSES: [Cause; 13] = [
     Cause::DivisionByZero,
     Cause::Domain,
@@ -17,26 +20,39 @@ const CAUSES: [Cause; 13] = [
     Cause::NotCoded,
     Cause::Designation,
     Cause::ContourPoints,
-    Cause::ContourRepeated,
-    Cause::ContourCrossing,
+    Cause::ContourRepeated(0),
+    Cause::ContourCrossing(0, 0),
     Cause::ContourOpen,
 ];
 
 /// A value lost here, for a cause.
 #[must_use]
 pub fn lost(cause: Cause) -> f64 {
-    let at = CAUSES.iter().position(|c| *c == cause).unwrap_or(0);
-    f64::from_bits(LOST_BITS | at as u64)
+    let kind = std::mem::discriminant(&cause);
+    let same = |c: &Cause| std::mem::discriminant(c) == kind;
+    let at = CAUSES.iter().position(same).unwrap_or(0) as u64;
+    let (first, second) = match cause {
+        Cause::ContourRepeated(point) => (point, 0),
+        Cause::ContourCrossing(first, second) => (first, second),
+        _ => (0, 0),
+    };
+    f64::from_bits(LOST_BITS | at | u64::from(first) << 16 | u64::from(second) << 32)
 }
 
 /// The cause of a value lost in this line.
 #[must_use]
 pub fn cause(value: f64) -> Option<Cause> {
     let bits = value.to_bits();
-    if bits & !0xff != LOST_BITS {
+    if bits & !NUMBERED != LOST_BITS {
         return None;
     }
-    CAUSES.get((bits & 0xff) as usize).copied()
+    let cause = CAUSES.get((bits & 0xff) as usize).copied()?;
+    let (first, second) = ((bits >> 16) as u16, (bits >> 32) as u16);
+    Some(match cause {
+        Cause::ContourRepeated(_) => Cause::ContourRepeated(first),
+        Cause::ContourCrossing(..) => Cause::ContourCrossing(first, second),
+        _ => cause,
+    })
 }
 
 /// What a result becomes where an operand has no value: `none` wins over a fresh loss, and that over `excluded`.

@@ -73,10 +73,10 @@ pub enum Cause {
     Designation,
     /// A contour of too few points.
     ContourPoints,
-    /// A contour with two points at one place.
-    ContourRepeated,
-    /// A contour that crosses itself.
-    ContourCrossing,
+    /// A contour with two points at one place: the number of the later one, counted from 1; 0 where it is not known.
+    ContourRepeated(u16),
+    /// A contour that crosses itself, behind the points of these numbers.
+    ContourCrossing(u16, u16),
     /// A contour whose ends are apart.
     ContourOpen,
     /// Something that a set of rules does not have, or that is not coded.

@@ -15,10 +15,12 @@ const SAME: f64 = 1e-9;
 pub enum Trouble {
     /// Fewer than five points, or a coordinate that is no number.
     TooFew,
-    /// Two points at one place, other than the ends.
-    Repeated,
-    /// It crosses itself.
-    Crossing,
+    /// Two points at one place, other than the ends: that of this index and the one before.
+    Repeated(usize),
+    /// It crosses itself, behind the points of these indices.
+    Crossing(usize, usize),
+    /// The panels have no solution.
+    Singular,
     /// It does not come back to where it began.
     Open,
 }
@@ -117,7 +119,7 @@ impl Panels {
         }
         let kutta = &mut rows[count * size..];
         (kutta[0], kutta[count - 1]) = (1.0, 1.0);
-        let matrix = Factorised::new(rows, size).ok_or(Trouble::Repeated)?;
+        let matrix = Factorised::new(rows, size).ok_or(Trouble::Singular)?;
         let strength = |right: &[f64]| {
             let mut strength = matrix.solve(right);
             strength.truncate(count);
@@ -192,35 +194,37 @@ fn check(x: &[f64], z: &[f64]) -> Result<f64, Trouble> {
     if chord == 0.0 || apart(0, n - 1) > OPEN_MOST * chord {
         return Err(Trouble::Open);
     }
-    if (1..n).any(|i| apart(i, i - 1) <= SAME * chord) {
-        return Err(Trouble::Repeated);
+    if let Some(point) = (1..n).find(|i| apart(*i, i - 1) <= SAME * chord) {
+        return Err(Trouble::Repeated(point));
     }
-    if crosses_itself(x, z) {
-        return Err(Trouble::Crossing);
+    match crossing(x, z) {
+        Some((first, second)) => Err(Trouble::Crossing(first, second)),
+        None => Ok(chord),
     }
-    Ok(chord)
 }
 
-/// Whether two panels cross.
-fn crosses_itself(x: &[f64], z: &[f64]) -> bool {
+/// The first two panels that cross, by the points where they begin.
+fn crossing(x: &[f64], z: &[f64]) -> Option<(usize, usize)> {
     let n = x.len();
     let side = |a: usize, b: usize, p: usize| {
         (x[b] - x[a]) * (z[p] - z[a]) - (z[b] - z[a]) * (x[p] - x[a])
     };
     let apart = |a: f64, b: f64| (a > 0.0 && b < 0.0) || (a < 0.0 && b > 0.0);
-    (0..n - 1).any(|i| {
+    (0..n - 1).find_map(|i| {
         let mut before = if i + 2 < n {
             side(i, i + 1, i + 2)
         } else {
             0.0
         };
-        (i + 2..n - 1).any(|j| {
+        let crossed = |j: &usize| {
+            let j = *j;
             let after = side(i, i + 1, j + 1);
             let astride = apart(before, after);
             before = after;
             let ends = i == 0 && j == n - 2;
             astride && !ends && apart(side(j, j + 1, i), side(j, j + 1, i + 1))
-        })
+        };
+        (i + 2..n - 1).find(crossed).map(|j| (i, j))
     })
 }
 
@@ -445,14 +449,14 @@ mod tests {
                 x[5] = x[4];
                 z[5] = z[4];
             }),
-            Some(Trouble::Repeated)
+            Some(Trouble::Repeated(5))
         );
         assert_eq!(
             with(|x, z| {
                 x.swap(5, 8);
                 z.swap(5, 8);
             }),
-            Some(Trouble::Crossing)
+            Some(Trouble::Crossing(4, 8))
         );
         assert_eq!(
             with(|x, z| {

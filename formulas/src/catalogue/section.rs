@@ -56,12 +56,18 @@ fn thin(found: ThinSection) -> [f64; 5] {
     ]
 }
 
+/// The number of a point, counted from 1; 0 for one too far on to be told.
+fn number(index: usize) -> u16 {
+    u16::try_from(index + 1).unwrap_or(0)
+}
+
 /// What a contour that cannot be worked out is told.
 fn cause(trouble: Trouble) -> Cause {
     match trouble {
         Trouble::TooFew => Cause::ContourPoints,
-        Trouble::Repeated => Cause::ContourRepeated,
-        Trouble::Crossing => Cause::ContourCrossing,
+        Trouble::Repeated(point) => Cause::ContourRepeated(number(point)),
+        Trouble::Crossing(first, second) => Cause::ContourCrossing(number(first), number(second)),
+        Trouble::Singular => Cause::NoValue,
         Trouble::Open => Cause::ContourOpen,
     }
 }

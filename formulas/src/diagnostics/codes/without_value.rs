@@ -20,7 +20,23 @@ pub(super) fn draft(symbol: &str, cause: Cause, conditions: &Conditions) -> Draf
     Draft::says(message).about(conditions)
 }
 
-fn reason(cause: Cause) -> &'static str {
+fn reason(cause: Cause) -> String {
+    match cause {
+        Cause::ContourRepeated(point) if point > 1 => {
+            let before = point - 1;
+            format!("points {before} and {point} of the contour are at one place")
+        }
+        Cause::ContourCrossing(first, second) if first > 0 && second > 0 => {
+            let (after, later) = (first.saturating_add(1), second.saturating_add(1));
+            format!(
+                "the contour crosses itself between points {first} and {after} and between points {second} and {later}"
+            )
+        }
+        other => plain(other).to_owned(),
+    }
+}
+
+fn plain(cause: Cause) -> &'static str {
     match cause {
         Cause::DivisionByZero => "it divides by zero",
         Cause::Domain => "a function is given a number for which it has no value",
@@ -36,8 +52,8 @@ fn reason(cause: Cause) -> &'static str {
             "the designation is not one of four or five digits whose mean line is published"
         }
         Cause::ContourPoints => "a contour takes at least five points, all of them numbers",
-        Cause::ContourRepeated => "two points of the contour are at one place",
-        Cause::ContourCrossing => "the contour crosses itself",
+        Cause::ContourRepeated(_) => "two points of the contour are at one place",
+        Cause::ContourCrossing(..) => "the contour crosses itself",
         Cause::ContourOpen => "the contour does not come back to the trailing edge where it began",
     }
 }
@@ -68,6 +84,14 @@ mod tests {
         };
         for (cause, message) in [
             (Cause::DivisionByZero, "y has no value: it divides by zero."),
+            (
+                Cause::ContourRepeated(5),
+                "y has no value: points 4 and 5 of the contour are at one place.",
+            ),
+            (
+                Cause::ContourCrossing(2, 9),
+                "y has no value: the contour crosses itself between points 2 and 3 and between points 9 and 10.",
+            ),
             (
                 Cause::Domain,
                 "y has no value: a function is given a number for which it has no value.",
