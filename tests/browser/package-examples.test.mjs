@@ -64,9 +64,12 @@ test("a Rust program uses the engine alone", () => {
 });
 
 test("a Rust program runs a sheet", async () => {
-  const said = printed("cargo", "run", "--quiet", "--package", "formulas", "--example", "governing", "--", join(example, "tail.pitchwright"), "S_t", "12 ft^2");
+  const said = printed("cargo", "run", "--quiet", "--package", "formulas", "--example", "governing", "--", join(example, "tail.pitchwright"), "l_t", "10 ft");
   const sheet = await pitchwright.openSheet(sheetText);
   const [before] = sheet.values("P_t");
-  assert.ok(said.includes(`P_t = ${before} lb at cg fwd`), said);
+  assert.deepEqual(sheet.set("l_t", "10 ft"), []);
+  const [after] = sheet.values("P_t");
+  assert.notEqual(before, after);
+  for (const load of [before, after]) assert.ok(said.includes(`P_t = ${load} lb at cg fwd`), said);
   sheet.free();
 });
