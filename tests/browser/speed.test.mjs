@@ -76,6 +76,11 @@ test("a form of 2,000 rows under 200 conditions opens soon, scrolls, and takes k
   t.diagnostic(`a key in it keeps the page busy for a median of ${ms(median(taken))}`);
   assert.equal(taken.length, 10);
   assert.ok(median(taken) < 100);
+  // Paper gets all of it.
+  await page.evaluate(() => window.dispatchEvent(new Event("beforeprint")));
+  assert.ok(await page.locator("table.form > tbody").count() >= 2000);
+  await page.evaluate(() => window.dispatchEvent(new Event("afterprint")));
+  assert.ok(await page.locator("table.form > tbody").count() < 200);
   assert.deepEqual(offences, []);
   await browser.close();
 });

@@ -181,6 +181,12 @@ export class Form {
     this.#foot.querySelector("td")?.setAttribute("colspan", String(this.columns));
   }
 
+  /** Draws all rows, for paper, or again only those in the window. */
+  whole(whole: boolean): void {
+    this.#window.whole = whole;
+    if (this.#window.look(this.#views)) this.#redraw();
+  }
+
   /** Draws the rows that are in the window, and marks those that are chosen. */
   #redraw(): void {
     this.#arrange();

@@ -138,7 +138,9 @@ export class Page {
     for (const kind of ["copy", "cut", "paste"] as const) document.addEventListener(kind, (event) => this.#clipboard(event));
     window.addEventListener("beforeprint", () => {
       if (this.#report) preparePrint(this.#report);
+      this.#form.whole(true);
     });
+    window.addEventListener("afterprint", () => this.#form.whole(false));
     window.addEventListener("beforeunload", (event) => {
       if (!this.#store.works && this.#sheet.text !== this.#saved) event.preventDefault();
     });

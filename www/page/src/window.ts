@@ -21,6 +21,7 @@ export class RowWindow {
   #from = 0;
   #to = Infinity;
   #asked = false;
+  #whole = false;
 
   /** `moved` is called when other rows have come into the window. */
   constructor(table: HTMLTableElement, moved: () => void) {
@@ -42,10 +43,15 @@ export class RowWindow {
     return position >= this.#from && position < this.#to;
   }
 
+  /** Has all rows stand in the document, as paper wants them, or only those about the window. */
+  set whole(whole: boolean) {
+    this.#whole = whole;
+  }
+
   /** Looks where the window stands over `rows`; gives whether other rows are in it than before. */
   look(rows: readonly Tall[]): boolean {
     const before = [this.#from, this.#to];
-    if (rows.length <= WHOLE_MOST) {
+    if (this.#whole || rows.length <= WHOLE_MOST) {
       this.#from = 0;
       this.#to = Infinity;
     } else {
