@@ -1,7 +1,7 @@
 /** Figures, free bodies and starting sheets. */
 import assert from "node:assert/strict";
 import { after, before, test } from "node:test";
-import { launch, openPage, settled, sheetText, startingSheet } from "./support.mjs";
+import { launch, openPage, settled, sheetText, startingSheet, valuesOf } from "./support.mjs";
 
 let browser;
 before(async () => {
@@ -45,4 +45,12 @@ test("a starting sheet is chosen by its title, and the way back to the one befor
   await settled(page);
   assert.notEqual(await sheetText(page), startingSheet);
   assert.match(await page.locator(".box.title .content").textContent(), /boom/i);
+}));
+
+test("a starting sheet that uses others has their values", () => withPage(async (page) => {
+  await page.getByLabel("Starting sheets").selectOption("osier-tail-summary");
+  await page.waitForFunction(() => document.querySelector("table.form").textContent.includes("Greatest limit loads by cause"));
+  await page.waitForFunction(() => !document.querySelector("table.form").textContent.includes("There is no sheet"));
+  await settled(page);
+  assert.match((await valuesOf(page, "P_limit_down")).join(" "), /^-\d+/);
 }));

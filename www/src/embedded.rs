@@ -1,5 +1,5 @@
 //! A sheet that a program has open: the same operations as in Rust, for whoever embeds the engine. What is asked for comes
-//! as JSON in one piece or as typed arrays; what went wrong is thrown as the JSON of one finding.
+//! as JSON in one piece or as typed arrays; what went wrong is thrown as one finding, a plain object.
 
 use std::collections::BTreeMap;
 use std::fmt::Display;
@@ -318,7 +318,9 @@ fn fault(code: &'static str, line: u32, message: impl Display) -> JsValue {
         conditions: None,
         fixes: Vec::new(),
     };
-    write_any(&finding).unwrap_or_default().into()
+    let objects = serde_wasm_bindgen::Serializer::json_compatible();
+    let thrown = finding.serialize(&objects);
+    thrown.unwrap_or_else(|error| error.to_string().into())
 }
 
 fn write<T: Serialize>(answer: &T) -> Result<String, JsValue> {

@@ -19,18 +19,14 @@ export function finding(code: string, message: string): Finding {
   return { severity: "error", code, line: 1, column: 1, length: 0, column16: 1, length16: 0, message, conditions: null, fixes: [] };
 }
 
-/** What the engine threw, as an error with a finding: it throws the JSON of one, or breaks off. */
+/** What the engine threw, as an error with a finding: it throws a finding, a sentence, or breaks off. */
 export function errorOf(thrown: unknown, broke: () => string | undefined): Error {
   if (thrown instanceof SheetError || thrown instanceof TypeError) return thrown;
-  const told = typeof thrown === "string" ? toldBy(thrown) : null;
-  if (told) return new SheetError(told);
+  if (isFinding(thrown)) return new SheetError(thrown);
+  if (typeof thrown === "string") return new SheetError(finding("engine-failure", thrown));
   return new SheetError(finding("engine-failure", `The engine broke off: ${broke() ?? String(thrown)}`));
 }
 
-function toldBy(text: string): Finding | null {
-  try {
-    return JSON.parse(text) as Finding;
-  } catch {
-    return finding("engine-failure", text);
-  }
+function isFinding(thrown: unknown): thrown is Finding {
+  return typeof thrown === "object" && thrown !== null && "code" in thrown && "fixes" in thrown;
 }

@@ -2,13 +2,12 @@
 
 use std::fmt::Write as _;
 use std::fs;
-use std::io::Write as _;
 use std::path::Path;
 
 use base64::Engine as _;
 use base64::engine::general_purpose::STANDARD;
-use flate2::{Compression, GzBuilder};
 use sha2::{Digest, Sha256};
+use zopfli::{Format, Options};
 
 use crate::bundle::Bundle;
 use crate::failure::{Failure, Outcome, while_doing};
@@ -116,13 +115,10 @@ fn packed(bytes: &[u8]) -> Outcome<String> {
 }
 
 fn gzip(bytes: &[u8]) -> Outcome<Vec<u8>> {
-    let mut encoder = GzBuilder::new().write(Vec::new(), Compression::best());
-    encoder
-        .write_all(bytes)
+    let mut out = Vec::new();
+    zopfli::compress(Options::default(), Format::Gzip, bytes, &mut out)
         .map_err(while_doing("cannot pack a part of the page"))?;
-    encoder
-        .finish()
-        .map_err(while_doing("cannot pack a part of the page"))
+    Ok(out)
 }
 
 /// The sheet that the page opens with, and the titles of all, as JSON.

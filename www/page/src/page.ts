@@ -43,6 +43,8 @@ export class Page {
   #draft: Draft;
   #own: OwnSheet;
   #shelf: Promise<Record<string, string>> | null = null;
+  /** The texts of the starting sheets, once they are unpacked. */
+  #beside: Record<string, string> | null = null;
   #store: Store;
   #engine: Engine;
   #serial = 0;
@@ -125,9 +127,14 @@ export class Page {
     return this.#store.last() ?? { id: newId(), name: null, text };
   }
 
+  /** The starting sheets, unpacked when they are asked for. */
+  #unpackShelf(): Promise<Record<string, string>> {
+    this.#shelf ??= unpack("shelf").then((json) => (this.#beside = JSON.parse(json) as Record<string, string>));
+    return this.#shelf;
+  }
+
   async #start(name: string): Promise<void> {
-    this.#shelf ??= unpack("shelf").then((json) => JSON.parse(json) as Record<string, string>);
-    const text = (await this.#shelf)[name];
+    const text = (await this.#unpackShelf())[name];
     if (text !== undefined) this.#begin({ id: newId(), name: null, text });
   }
 
@@ -149,10 +156,21 @@ export class Page {
   /** Every change of the text comes through here: it is kept, and worked out. */
   #changed(): void {
     this.#changedAt = performance.now();
-    this.#engine.evaluate(++this.#serial, this.#sheet.text, null);
+    this.#engine.evaluate(++this.#serial, this.#sheet.text, this.#others());
     this.#draft.text = this.#sheet.text;
     this.#store.keep(this.#draft);
     document.documentElement.dataset["asked"] = String(this.#serial);
+  }
+
+  /** The sheets that this one may use: kept ones by their file names, before the starting sheets. Null where it uses none. */
+  #others(): Record<string, string> | null {
+    if (!/^[ \t]*use[ \t]/m.test(this.#sheet.text)) return null;
+    if (this.#beside === null) {
+      // They are unpacked first; what is worked out without them till then is passed over.
+      void this.#unpackShelf().then(() => this.#changed());
+      return null;
+    }
+    return { ...this.#beside, ...this.#store.named(this.#draft.id) };
   }
 
   #received(report: Report, serial: number): void {

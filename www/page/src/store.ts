@@ -65,6 +65,17 @@ export class Store {
     }
   }
 
+  /** The texts of kept sheets by their file names without ending, that of `id` left out. */
+  named(id: string): Record<string, string> {
+    const texts: Record<string, string> = Object.create(null) as Record<string, string>;
+    const keys = this.#try(() => Object.keys(localStorage)) ?? [];
+    for (const key of keys.filter((each) => each.startsWith(SHEET_PREFIX)).sort()) {
+      const draft = this.read(key.slice(SHEET_PREFIX.length));
+      if (draft?.name && draft.id !== id) texts[draft.name.replace(/\.pitchwright$/, "")] = draft.text;
+    }
+    return texts;
+  }
+
   /** Keeps `draft` as this window's sheet. */
   keep(draft: Draft): void {
     this.#current = draft.id;
