@@ -1,5 +1,5 @@
-//! `cargo bench --package tests`: the workloads beside their floors. Every ratio is the median of samples in one run, each to
-//! the floor just before and just after it; names as arguments choose workloads. What the numbers mean, and what was
+//! `cargo bench --package tests`: the workloads beside their floors. A sample is the quickest of three, a ratio the median
+//! of nine samples in one run, each to the floor just before and just after it; names as arguments choose workloads. What the numbers mean, and what was
 //! tried, stands in the contributors' guide.
 
 mod envelope;
@@ -37,7 +37,7 @@ fn main() {
     );
     let targets = [(10.0, 4.0), (6.0, 3.5), (4.5, 2.5), (4.5, 2.5), (4.5, 2.3)];
     for ((name, lengths), target) in SIZES.into_iter().zip(targets) {
-        let conditions: usize = lengths.iter().product();
+        let conditions = conditions_of(lengths);
         let title = format!("envelope {name}, {conditions} conditions");
         if asked(&title) {
             envelope_at(&title, lengths, name != 'e', target);
@@ -69,6 +69,10 @@ fn main() {
     }
 }
 
+fn conditions_of(lengths: [usize; 5]) -> usize {
+    lengths.iter().product()
+}
+
 /// The envelope sheet's plan, run again: what an edit of an input costs once the text is read.
 fn envelope_at(title: &str, lengths: [usize; 5], stored: bool, target: (f64, f64)) {
     let (program, plan) = planned(&envelope::text(lengths));
@@ -84,6 +88,22 @@ fn envelope_at(title: &str, lengths: [usize; 5], stored: bool, target: (f64, f64
         let ours = ours.expect("P has values");
         let near = (ours.value - floor.0).abs() <= 1e-9 * floor.0.abs();
         assert!(near && ours.condition == floor.1, "{ours:?}, not {floor:?}");
+    }
+    // By a plain loop over the conditions, one at a time, with every division written out.
+    let known = match conditions_of(lengths) {
+        8 => Some(((1_223.215_676_821_171_4, 5), (-3_493.750_680_984_763_7, 3))),
+        1000 => Some((
+            (1_320.230_157_925_816_5, 454),
+            (-3_493.750_680_984_763_7, 799),
+        )),
+        _ => None,
+    };
+    for (known, found) in known
+        .into_iter()
+        .flat_map(|(high, low)| [(high, found.largest), (low, found.smallest)])
+    {
+        let near = (known.0 - found.0).abs() <= 1e-9 * known.0.abs();
+        assert!(near && known.1 == found.1, "{found:?}, not {known:?}");
     }
     let ratio = compared(
         &mut || {
