@@ -1,5 +1,5 @@
 /** What the engine offers while a row or the sheet text is typed: what could stand there, what stands there, and fixes. */
-import { acceptCompletion, autocompletion, completionStatus, moveCompletionSelection, selectedCompletion, snippet, type Completion as Offer, type CompletionContext, type CompletionResult } from "@codemirror/autocomplete";
+import { acceptCompletion, autocompletion, closeCompletion, completionKeymap, completionStatus, moveCompletionSelection, selectedCompletion, snippet, type Completion as Offer, type CompletionContext, type CompletionResult } from "@codemirror/autocomplete";
 import { Prec, type Extension } from "@codemirror/state";
 import { EditorView, hoverTooltip, keymap, type Tooltip } from "@codemirror/view";
 import type { Completion, Completions, Hover } from "./answers.js";
@@ -25,8 +25,14 @@ export function assisting(assistance: Assistance, firstLine: () => number): Exte
       selectOnOpen: false,
       icons: false,
       interactionDelay: 0,
+      defaultKeymap: false,
     }),
-    Prec.highest(keymap.of([{ key: "Tab", run: takeOffer }])),
+    Prec.highest(keymap.of([
+      { key: "Tab", run: takeOffer },
+      // While offers are only being looked for, Escape is the row's.
+      { key: "Escape", run: (view) => completionStatus(view.state) === "active" && closeCompletion(view) },
+      ...completionKeymap.filter(({ key }) => key !== "Escape"),
+    ])),
     hoverTooltip((view, at) => told(view, at, assistance, firstLine()), { hoverTime: 350 }),
   ];
 }
