@@ -311,6 +311,12 @@ impl Sheet {
         self.reported(asked, false)
     }
 
+    /// What [`Sheet::report_undrawn`] leaves out: the figures, and the free bodies with their drawings.
+    #[must_use]
+    pub fn drawings(&self) -> (Vec<report::Figure>, Vec<report::Freebody>) {
+        report::drawings(&self.tree, &self.program, &self.values)
+    }
+
     fn reported(&self, asked: &[String], drawn: bool) -> Report {
         let findings = self.findings();
         let input = report::Input {

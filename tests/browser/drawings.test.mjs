@@ -1,20 +1,9 @@
 /** Figures, free bodies and starting sheets. */
 import assert from "node:assert/strict";
-import { after, before, test } from "node:test";
-import { launch, openPage, settled, sheetText, startingSheet, valuesOf } from "./support.mjs";
+import { test } from "node:test";
+import { pages, settled, sheetText, startingSheet, valuesOf } from "./support.mjs";
 
-let browser;
-before(async () => {
-  browser = await launch();
-});
-after(() => browser.close());
-
-async function withPage(run, options) {
-  const { page, context, offences } = await openPage(browser, options);
-  await run(page, context);
-  assert.deepEqual(offences, []);
-  await context.close();
-}
+const withPage = pages();
 
 test("figures and free bodies are drawn, and one is saved as a file", () => withPage(async (page) => {
   const drawings = page.locator(".drawings figure");

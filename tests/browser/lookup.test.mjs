@@ -1,20 +1,10 @@
 /** What is looked up beside the form: trails, the catalogue, and what is offered while one types. */
 import assert from "node:assert/strict";
-import { after, before, test } from "node:test";
-import { launch, openPage, rowOf, settled, sheetText, valuesOf } from "./support.mjs";
+import { test } from "node:test";
+import { pages, rowOf, settled, sheetText, valuesOf } from "./support.mjs";
 
-let browser;
-before(async () => {
-  browser = await launch();
-});
-after(() => browser.close());
-
-async function withPage(run, options) {
-  const { page, context, offences } = await openPage(browser, options);
-  await run(page, page.locator("aside.slip"));
-  assert.deepEqual(offences, []);
-  await context.close();
-}
+const onPage = pages();
+const withPage = (run, options) => onPage((page) => run(page, page.locator("aside.slip")), options);
 
 test("a value shows how it came about, and each thing it rests on is followed", () => withPage(async (page, slip) => {
   await rowOf(page, "P_t").locator("td.value").nth(2).click();

@@ -3,23 +3,13 @@ import assert from "node:assert/strict";
 import { mkdtempSync, readFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { after, before, test } from "node:test";
+import { test } from "node:test";
 import { pathToFileURL } from "node:url";
-import { launch, openPage, rowOf, settled, sheetText, startingSheet, valuesOf } from "./support.mjs";
+import { pages, rowOf, settled, sheetText, startingSheet, valuesOf } from "./support.mjs";
 
-let browser;
 const folder = mkdtempSync(join(tmpdir(), "pitchwright-"));
-before(async () => {
-  browser = await launch();
-});
-after(() => browser.close());
-
-async function withPage(run, options) {
-  const { page, context, offences } = await openPage(browser, { acceptDownloads: true, ...options });
-  await run(page, page.locator("aside.slip"), context);
-  assert.deepEqual(offences, []);
-  await context.close();
-}
+const onPage = pages({ acceptDownloads: true });
+const withPage = (run, options) => onPage((page, context) => run(page, page.locator("aside.slip"), context), options);
 
 async function downloaded(page, button) {
   const [download] = await Promise.all([page.waitForEvent("download"), button.click()]);

@@ -1,20 +1,9 @@
 /** Working on rows by keyboard and mouse. */
 import assert from "node:assert/strict";
-import { after, before, test } from "node:test";
-import { launch, openPage, rowOf, settled, sheetText, startingSheet, typeRows, valuesOf } from "./support.mjs";
+import { test } from "node:test";
+import { pages, rowOf, settled, sheetText, startingSheet, typeRows, valuesOf } from "./support.mjs";
 
-let browser;
-before(async () => {
-  browser = await launch();
-});
-after(() => browser.close());
-
-async function withPage(run, options) {
-  const { page, context, offences } = await openPage(browser, options);
-  await run(page, context);
-  assert.deepEqual(offences, []);
-  await context.close();
-}
+const withPage = pages();
 
 async function openRow(page, symbol) {
   await rowOf(page, symbol).locator("td.how").first().click();

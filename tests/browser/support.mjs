@@ -1,6 +1,8 @@
 /** What the browser tests share: the built page in a real browser, its rows, and the command line's answers. */
+import assert from "node:assert/strict";
 import { spawnSync } from "node:child_process";
 import { readFileSync } from "node:fs";
+import { after, before } from "node:test";
 import { fileURLToPath, pathToFileURL } from "node:url";
 import { chromium } from "playwright-core";
 
@@ -33,6 +35,24 @@ export async function openPage(browser, { prepare, ...options } = {}) {
   await page.goto(pathToFileURL(pageFile).href);
   await settled(page);
   return { page, context, offences };
+}
+
+/**
+ * One browser for all tests of a file. Gives what runs a test on a fresh page of it, and demands in the end that the page
+ * complained of nothing and asked for nothing.
+ */
+export function pages(defaults = {}) {
+  let browser;
+  before(async () => {
+    browser = await launch();
+  });
+  after(() => browser.close());
+  return async (run, options) => {
+    const { page, context, offences } = await openPage(browser, { ...defaults, ...options });
+    await run(page, context);
+    assert.deepEqual(offences, []);
+    await context.close();
+  };
 }
 
 /** Waits until the values belong to the text as it is now. */

@@ -3,22 +3,10 @@
 use formulas::Sheet;
 use formulas::diagnostics::Severity;
 use formulas::report::Report;
-use std::collections::BTreeMap;
-use std::path::Path;
 
 /// The reports of all starting sheets, by the name of their file; they may use one another.
 fn reports() -> Vec<(String, Report)> {
-    let folder = Path::new(env!("CARGO_MANIFEST_DIR")).join("../www/sheets");
-    let paths = std::fs::read_dir(folder)
-        .expect("the starting sheets")
-        .map(|entry| entry.expect("an entry").path())
-        .filter(|path| path.extension().is_some_and(|e| e == "pitchwright"));
-    let read = |path: std::path::PathBuf| {
-        let text = std::fs::read_to_string(&path).expect("a sheet");
-        let name = path.file_stem().and_then(|n| n.to_str()).unwrap_or("");
-        (name.to_owned(), text)
-    };
-    let texts: BTreeMap<String, String> = paths.map(read).collect();
+    let texts = tests::starting::sheets();
     let open = |text: &String| Sheet::open_with(text, &|other| texts.get(other).cloned());
     texts
         .iter()

@@ -7,4 +7,5 @@ pub mod mutate;
 pub mod outside;
 pub mod random;
 pub mod schema;
+pub mod starting;
 pub mod xml;

@@ -10,7 +10,6 @@ use formulas::parse::parse;
 use formulas::report::{Quantity, Report};
 use formulas::syntax::Statement;
 use std::collections::BTreeSet;
-use std::path::Path;
 
 /// A promise of a stage for any text.
 pub type Target = fn(&str) -> Result<(), String>;
@@ -36,13 +35,7 @@ pub fn corpus() -> Vec<String> {
         let text = std::fs::read_to_string(file).expect("a case file");
         all.extend(cases(&text).into_iter().map(|case| case.sheet));
     }
-    let folder = Path::new(env!("CARGO_MANIFEST_DIR")).join("../www/sheets");
-    let entries = std::fs::read_dir(folder).expect("the folder of starting sheets");
-    let mut paths: Vec<_> = entries.filter_map(|e| Some(e.ok()?.path())).collect();
-    paths.retain(|p| p.extension().is_some_and(|e| e == "pitchwright"));
-    paths.sort();
-    let read = |path| std::fs::read_to_string(path).expect("a starting sheet");
-    all.extend(paths.into_iter().map(read));
+    all.extend(crate::starting::sheets().into_values());
     all
 }
 

@@ -93,10 +93,8 @@ impl Desk {
     /// # Errors
     /// Only where the JSON cannot be written.
     pub fn drawings(&self) -> Result<String, JsValue> {
-        let report = self.sheet.as_ref().map(|sheet| sheet.report(&[]));
-        let (figures, freebodies) = report.as_ref().map_or((&[][..], &[][..]), |report| {
-            (&report.figures[..], &report.freebodies[..])
-        });
+        let drawn = self.sheet.as_ref().map(Sheet::drawings);
+        let (figures, freebodies) = drawn.unwrap_or_default();
         write(&Drawings {
             figures: figures.iter().map(figure).collect(),
             freebodies: freebodies.iter().filter_map(freebody).collect(),

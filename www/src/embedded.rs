@@ -113,14 +113,7 @@ impl OpenSheet {
     /// # Errors
     /// A finding where nothing has that symbol, or it stands for text.
     pub fn values(&mut self, symbol: &str) -> Result<Vec<f64>, JsValue> {
-        let quantity = self.quantity(symbol)?;
-        numbers(quantity.values).ok_or_else(|| {
-            fault(
-                "no-numbers",
-                quantity.line,
-                format!("{symbol} is text, and has no numbers."),
-            )
-        })
+        Ok(self.numbered(symbol)?.1)
     }
 
     /// The same at some labels only, over the axes that are left. `condition` holds labels by the names of axes.
@@ -128,8 +121,7 @@ impl OpenSheet {
     /// # Errors
     /// As for [`OpenSheet::values`], and where the quantity does not vary over such an axis or it has no such label.
     pub fn slice(&mut self, symbol: &str, condition: &Object) -> Result<Vec<f64>, JsValue> {
-        let mut left = self.values(symbol)?;
-        let quantity = self.quantity(symbol)?;
+        let (quantity, mut left) = self.numbered(symbol)?;
         let mut axes = self.lengths(&quantity.axes);
         for (name, label) in sheets::entries(condition) {
             let at = axes.iter().position(|(axis, _)| *axis == name);
@@ -205,6 +197,16 @@ impl OpenSheet {
     #[must_use]
     pub fn print(&self) -> String {
         self.sheet.print()
+    }
+
+    /// The quantity, and its values as numbers taken out of it.
+    fn numbered(&mut self, symbol: &str) -> Result<(Quantity, Vec<f64>), JsValue> {
+        let mut quantity = self.quantity(symbol)?;
+        let values = numbers(quantity.values.take()).ok_or_else(|| {
+            let message = format!("{symbol} is text, and has no numbers.");
+            fault("no-numbers", quantity.line, message)
+        })?;
+        Ok((quantity, values))
     }
 
     /// The quantity with its values.

@@ -190,14 +190,12 @@ pub(super) fn numbers<T: Typed>(line: Vec<T>) -> Vec<f64> {
 
 /// The row with the range where its method holds.
 pub(super) const fn within(holds: fn(&[f64]) -> bool, advice: &'static str, entry: Entry) -> Entry {
-    Entry {
-        validity: Some(Validity {
-            holds,
-            advice,
-            lines: &[],
-        }),
-        ..entry
-    }
+    within_lines(&[], holds, advice, entry)
+}
+
+/// Whether the flow can stay on a wing or section at an angle of attack; 15 degrees and a rounding of it.
+pub(super) fn attached(alpha: f64) -> bool {
+    alpha.abs() <= 0.262
 }
 
 /// A function of whole lines with the range in which it holds, by one value of each line that is listed.

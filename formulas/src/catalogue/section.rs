@@ -1,8 +1,8 @@
 //! Sections: thin-airfoil theory, ordinates, flaps, vortex panels.
 
 use super::macros::{
-    Argument, along, at, each, entry, field, field_of, line, made, numbers, of_first, one,
-    parameter, put_along, within, within_lines,
+    Argument, along, at, attached, each, entry, field, field_of, line, made, numbers, of_first,
+    one, parameter, put_along, within, within_lines,
 };
 use super::row::{Compute, Entry, Extreme, Field, Makes, Parameter, Prepared, Wants};
 use crate::missing::lost;
@@ -137,7 +137,7 @@ pub(super) static ROWS: &[Entry] = &[
              top = max(s.z)\n")
     },
     within(
-        |given| at(given, 2).abs() <= 0.262,
+        |given| attached(at(given, 2)),
         "the method holds for attached flow, angles of attack up to about 15 degrees",
         entry!(GROUP, section_flow,
         &[coordinate("x"), coordinate("z"), parameter!(alpha: Angle)],

@@ -1,8 +1,8 @@
 //! Wing and body: lift slopes, the lifting line, wing moments, spanwise loads, moments of bodies.
 
 use super::macros::{
-    Argument, along, at, each, entry, field, line, made, numbers, one, parameter, points, positive,
-    put_along, trap, within, within_lines,
+    Argument, along, at, attached, each, entry, field, line, made, numbers, one, parameter, points,
+    positive, put_along, trap, within, within_lines,
 };
 use super::row::{Compute, Entry, Extreme, Field, Line, Makes, Parameter, Prepared, Wants};
 use engine::body;
@@ -16,11 +16,6 @@ const STATIONS: &str = "Stations of one half from root to tip, everything straig
 const LATTICE: &str = "J. J. Bertin and M. L. Smith, Aerodynamics for Engineers (vortex lattice)";
 
 const REFLEXED: &str = "sections with an angle of no lift below 0 have a moment below 0 too, nose down, unless they are reflexed";
-
-/// Whether the flow can stay on a wing at an angle of attack; 15 degrees and a rounding of it.
-fn attached(alpha: f64) -> bool {
-    alpha.abs() <= 0.262
-}
 
 /// The text by which stations are told apart.
 const SURFACE: Parameter = Parameter {

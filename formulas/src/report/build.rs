@@ -5,8 +5,8 @@ use super::figure::figures;
 use super::requirement::{freebodies, requirements};
 use super::sensitivity;
 use super::{
-    Axis, FORMAT, Governing, GoverningGroup, OtherSheet, Quantity, QuantityKind, Report, Spread,
-    TitleBlock, ValueList, WRITTEN_MOST,
+    Axis, FORMAT, Figure, Freebody, Governing, GoverningGroup, OtherSheet, Quantity, QuantityKind,
+    Report, Spread, TitleBlock, ValueList, WRITTEN_MOST,
 };
 use crate::axes::{AxisId, Shape};
 use crate::diagnostics::Finding;
@@ -67,6 +67,15 @@ pub fn build(input: &Input) -> Report {
             _ => crate::numbers::DIGITS,
         },
     }
+}
+
+/// Figures and free bodies alone, all drawn.
+#[must_use]
+pub fn drawings(tree: &Tree, program: &Program, values: &Values) -> (Vec<Figure>, Vec<Freebody>) {
+    (
+        figures(tree, program, values),
+        freebodies(tree, program, values, true),
+    )
 }
 
 /// SHA-256 of the text, in lower-case hexadecimal digits.

@@ -18,7 +18,7 @@ pub mod svg;
 pub mod text;
 
 pub(crate) use build::quantity_named;
-pub use build::{Input, build};
+pub use build::{Input, build, drawings};
 pub(crate) use convert::{Scale, condition};
 pub use form::{Form, FormRow, form};
 

@@ -117,7 +117,6 @@ impl pulp::WithSimd for Quotients<'_> {
             let r = simd.negate_mul_add_f64s(q, b, a);
             simd.mul_add_f64s(r, y, q)
         };
-        let mut rest_fits = true;
         match self.divisor {
             Divisor::Value(b, y) => {
                 let (wide_b, wide_y) = (simd.splat_f64s(b), simd.splat_f64s(y));
@@ -130,17 +129,16 @@ impl pulp::WithSimd for Quotients<'_> {
             }
             Divisor::Block(b, y) => {
                 let (b, b_rest) = S::as_simd_f64s(&b[..n]);
-                let (y, y_rest) = S::as_simd_f64s(&y[..n]);
+                let (y, _) = S::as_simd_f64s(&y[..n]);
                 for (((out, a), b), y) in out.iter_mut().zip(a).zip(b).zip(y) {
                     *out = quotient(*a, *b, *y, &mut least);
                 }
                 for ((out, a), b) in out_rest.iter_mut().zip(a_rest).zip(b_rest) {
                     *out = a / b;
                 }
-                rest_fits = y_rest.len() == b_rest.len();
             }
         }
-        rest_fits && simd.reduce_min_f64s(least) >= NUMERATOR_LEAST
+        simd.reduce_min_f64s(least) >= NUMERATOR_LEAST
     }
 }
 

@@ -1,6 +1,6 @@
 /** The element `<pitch-sheet>`: a sheet in any page. */
 import "./browser.js";
-import { el } from "./dom.js";
+import { el } from "../../page/src/dom.js";
 import { SheetError } from "./errors.js";
 import { openSheet } from "./open.js";
 import type { Setting, Sheet } from "./sheet.js";

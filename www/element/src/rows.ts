@@ -1,7 +1,7 @@
 /** The rows of the computation form in the element. */
 import { signed, shown as numberText } from "../../page/src/numbers.js";
 import { governs, inWords, isGoverning, positionOf, type Shown } from "./choosing.js";
-import { el } from "./dom.js";
+import { el } from "../../page/src/dom.js";
 import type { Condition, Extreme, Finding, FormRow, FormTable, Quantity, Requirement } from "./types.js";
 
 /** A finding with its number in the list at the foot. */

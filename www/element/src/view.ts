@@ -1,6 +1,6 @@
 /** A sheet as nodes: title, conditions, form, findings, figures. */
 import { othersOf, shownBy, type Shown } from "./choosing.js";
-import { el } from "./dom.js";
+import { el } from "../../page/src/dom.js";
 import { rowOf, type Numbered, type Surroundings } from "./rows.js";
 import type { Form, Result } from "./types.js";
 

@@ -1,5 +1,5 @@
 /** The person's sheets in the browser's store, each with its revisions, and the one file that holds them all. */
-import { SHEET_PREFIX, type Draft } from "./store.js";
+import { keptDrafts, parsed, SHEET_PREFIX, type Draft } from "./store.js";
 
 /** A sheet as it stood when its revision was kept. */
 export interface Revision {
@@ -18,10 +18,7 @@ const REVISIONS_PREFIX = "pitchwright:revisions:";
 
 /** All kept sheets, by their titles. */
 export function sheets(): Draft[] {
-  const keys = Array.from({ length: localStorage.length }, (_, index) => localStorage.key(index) ?? "");
-  const ids = keys.filter((key) => key.startsWith(SHEET_PREFIX)).map((key) => key.slice(SHEET_PREFIX.length));
-  const found = ids.flatMap((id) => read(id) ?? []);
-  return found.sort((a, b) => titleOf(a).localeCompare(titleOf(b), "en") || a.id.localeCompare(b.id, "en"));
+  return keptDrafts().sort((a, b) => titleOf(a).localeCompare(titleOf(b), "en") || a.id.localeCompare(b.id, "en"));
 }
 
 /** What a sheet is called: its title line, else its file's name. */
@@ -73,21 +70,7 @@ export function bringIn(text: string, newId: () => string): number | null {
   return found.length;
 }
 
-function read(id: string): Draft | null {
-  const kept = parsed(localStorage.getItem(SHEET_PREFIX + id)) as Partial<Draft> | null;
-  if (typeof kept?.text !== "string") return null;
-  return { id, text: kept.text, name: typeof kept.name === "string" ? kept.name : null };
-}
-
 function revision(kept: unknown): Revision | null {
   const { at, revision: word, text } = (kept ?? {}) as Partial<Revision>;
   return typeof text === "string" ? { at: String(at ?? ""), revision: String(word ?? ""), text } : null;
-}
-
-function parsed(text: string | null): unknown {
-  try {
-    return text === null ? null : JSON.parse(text);
-  } catch {
-    return null;
-  }
 }

@@ -55,23 +55,14 @@ export class Store {
 
   /** The sheet kept as `id`. */
   read(id: string): Draft | null {
-    const kept = this.#try(() => localStorage.getItem(keyOf(id)));
-    if (!kept) return null;
-    try {
-      const { name, text } = JSON.parse(kept) as { name: unknown; text: unknown };
-      return typeof text === "string" ? { id, text, name: typeof name === "string" ? name : null } : null;
-    } catch {
-      return null;
-    }
+    return this.#try(() => keptDraft(id));
   }
 
   /** The texts of kept sheets by their file names without ending, that of `id` left out. */
   named(id: string): Record<string, string> {
     const texts: Record<string, string> = Object.create(null) as Record<string, string>;
-    const keys = this.#try(() => Object.keys(localStorage)) ?? [];
-    for (const key of keys.filter((each) => each.startsWith(SHEET_PREFIX)).sort()) {
-      const draft = this.read(key.slice(SHEET_PREFIX.length));
-      if (draft?.name && draft.id !== id) texts[draft.name.replace(/\.pitchwright$/, "")] = draft.text;
+    for (const draft of this.#try(keptDrafts) ?? []) {
+      if (draft.name && draft.id !== id) texts[draft.name.replace(/\.pitchwright$/, "")] = draft.text;
     }
     return texts;
   }
@@ -113,6 +104,28 @@ export class Store {
     } catch {
       return null;
     }
+  }
+}
+
+/** The sheet kept as `id`; null where there is none that can be read. */
+function keptDraft(id: string): Draft | null {
+  const kept = parsed(localStorage.getItem(keyOf(id))) as Partial<Draft> | null;
+  if (typeof kept?.text !== "string") return null;
+  return { id, text: kept.text, name: typeof kept.name === "string" ? kept.name : null };
+}
+
+/** All kept sheets, in the order of their ids. */
+export function keptDrafts(): Draft[] {
+  const keys = Object.keys(localStorage).filter((key) => key.startsWith(SHEET_PREFIX)).sort();
+  return keys.flatMap((key) => keptDraft(key.slice(SHEET_PREFIX.length)) ?? []);
+}
+
+/** What a kept text says as JSON; null where it says nothing. */
+export function parsed(text: string | null): unknown {
+  try {
+    return text === null ? null : JSON.parse(text);
+  } catch {
+    return null;
   }
 }
 
